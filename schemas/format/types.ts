@@ -1,0 +1,7 @@
+/** Types of values as read; the single place that src-core imports them from. */
+export type { ChannelValues, ReceiverValues, TransmitterValues } from './channel';
+export type { ConfigValues, SeveritySetting } from './config';
+export type { ElementKindName, ElementValues } from './elements/index';
+export type { LimitKindName, LimitValues } from './limits';
+export type { DrillRulesValues, FoilValues, MaterialValues, PartsValues, StackupRowKind, StackupRowValues } from './parts';
+export type { Band, Dimension, NameRole, Quantity } from './quantity';

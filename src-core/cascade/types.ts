@@ -1,0 +1,22 @@
+import type { Network } from '../networks/types';
+
+/** A dip of the cascade's transmission, refined between grid points on the networks themselves. */
+export interface Resonance {
+  readonly frequencyHz: number;
+  /** Below the loss that its surroundings would give, dB. */
+  readonly depthDb: number;
+  /** Insertion loss there. */
+  readonly lossDb: number;
+  /** Frequency over width where the dip is 3 dB above its bottom... see `cascade/resonances.ts`. */
+  readonly quality: number;
+  /** The elements that make it; two where they are alike within 2 %. */
+  readonly elements: readonly string[];
+}
+
+/** Stage 3: all of path, and the tree of partial products that gives any `between` cheaply. */
+export interface Cascade {
+  readonly total: Network;
+  /** Network from the input of element i to the output of element j, inclusive. Kept. */
+  readonly between: (from: number, to: number) => Network;
+  readonly resonances: readonly Resonance[];
+}

@@ -1,0 +1,14 @@
+import type { FileKind, FilePath } from './types';
+import type { Report } from '../rules/types';
+
+/** A YAML file as read: plain values (null-prototype objects) beside what is needed to look up ranges. */
+export interface ParsedFile {
+  readonly file: FilePath;
+  readonly kind: FileKind;
+  readonly text: string;
+  readonly value: unknown;
+  /** What the reader of the text found: syntax, tabs, duplicate keys, limits. */
+  readonly reports: readonly (Report & { readonly rule: string })[];
+  /** Opaque to other folders; `rangeOf`, `placeAt`, `resolveEdits` in this folder read it. */
+  readonly syntax: unknown;
+}
