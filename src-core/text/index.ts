@@ -1,0 +1,3 @@
+export type { ParsedFile } from './parsed';
+export { parseFile } from './parse';
+export { rangeOf } from './range';

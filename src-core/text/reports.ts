@@ -1,0 +1,3 @@
+import type { Report } from '../rules/types';
+
+export type TextReport = Report & { readonly rule: string; readonly subject?: string };
