@@ -6,8 +6,13 @@ export const severities = ['error', 'warning', 'info', 'hint', 'off'] as const;
 export type SeveritySetting = (typeof severities)[number];
 
 /** `rules`: a rule's name, then a severity or `{ severity, option: … }`; names and options are checked against the list of rules. */
-export const config = mapping('config', 'Severities and options of rules; the nearest such file upwards counts.', {
-  lanewright: channelProperties.lanewright,
-  rules: Type.Optional(Type.Record(Type.String(), Type.Any(), { description: 'By rule.', 'x-entries': 'rules' })),
-}, { required: ['lanewright'] });
+export const config = mapping(
+  'config',
+  'Severities and options of rules; the nearest such file upwards counts.',
+  {
+    lanewright: channelProperties.lanewright,
+    rules: Type.Optional(Type.Record(Type.String(), Type.Any(), { description: 'By rule.', 'x-entries': 'rules' })),
+  },
+  { required: ['lanewright'] },
+);
 export type ConfigValues = Static<typeof config>;

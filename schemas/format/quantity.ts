@@ -73,7 +73,13 @@ export const quantity = (dimension: Dimension, options: QuantityOptions) => {
     description,
     ...(examples && { examples }),
     ...(byDefault !== undefined && { 'x-default': byDefault }),
-    'x-quantity': { dimensions: [dimension, ...(or ?? [])], at, tolerance, ...(plausible && { plausible }), ...(valid && { valid }) },
+    'x-quantity': {
+      dimensions: [dimension, ...(or ?? [])],
+      at,
+      tolerance,
+      ...(plausible && { plausible }),
+      ...(valid && { valid }),
+    },
   });
 };
 
@@ -92,7 +98,12 @@ export const quantities = (dimension: Dimension, options: QuantityOptions) => {
 };
 
 export const band = (description: string) =>
-  Type.Unsafe<Band>({ type: 'string', description, examples: ['50 MHz to 12 GHz'], 'x-quantity': { dimensions: ['frequency'], band: true } });
+  Type.Unsafe<Band>({
+    type: 'string',
+    description,
+    examples: ['50 MHz to 12 GHz'],
+    'x-quantity': { dimensions: ['frequency'], band: true },
+  });
 
 /** A name of our own: `[a-z][a-z0-9-]*`, not a YAML 1.1 boolean. */
 export const NAME_PATTERN = '^(?!(?:true|false|null|yes|no|on|off)$)[a-z][a-z0-9-]*$';
@@ -101,16 +112,48 @@ export const QUALIFIED_NAME_PATTERN = '^[a-z][a-z0-9-]*(\\.[a-z][a-z0-9-]*)?$';
 export const LAYER_PATTERN = '^[A-Za-z0-9][A-Za-z0-9_.-]*$';
 
 /** What a name refers to; drives completion, jumps and rename. */
-export type NameRole = 'element' | 'limit' | 'part' | 'stackup' | 'material' | 'foil' | 'layer' | 'use' | 'rule' | 'owner' | 'file' | 'touchstone';
+export type NameRole =
+  | 'element'
+  | 'limit'
+  | 'part'
+  | 'stackup'
+  | 'material'
+  | 'foil'
+  | 'layer'
+  | 'use'
+  | 'rule'
+  | 'owner'
+  | 'file'
+  | 'touchstone';
 
 /** Defines a name (`declares`) or refers to one (`refers`). */
 export const declares = (role: NameRole, description: string) =>
   Type.String({ description, pattern: role === 'layer' ? LAYER_PATTERN : NAME_PATTERN, 'x-declares': role });
-export const refers = (role: NameRole, description: string, options: { default?: string; examples?: string[] } = {}) => {
+export const refers = (
+  role: NameRole,
+  description: string,
+  options: { default?: string; examples?: string[] } = {},
+) => {
   const { default: byDefault, ...rest } = options;
-  return Type.String({ description, 'x-refers': role, ...rest, ...(byDefault !== undefined && { 'x-default': byDefault }) });
+  return Type.String({
+    description,
+    'x-refers': role,
+    ...rest,
+    ...(byDefault !== undefined && { 'x-default': byDefault }),
+  });
 };
 
 /** A mapping that takes these keys and `x-…`, no others. `reserved` keys are known but not used in this version. */
-export const mapping = <T extends Record<string, TSchema>>(title: string, description: string, properties: T, options: Record<string, unknown> = {}) =>
-  Type.Object(properties, { title, description, additionalProperties: false, patternProperties: { '^x-': {} }, ...options });
+export const mapping = <T extends Record<string, TSchema>>(
+  title: string,
+  description: string,
+  properties: T,
+  options: Record<string, unknown> = {},
+) =>
+  Type.Object(properties, {
+    title,
+    description,
+    additionalProperties: false,
+    patternProperties: { '^x-': {} },
+    ...options,
+  });

@@ -2,6 +2,16 @@
 export type { ChannelValues, ReceiverValues, TransmitterValues } from './channel';
 export type { ConfigValues, SeveritySetting } from './config';
 export type { ElementKindName, ElementValues } from './elements/index';
+export type { EntryListName, SchemaName } from './index';
 export type { LimitKindName, LimitValues } from './limits';
-export type { DrillRulesValues, FoilValues, MaterialValues, PartsValues, StackupRowKind, StackupRowValues } from './parts';
+export type { NodeSchema, QuantitySpec } from './node';
+export type {
+  DrillRulesValues,
+  FoilValues,
+  MaterialValues,
+  PartsValues,
+  StackupRowKind,
+  StackupRowValues,
+} from './parts';
 export type { Band, Dimension, NameRole, Quantity } from './quantity';
+export type { ValuesOf } from './values';

@@ -4,7 +4,10 @@ import { common, length, line } from './common';
 
 export const cableElement = mapping('cable', 'A cable: a segment with declared impedance, delay and loss.', {
   cable: declares('element', 'Its own name.'),
-  length: Type.Optional({ ...length, 'x-quantity': { dimensions: ['length'], at: 'never', tolerance: true, valid: [0, 1e6], plausible: [1e-3, 100] } } as typeof length),
+  length: Type.Optional({
+    ...length,
+    'x-quantity': { dimensions: ['length'], at: 'never', tolerance: true, valid: [0, 1e6], plausible: [1e-3, 100] },
+  } as typeof length),
   ...line,
   ...common,
 });

@@ -2,9 +2,13 @@ import { Type } from '@sinclair/typebox';
 import { declares, mapping } from '../quantity';
 import { common, length, line } from './common';
 
-export const packageElement = mapping('package', 'The run through a chip package: a segment with declared impedance, delay and loss.', {
-  package: declares('element', 'Its own name.'),
-  length: Type.Optional(length),
-  ...line,
-  ...common,
-});
+export const packageElement = mapping(
+  'package',
+  'The run through a chip package: a segment with declared impedance, delay and loss.',
+  {
+    package: declares('element', 'Its own name.'),
+    length: Type.Optional(length),
+    ...line,
+    ...common,
+  },
+);

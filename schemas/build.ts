@@ -1,0 +1,45 @@
+import { existsSync, mkdirSync, readFileSync, renameSync, writeFileSync } from 'node:fs';
+import { publishedSchemas } from './build/published';
+import { formatModule, formatTypes } from './build/runtime';
+import { validatorsModule, validatorsTypes } from './build/validators';
+
+/** Committed files, by name. */
+function committed(): Record<string, string> {
+  const files: Record<string, string> = {};
+  for (const [name, schema] of Object.entries(publishedSchemas())) {
+    files[`${name}.schema.json`] = `${JSON.stringify(schema, null, 2)}\n`;
+  }
+  return files;
+}
+
+async function generated(): Promise<Record<string, string>> {
+  return {
+    'generated/validators.js': await validatorsModule(),
+    'generated/validators.d.ts': validatorsTypes(),
+    'generated/format.js': formatModule(),
+    'generated/format.d.ts': formatTypes(),
+  };
+}
+
+/** Replaced in one step, so that a build running beside this one never reads half a file. */
+function replaceFile(path: string, text: string) {
+  const fresh = `${path}.${process.pid}`;
+  writeFileSync(fresh, text);
+  renameSync(fresh, path);
+}
+
+/**
+ * Writes what changed, or with `check` only compares the committed files.
+ * @param folder `schemas/`, with a slash at its end
+ * @returns with `check` the names of the stale files; else none
+ */
+export async function run(folder: string, { check }: { check: boolean }): Promise<string[]> {
+  const files = check ? committed() : { ...committed(), ...(await generated()) };
+  const changed = Object.entries(files).filter(
+    ([name, text]) => !existsSync(folder + name) || readFileSync(folder + name, 'utf8') !== text,
+  );
+  if (check) return changed.map(([name]) => name);
+  mkdirSync(`${folder}generated`, { recursive: true });
+  for (const [name, text] of changed) replaceFile(folder + name, text);
+  return [];
+}

@@ -1,0 +1,18 @@
+/**
+ * The format at run time: what keys there are, what is wrong with a value, and the value as read.
+ *
+ * - `entryKind(list, entry)` chooses an entry's schema; `freeName(kind, taken)` proposes an own name.
+ * - `readValues(schema, raw, options)` checks a mapping against its schema and reads its quantities. Keys that are bad are left
+ *   out of `values` and have a problem, the others are kept. (`validateEntry` is its first half: the schema alone.)
+ * - `missingKeys(kind, values, singleEnded)`, after a part was merged in: what the kind's model needs and is not there.
+ * - `reportOf(problem, { file, path })` turns a problem, whose paths are relative to the entry, into a `Report` at a place.
+ * - `keysAt`, `keySchemaAt`, `keysOf`: descriptions for hover and completion.
+ *
+ * Every function takes anything that YAML can make and returns; none throws.
+ */
+export { type EntryKind, entryKind, freeName, nameProblem, schemaOfKind } from './entry-kind';
+export { type KeyInfo, keySchemaAt, keysAt, keysOf } from './keys';
+export { type MissingKey, missingKeyProblems, missingKeys } from './missing';
+export { type FormatFix, type FormatProblem, type FormatRule, type RelativeEdit, reportOf } from './problem';
+export { type ReadOptions, readValues } from './read';
+export { validateEntry } from './validate';
