@@ -25,7 +25,7 @@ export function registerCommands(context: vscode.ExtensionContext, extension: Ex
       deaths.forgive(target);
       await client.sendNotification(analyseAgain, { uri: target });
     },
-    'lanewright.acceptFinding': acceptFinding,
+    'lanewright.acceptFinding': acceptFinding(client),
     'lanewright.newChannel': newChannel,
     'lanewright.showRules': () => vscode.commands.executeCommand('markdown.showPreview', vscode.Uri.joinPath(context.extensionUri, 'dist', 'rules.md')),
     'lanewright.showFormat': () => vscode.commands.executeCommand('markdown.showPreview', vscode.Uri.joinPath(context.extensionUri, 'dist', 'format.md')),

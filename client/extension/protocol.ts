@@ -1,5 +1,5 @@
-import { NotificationType, RequestType } from 'vscode-languageclient';
-import type { FileContent } from '../../src-core/text/types';
+import { NotificationType, type Position, type Range, RequestType, type WorkspaceEdit } from 'vscode-languageclient';
+import type { FileContent, Place } from '../../src-core/text/types';
 
 /** The server's own requests and notifications; `server/protocol.ts` says what each means. A test compares the two lists. */
 export const readFileRequest = new RequestType<{ uri: string; root: string; limit: number }, FileContent, void>('lanewright/readFile');
@@ -13,3 +13,6 @@ export const statusRequest = new RequestType<
   void
 >('lanewright/status');
 export const analyseAgain = new NotificationType<{ uri: string }>('lanewright/analyseAgain');
+export const rangeRequest = new RequestType<{ uri: string; place: Place }, { uri: string; range: Range } | null, void>('lanewright/range');
+export const elementAtRequest = new RequestType<{ uri: string; position: Position }, { element: string | null }, void>('lanewright/elementAt');
+export const waiverRequest = new RequestType<{ uri: string; rule: string; at: string; upTo?: string; until: string; by: string; reason: string }, WorkspaceEdit | null, void>('lanewright/waiver');

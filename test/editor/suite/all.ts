@@ -1,0 +1,14 @@
+import { defineDiagnosticsTests } from './diagnostics';
+import { defineEditingTests } from './editing';
+import { defineLanguageTests } from './language';
+import { definePreviewTests } from './preview';
+import { defineServerTests } from './server';
+
+/** The same tests in both hosts; `host` names the few that one of them cannot have. */
+export function defineSuite(): void {
+  defineLanguageTests();
+  defineDiagnosticsTests();
+  defineEditingTests();
+  definePreviewTests();
+  defineServerTests();
+}
