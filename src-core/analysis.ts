@@ -14,6 +14,8 @@ export interface Inputs {
   /** This file, the parts and Touchstone files that it names, directly or not, and the config. */
   readonly files: ReadonlyMap<FilePath, FileContent>;
   readonly configFile?: FilePath;
+  /** For a parts file: the files that use it, where the host knows them (they are in `files` too). Without it nothing is called unused. */
+  readonly dependents?: readonly FilePath[];
   /** `YYYY-MM-DD`, for waivers. */
   readonly today: string;
 }

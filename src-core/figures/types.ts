@@ -19,7 +19,12 @@ export interface LedgerRow {
   readonly figures: readonly Figure[]; // own loss at Nyquist, delay, impedance, worst reflection, first resonance
   readonly owner?: string;
   /** Held against own loss. */
-  readonly budget?: { readonly allowedDb: number; readonly spentDb: number; readonly share: number; readonly text: string };
+  readonly budget?: {
+    readonly allowedDb: number;
+    readonly spentDb: number;
+    readonly share: number;
+    readonly text: string;
+  };
   /** Running sum of own loss at Nyquist along the path, dB and its share of the loss limit at Nyquist where there is one. */
   readonly cumulativeDb: number;
   readonly cumulativeShare?: number;
@@ -35,13 +40,22 @@ export interface LimitOutcome {
   /** Positive: in hand. As a share of the limit. */
   readonly marginShare: number;
   readonly text: string;
+  /** Where in frequency the least margin was found; loss and return loss only. */
+  readonly atHz?: number;
+  /** The end seen from; return loss only. */
+  readonly end?: 'transmitter' | 'receiver';
 }
 
 export interface Ledger {
   readonly rows: readonly LedgerRow[];
   /** What is missing from the sum of own losses to the channel's figure. */
   readonly reflectionsDb: number;
-  readonly owners: readonly { readonly owner: string; readonly allowedDb?: number; readonly spentDb: number; readonly text: string }[];
+  readonly owners: readonly {
+    readonly owner: string;
+    readonly allowedDb?: number;
+    readonly spentDb: number;
+    readonly text: string;
+  }[];
 }
 
 export interface Verdict {

@@ -11,6 +11,11 @@ export interface Fix {
   readonly preferred?: boolean;
   /** Does not change what is computed from a valid file (spelling, unit, dead waiver): allowed in fix-all and `check --fix`. */
   readonly safe?: boolean;
+  /**
+   * The same fix with a title that tells all that it gains, where that costs a recomputation of the link. Called when a fix is
+   * shown, not while one types; keeps its result.
+   */
+  readonly resolve?: () => Fix;
 }
 
 export interface Related {
@@ -57,5 +62,12 @@ export interface Rule<Options extends Record<string, unknown> = Record<string, n
   readonly bad: string;
   /** The same, just met: no finding at all. */
   readonly good: string;
-  check(analysis: Analysis, options: Options): Iterable<Report & { subject?: string }>;
+  check(analysis: Judged, options: Options): Iterable<Report & { subject?: string }>;
 }
+
+/** What rules may read: an analysis before it is judged. */
+export type Judged = Omit<Analysis, 'findings' | 'verdict' | 'kept' | 'computed'>;
+
+/** A rule of any options, as the list and the judge handle it. */
+// biome-ignore lint/suspicious/noExplicitAny: each rule knows its own options; the judge hands them over unread
+export type AnyRule = Rule<any>;

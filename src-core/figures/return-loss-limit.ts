@@ -1,0 +1,40 @@
+import type { Limit } from '../model/types';
+import { show } from '../quantity/show';
+import type { Computed } from './computed';
+import { networkWithin } from './insertion-loss-limit';
+import { type End, frequenciesWithin, returnLossAt } from './measures';
+import type { LimitOutcome } from './types';
+
+/** Return loss in a band, looked at from the named end or from both: the point with the least. */
+export function returnLossOutcome(limit: Limit<'return-loss'>, computed: Computed): LimitOutcome | undefined {
+  const { networks } = computed;
+  const { band, min, at } = limit.values;
+  const s = networks && networkWithin(limit, computed);
+  if (!s || !min) return undefined;
+  const grid = networks.grid;
+  // Without a band it is judged from the first point above 0 Hz, where nothing reflects, to Nyquist.
+  const [fromHz, toHz] = band ? [band.fromHz, band.toHz] : [grid.stepHz, computed.model.nyquistFrequency];
+  let worst: { atHz: number; lossDb: number; end: End } | undefined;
+  for (const end of at ? [at] : (['transmitter', 'receiver'] as const)) {
+    for (const atHz of frequenciesWithin(grid, fromHz, toHz)) {
+      const lossDb = returnLossAt(s, grid, end, atHz);
+      if (!worst || lossDb < worst.lossDb) worst = { atHz, lossDb, end };
+    }
+  }
+  if (!worst) return undefined;
+  const { atHz, lossDb, end } = worst;
+  const figure = (name: string, title: string, value: number, note?: string) =>
+    ({ name, title, value, unit: 'dB', text: show.loss(value), worse: 'lower', ...(note && { note }) }) as const;
+  const where = `at ${show.frequency(atHz)}, seen from the ${end}`;
+  return {
+    name: limit.name,
+    kind: limit.kind,
+    met: lossDb >= min.value,
+    limit: figure('limit', 'Least return loss', min.value),
+    actual: figure('return-loss', 'Return loss', lossDb, where),
+    marginShare: min.value > 0 ? (lossDb - min.value) / min.value : 0,
+    text: `return loss ${show.loss(lossDb)}, at least ${show.loss(min.value)}, ${where}`,
+    atHz,
+    end,
+  };
+}

@@ -1,0 +1,75 @@
+import { show } from '../quantity/show';
+import type { Finding } from '../rules/types';
+import type { Computed } from './computed';
+import type { Figure, LimitOutcome, Verdict } from './types';
+
+interface Judged extends Computed {
+  readonly figures: readonly Figure[];
+  readonly limits: readonly LimitOutcome[];
+  readonly findings: readonly Finding[];
+  readonly timedOut?: boolean;
+}
+
+const counted = (n: number, one: string) => `${n} ${one}${n === 1 ? '' : 's'}`;
+
+/** Loss and eye in brief, for channels whose limits do not tell them. */
+function inBrief({ model, figures, limits }: Judged): readonly string[] {
+  const figure = (name: string) => figures.find((one) => one.name === name)?.text;
+  const [loss, height, width] = ['insertion-loss-at-nyquist', 'eye-height', 'eye-width'].map(figure);
+  return [
+    ...(loss && !limits.some(({ kind }) => kind === 'insertion-loss')
+      ? [`${loss} at ${show.frequency(model.nyquistFrequency)}`]
+      : []),
+    ...(height && width && !limits.some(({ kind }) => kind === 'eye')
+      ? [`eye ${height} × ${width.replace(/^~/, '')}`]
+      : []),
+  ];
+}
+
+const metText = ({ kind, actual, text }: LimitOutcome) =>
+  kind === 'eye' ? `eye ${actual.text}` : kind === 'return-loss' ? `return loss ${actual.text}` : text;
+
+function limitsText(judged: Judged): string {
+  const { limits, findings } = judged;
+  const accepted = (name: string) => findings.some(({ subject, waivedBy }) => subject === name && waivedBy);
+  const failed = limits.filter(({ met, name }) => !met && !accepted(name));
+  const brief = inBrief(judged);
+  if (failed.length > 0) {
+    const each = failed.map(({ name, text }) => `${name}: ${text}`).join('; ');
+    return `fails ${failed.length} of ${counted(limits.length, 'limit')}: ${each}`;
+  }
+  const figures = [...limits.map((limit) => metText(limit) + (limit.met ? '' : ' (accepted)')), ...brief].join(', ');
+  return `${limits.length > 0 ? 'meets its limits' : 'no limits declared'}${figures ? `: ${figures}` : ''}`;
+}
+
+/** What the verdict's figures leave out: elements that are not complete, keys that are not used yet. */
+export const leftOut = ({ networks, link }: Computed): readonly string[] => [
+  ...new Set([...(networks?.without ?? []), ...(link?.without ?? [])]),
+];
+
+/** The state of a channel in one line. Accepted findings count for nothing. */
+export function verdictOf(judged: Judged): Verdict {
+  const open = judged.findings.filter(({ waivedBy }) => !waivedBy);
+  const errors = open.filter(({ severity }) => severity === 'error').length;
+  const warnings = open.filter(({ severity }) => severity === 'warning').length;
+  if (!judged.cascade) {
+    const why = judged.timedOut
+      ? 'the time for one file was over'
+      : errors > 0
+        ? counted(errors, 'error')
+        : 'line rate or path is missing';
+    return { state: 'not-computed', text: `not computed: ${why}` };
+  }
+  const failed = judged.limits.some(({ met }) => !met);
+  const counts = errors > 0 ? counted(errors, 'error') : warnings > 0 ? counted(warnings, 'warning') : '';
+  const without = leftOut(judged);
+  const acceptedCount = judged.findings.length - open.length;
+  const parts = [
+    limitsText(judged),
+    ...(counts && !(failed && errors > 0) ? [counts] : []),
+    ...(acceptedCount > 0 ? [`${counted(acceptedCount, 'finding')} accepted`] : []),
+    ...(without.length > 0 ? [`without ${without.join(', ')}`] : []),
+    ...(judged.linkIsStale && judged.link ? ['eye of an older text'] : []),
+  ];
+  return { state: errors > 0 ? 'errors' : warnings > 0 ? 'warnings' : 'good', text: parts.join('; ') };
+}

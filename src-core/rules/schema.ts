@@ -1,0 +1,14 @@
+import { reportedByStages } from './reported';
+import type { Rule } from './types';
+
+export const schema: Rule = {
+  name: 'schema',
+  severity: 'error',
+  reads: 'model',
+  options: {},
+  doc: `A key that its mapping does not have, a key that is missing, a value of the wrong shape. The kind of an element or limit, its first
+key, chooses what is wanted of it; where a name is near, the fix writes it. Keys that begin with \`x-\` are kept and ignored.`,
+  bad: 'path: [{ trace: run, stackup: board.main, layer: L3, lenght: 100 mm, length: 100 mm, impedance: 100 ohm }]',
+  good: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm }]',
+  check: reportedByStages,
+};
