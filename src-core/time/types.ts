@@ -5,6 +5,12 @@ export interface Time {
   readonly samplesPerUi: number;
   /** Single-bit response: transmitter's edge and taps, terminations, path, receiver filter, declared CTLE. Without transmitter or receiver: defaults, swing 1 V. */
   readonly pulse: Float64Array;
+  /** With `ctle: auto` the pulse is that before the CTLE, and these are its two parts through it: flat × DC gain (a ratio) + rising. */
+  readonly ctleParts?: { readonly flat: Float64Array; readonly rising: Float64Array };
   /** TDR: impedance against time looking in from the transmitter and from the receiver. */
-  readonly tdr?: { readonly transmitter: Float64Array; readonly receiver: Float64Array; readonly sampleSeconds: number };
+  readonly tdr?: {
+    readonly transmitter: Float64Array;
+    readonly receiver: Float64Array;
+    readonly sampleSeconds: number;
+  };
 }
