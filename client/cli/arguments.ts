@@ -1,5 +1,5 @@
 import { parseArgs } from 'node:util';
-import { nearestName } from '../../src-core/quantity/nearest';
+import { nearest } from '../../src-core/quantity/nearest';
 import { type Command, commonOptions, type Option, type OptionValues, Refusal } from './command';
 
 export const optionsOf = (command: Command): readonly Option[] => [...command.options, ...commonOptions];
@@ -23,7 +23,7 @@ export function readArguments(command: Command, args: readonly string[]): { path
     if (token.kind !== 'option') continue;
     const option = table.find(({ name }) => name === token.name);
     if (!option) {
-      const near = nearestName(token.name, table.map(({ name }) => name));
+      const near = nearest(token.name, table.map(({ name }) => name));
       throw new Refusal(`\`${token.rawName}\` is not an option of \`lanewright ${command.name}\`${near ? `; did you mean \`--${near}\`?` : ''} See \`lanewright ${command.name} --help\`.`);
     }
     if (option.value && token.value === undefined) throw new Refusal(`\`--${option.name}\` wants a value: \`--${option.name} ${option.value}\`.`);

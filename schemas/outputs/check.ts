@@ -3,10 +3,15 @@ import { type Static, Type } from '@sinclair/typebox';
 /** What `lanewright check --format json` prints. Keys are only ever added within one `version`. */
 export const CHECK_OUTPUT_VERSION = 1;
 
-const object = <T extends Record<string, import('@sinclair/typebox').TSchema>>(properties: T, options: Record<string, unknown> = {}) =>
-  Type.Object(properties, { additionalProperties: false, ...options });
+const object = <T extends Record<string, import('@sinclair/typebox').TSchema>>(
+  properties: T,
+  options: Record<string, unknown> = {},
+) => Type.Object(properties, { additionalProperties: false, ...options });
 
-const position = object({ line: Type.Integer({ minimum: 1 }), column: Type.Integer({ minimum: 1, description: 'In UTF-16 units, from 1.' }) });
+const position = object({
+  line: Type.Integer({ minimum: 1 }),
+  column: Type.Integer({ minimum: 1, description: 'In UTF-16 units, from 1.' }),
+});
 const range = object({ start: position, end: position });
 const location = object({ file: Type.String({ description: 'From the root, with `/`.' }), range });
 
@@ -54,7 +59,9 @@ const row = object({
   kind: Type.String(),
   figures: Type.Array(figure),
   owner: Type.Optional(Type.String()),
-  budget: Type.Optional(object({ allowedDb: Type.Number(), spentDb: Type.Number(), share: Type.Number(), text: Type.String() })),
+  budget: Type.Optional(
+    object({ allowedDb: Type.Number(), spentDb: Type.Number(), share: Type.Number(), text: Type.String() }),
+  ),
   cumulativeDb: Type.Number(),
   cumulativeShare: Type.Optional(Type.Number()),
 });
@@ -72,11 +79,23 @@ const file = object({
   file: Type.String(),
   kind: Type.Union([Type.Literal('channel'), Type.Literal('parts'), Type.Literal('config')]),
   title: Type.Optional(Type.String()),
-  verdict: Type.Optional(object({ state: Type.Union([Type.Literal('good'), Type.Literal('warnings'), Type.Literal('errors'), Type.Literal('not-computed')]), text: Type.String() })),
+  verdict: Type.Optional(
+    object({
+      state: Type.Union([
+        Type.Literal('good'),
+        Type.Literal('warnings'),
+        Type.Literal('errors'),
+        Type.Literal('not-computed'),
+      ]),
+      text: Type.String(),
+    }),
+  ),
   figures: Type.Array(figure),
   limits: Type.Array(limit),
   ledger: Type.Array(row),
-  reflectionsDb: Type.Optional(Type.Number({ description: 'What is missing from the sum of own losses to the figure of the whole.' })),
+  reflectionsDb: Type.Optional(
+    Type.Number({ description: 'What is missing from the sum of own losses to the figure of the whole.' }),
+  ),
   resonances: Type.Array(resonance),
   findings: Type.Array(finding),
   timedOut: Type.Boolean(),
@@ -87,7 +106,14 @@ export const checkOutput = object(
     version: Type.Literal(CHECK_OUTPUT_VERSION),
     tool: object({ name: Type.Literal('lanewright'), version: Type.String() }),
     files: Type.Array(file),
-    counts: object({ files: Type.Integer(), errors: Type.Integer(), warnings: Type.Integer(), infos: Type.Integer(), hints: Type.Integer(), waived: Type.Integer() }),
+    counts: object({
+      files: Type.Integer(),
+      errors: Type.Integer(),
+      warnings: Type.Integer(),
+      infos: Type.Integer(),
+      hints: Type.Integer(),
+      waived: Type.Integer(),
+    }),
   },
   { title: 'Output of lanewright check', description: 'Figures are planning estimates.' },
 );
