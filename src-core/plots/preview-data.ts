@@ -109,7 +109,7 @@ export function previewData(analysis: Analysis): PreviewData {
 
 function aboutOf({ model }: Analysis): string {
   if (!model.computable) return '';
-  const rate = `${show.frequency(model.lineRate).replace(/Hz$/, 'b/s')} ${model.modulation}`;
+  const rate = `${show.bitRate(model.lineRate)} ${model.modulation}`;
   return `${rate}, ${model.signalling}, ${show.impedance(model.referenceOhms)}, Nyquist ${show.frequency(model.nyquistFrequency)}`;
 }
 

@@ -39,7 +39,11 @@ export function renderSvg(description: PlotDescription, options: RenderOptions):
     defs,
     theme === 'print' ? tag('rect', { x: 0, y: 0, width, height, fill: palette.background }) : '',
     drawGrid(layout, palette),
-    tag('g', { 'clip-path': `url(#${clip})` }, drawInside(description, layout, palette, idPrefix, heat)),
+    tag(
+      'g',
+      { 'clip-path': `url(#${clip})`, opacity: description.stale ? '0.55' : undefined },
+      drawInside(description, layout, palette, idPrefix, heat),
+    ),
     drawFrame(layout, palette),
     description.heat ? drawHeatBar(description.heat, layout, palette, heat) : '',
     drawMarks(description.marks, layout, palette, interactive),
@@ -57,7 +61,6 @@ export function renderSvg(description: PlotDescription, options: RenderOptions):
       'aria-labelledby': `${idPrefix}-title ${idPrefix}-desc`,
       'font-size': layout.fontSize,
       'font-family': theme === 'print' ? 'system-ui, sans-serif' : undefined,
-      opacity: description.stale ? '0.6' : undefined,
     },
     content.join(''),
   );
