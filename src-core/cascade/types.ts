@@ -19,4 +19,8 @@ export interface Cascade {
   /** Network from the input of element i to the output of element j, inclusive. Kept. */
   readonly between: (from: number, to: number) => Network;
   readonly resonances: readonly Resonance[];
+  /** Products by their two factors, handed from one cascade to the next; opaque. */
+  readonly kept?: unknown;
+  /** How many products were computed, not found. */
+  readonly products?: number;
 }

@@ -111,6 +111,8 @@ export interface ElementNetwork {
   readonly network: Network;
   /** True for a straight through in place of what could not be computed or is included elsewhere. */
   readonly through: boolean;
+  /** The same element at any other frequencies; a straight through where `network` is one. */
+  readonly evaluate: (context: NetworkContext) => Network;
 }
 
 /** Stage 2. */
@@ -120,4 +122,10 @@ export interface Networks {
   readonly elements: readonly ElementNetwork[];
   /** Names left out because they are incomplete: verdict says "without …". */
   readonly without: readonly string[];
+  /** Elements whose kind's code threw, which it never should; their network is a straight through. Each becomes a finding of rule `internal`. */
+  readonly failures?: readonly { readonly element: AnyElement; readonly failure: unknown }[];
+  /** Networks by content, of this and the last analysis; opaque. */
+  readonly kept?: unknown;
+  /** How many element networks were computed on the grid, not found. */
+  readonly computed?: number;
 }

@@ -1,0 +1,93 @@
+import { type Probe, probeOf } from './decay';
+import type { Recipe } from './recipe';
+import { straightThrough } from './through';
+import type { ElementNetwork, Network, NetworkContext } from './types';
+
+/** What one analysis used, by content. */
+interface Used {
+  readonly networks: Map<string, Network>;
+  readonly probes: Map<string, Probe>;
+}
+
+/** What this analysis and the one before used; older networks are let go. */
+export interface Kept {
+  readonly current: Used;
+  readonly last?: Used;
+}
+
+/** Gives each element's network and probe, computed at most once by content. A kind's failure gives a straight through and is told. */
+export function openShelf(previous: Kept | undefined) {
+  const current: Used = { networks: new Map(), probes: new Map() };
+  const shelves = [current, previous?.current, previous?.last];
+  let computed = 0;
+
+  return {
+    kept: { current, last: previous?.current } satisfies Kept as Kept,
+    computed: () => computed,
+
+    /** Undefined for what is no element: a straight through. */
+    probe(recipe: Recipe, context: NetworkContext, nyquist: number): Probe | undefined {
+      const { key } = recipe;
+      if (key === undefined) return undefined;
+      const id = `${key} ${contextKey(context)}`;
+      let probe = find(shelves, (used) => used?.probes.get(id));
+      if (!probe) {
+        const network = attempt(recipe, context).network;
+        probe = network && probeOf(network, recipe.prepared?.facts, nyquist);
+      }
+      if (probe) current.probes.set(id, probe);
+      return probe;
+    },
+
+    element(recipe: Recipe, context: NetworkContext): ElementNetwork & { failure?: unknown } {
+      const { element, prepared, key } = recipe;
+      if (key === undefined) return { ...throughOf(recipe, context), failure: recipe.failure };
+      const id = `${key} ${contextKey(context)}`;
+      let network = find(shelves, (used) => used?.networks.get(id));
+      if (!network) {
+        const attempted = attempt(recipe, context);
+        if (!attempted.network) return { ...throughOf(recipe, context), failure: attempted.failure };
+        network = attempted.network;
+        computed++;
+      }
+      current.networks.set(id, network);
+      return { element, prepared, network, through: false, evaluate: recipe.evaluate };
+    },
+  };
+}
+
+const throughOf = ({ element, prepared }: Recipe, context: NetworkContext): ElementNetwork => ({
+  element,
+  prepared,
+  network: straightThrough(context),
+  through: true,
+  evaluate: straightThrough,
+});
+
+function find<T, R>(items: readonly T[], look: (item: T) => R | undefined): R | undefined {
+  for (const item of items) {
+    const found = look(item);
+    if (found !== undefined) return found;
+  }
+  return undefined;
+}
+
+function attempt({ evaluate }: Recipe, context: NetworkContext): { network?: Network; failure?: unknown } {
+  try {
+    const network = evaluate(context);
+    const wrong = [network.differential, network.common, network.full].find((s) => s && !allFinite(s));
+    return wrong ? { failure: new Error('its network holds a number that is not finite') } : { network };
+  } catch (failure) {
+    return { failure };
+  }
+}
+
+const allFinite = (numbers: Float64Array) => {
+  // A sum of finite numbers of this size stays finite; one that is not spoils it.
+  let sum = 0;
+  for (let i = 0; i < numbers.length; i++) sum += numbers[i];
+  return Number.isFinite(sum);
+};
+
+const contextKey = ({ frequencies: f, referenceOhms, singleEnded }: NetworkContext) =>
+  `${f.length} ${f[1]} ${f[f.length - 1]} ${referenceOhms} ${singleEnded}`;
