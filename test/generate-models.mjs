@@ -6,7 +6,7 @@ import { fileURLToPath } from 'node:url';
 
 const target = fileURLToPath(new URL('../examples/models/mezzanine.s4p', import.meta.url));
 const REFERENCE = 50;
-const STEP_HZ = 50e6;
+const STEP_HZ = 100e6;
 const LAST_HZ = 60e9;
 
 /** Odd and even impedance in ohm, delay in ps, loss in dB at 10 GHz growing with the root of frequency. */

@@ -1,0 +1,73 @@
+import { readdirSync, readFileSync } from 'node:fs';
+import { dirname, join, relative } from 'node:path';
+import { expect, test } from 'vitest';
+
+const root = process.cwd();
+
+/** design section 6: what each folder may import of the others. */
+const mayImport: Record<string, readonly string[]> = {
+  schemas: [],
+  'src-core': ['schemas'],
+  server: ['src-core', 'schemas'],
+  client: ['src-core', 'schemas'],
+};
+
+/** The stages of src-core in the order in which data flows; none imports a later one's code (types may be named). */
+const stages = ['text', 'model', 'networks', 'cascade', 'time', 'link', 'figures', 'rules'];
+
+const sources = (folder: string): string[] =>
+  readdirSync(join(root, folder), { withFileTypes: true }).flatMap((entry) => {
+    const path = join(folder, entry.name);
+    if (entry.isDirectory()) return entry.name === 'generated' ? [] : sources(path);
+    return /\.tsx?$/.test(entry.name) && !/\.test\.ts$/.test(entry.name) ? [path] : [];
+  });
+
+interface Import {
+  readonly from: string;
+  readonly to: string;
+  readonly typesOnly: boolean;
+}
+
+function importsOf(file: string): Import[] {
+  const text = readFileSync(join(root, file), 'utf8');
+  return [...text.matchAll(/^(?:import|export)\s+(type\s+)?([^'";]*?)from\s+'([^']+)'|import\('([^']+)'\)|^import\s+'([^']+)'/gm)].map((match) => {
+    const target = match[3] ?? match[4] ?? match[5];
+    const named = match[2] ?? '';
+    const allTypes = /^\{[^}]*\}\s*$/.test(named.trim()) && named.replace(/[{}]/g, '').split(',').filter((name) => name.trim()).every((name) => name.trim().startsWith('type '));
+    return { from: file, to: target.startsWith('.') ? relative(root, join(root, dirname(file), target)) : target, typesOnly: match[1] !== undefined || allTypes || match[4] !== undefined };
+  });
+}
+
+test('each folder imports only what the structure allows', () => {
+  const wrong: string[] = [];
+  for (const [folder, allowed] of Object.entries(mayImport)) {
+    for (const { from, to } of sources(folder).flatMap(importsOf)) {
+      const top = to.split('/')[0];
+      if (top in mayImport && top !== folder && !allowed.includes(top)) wrong.push(`${from} imports ${to}`);
+    }
+  }
+  expect(wrong).toEqual([]);
+});
+
+test('src-core knows no editor, no protocol, no Node', () => {
+  const wrong = sources('src-core').flatMap(importsOf).filter(({ to }) => /^(node:|vscode|fs$|path$|os$|crypto$|child_process|worker_threads)/.test(to));
+  expect(wrong).toEqual([]);
+});
+
+test('no stage imports the code of a later one', () => {
+  const wrong: string[] = [];
+  for (const [index, stage] of stages.entries()) {
+    for (const { from, to, typesOnly } of sources(join('src-core', stage)).flatMap(importsOf)) {
+      const later = stages.findIndex((name) => to.startsWith(`src-core/${name}/`));
+      if (later > index && !typesOnly) wrong.push(`${from} imports ${to}`);
+    }
+  }
+  expect(wrong).toEqual([]);
+});
+
+test('protocol types stop in the server, and nothing runs a program or opens a socket', () => {
+  const outside = ['src-core', 'client/cli', 'client/report', 'client/preview'].flatMap(sources).flatMap(importsOf);
+  expect(outside.filter(({ to }) => /^vscode-language/.test(to))).toEqual([]);
+  const everywhere = ['src-core', 'client', 'server'].flatMap(sources).flatMap(importsOf);
+  expect(everywhere.filter(({ to }) => /^(node:)?(child_process|net|http|https|dgram|tls)$/.test(to))).toEqual([]);
+});
