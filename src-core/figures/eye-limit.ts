@@ -34,7 +34,6 @@ export function eyeOutcome(limit: Limit<'eye'>, { model, link, linkIsStale }: Co
     ...(widthUi ? [{ of: 'width', share: link.eyeWidthUi / widthUi }] : []),
     ...(height && widthUi ? [{ of: 'rhombus', share: rhombusScale(link.density, height, widthUi) }] : []),
   ];
-  // The contour stands on the picture's bins: where height and width hold by far less than a bin, the rhombus alone decides nothing.
   const worst = shares.reduce((a, b) => (b.share < a.share ? b : a), { of: 'height', share: Number.POSITIVE_INFINITY });
   const share = Number.isFinite(worst.share) ? worst.share : 1;
   const byWidth = worst.of === 'width' || height === undefined;
@@ -62,7 +61,7 @@ export function eyeOutcome(limit: Limit<'eye'>, { model, link, linkIsStale }: Co
   return {
     name: limit.name,
     kind: limit.kind,
-    met: share >= 1,
+    met: share >= 1 - 1e-9,
     limit: wanted,
     actual,
     marginShare: share - 1,

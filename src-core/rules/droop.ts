@@ -1,27 +1,49 @@
-import type { Element, Model } from '../model/types';
+import { droopOf } from '../link/droop';
+import type { AnyElement, Element, Model } from '../model/types';
 import { show } from '../quantity/show';
 import { keyOf } from './places';
 import type { Fix, Rule } from './types';
+import { changed, modelWith } from './what-if';
 
-/** What the capacitor of one leg sees: the leg's share of both terminations in series. */
-function legOhms({ transmitter, receiver, referenceOhms, signalling }: Model): number {
-  const both = (transmitter?.impedanceOhms ?? referenceOhms) + (receiver?.impedanceOhms ?? referenceOhms);
-  return signalling === 'single-ended' ? both : both / 2;
-}
+type Capacitor = Element<'capacitor'>;
 
-/** Share of the level that is lost over a run of equal symbols: 1 - e^(-t/RC). */
-const droopOf = (farads: number, ohms: number, seconds: number) => -Math.expm1(-seconds / (ohms * farads));
+const valueOf = (element: AnyElement) => (element as Capacitor).values.value;
 
-/** The next larger value of the E3 series that keeps the droop, as it is written. */
-function larger(farads: number, ohms: number, seconds: number, most: number) {
-  const least = seconds / (-Math.log1p(-most) * ohms);
-  for (let decade = Math.floor(Math.log10(farads)); decade < 0; decade++) {
+/** The channel with each capacitor at one end of its tolerance. */
+const atEnd = (model: Model, end: (value: NonNullable<Capacitor['values']['value']>) => number): Model => ({
+  ...model,
+  elements: model.elements.map((element) => {
+    const value = element.kind === 'capacitor' ? valueOf(element) : undefined;
+    return value ? changed(element, { value: { ...value, value: end(value) } }) : element;
+  }),
+});
+
+const lowest = (model: Model) => droopOf(atEnd(model, ({ value, minus }) => value - minus));
+const highest = (model: Model) => droopOf(atEnd(model, ({ value, plus }) => value + plus));
+
+/** The next larger value of the E3 series with which the droop is allowed. */
+function larger(model: Model, capacitor: AnyElement, share: number): { value: number; share: number } | undefined {
+  const { minus, value: nominal } = valueOf(capacitor)!;
+  for (let decade = Math.floor(Math.log10(nominal)); decade < 0; decade++) {
     for (const digits of [1, 2.2, 4.7]) {
-      const value = digits * 10 ** decade;
-      if (value >= least && value > farads) return value;
+      const value = Number(`${digits}e${decade}`);
+      if (value <= nominal) continue;
+      const larger = changed(capacitor, { value: { ...valueOf(capacitor)!, value, minus: (minus / nominal) * value } });
+      const after = lowest(modelWith(model, larger))!.share;
+      if (after <= share) return { value, share: after };
     }
   }
   return undefined;
+}
+
+function fixesFor(model: Model, capacitor: AnyElement, share: number): readonly Fix[] {
+  const fits = larger(model, capacitor, share);
+  if (!fits) return [];
+  const tolerance = /\s*(?:±|\+).*$/.exec(valueOf(capacitor)!.text)?.[0] ?? '';
+  // An absolute tolerance belongs to the value that it was written for.
+  const text = show.capacitance(fits.value) + (tolerance.includes('%') ? tolerance : '');
+  const title = `Use ${show.capacitance(fits.value)}: ${show.percent(fits.share)} of droop`;
+  return [{ title, edits: [{ op: 'set', at: capacitor.place, key: 'value', text }] }];
 }
 
 export const droop: Rule<{ percent: number }> = {
@@ -29,41 +51,28 @@ export const droop: Rule<{ percent: number }> = {
   severity: 'warning',
   reads: 'model',
   options: { percent: 1 },
-  doc: `A series capacitor lets a run of equal symbols sag: over the longest run of the coding (8b10b 5; scrambled the run met once in
-1/target-ber bits) by more than \`percent\` of the level, at the lower end of the capacitor's tolerance. Closed form, 1 − e^(−t/RC), with
-R the leg's two terminations in series. Take a larger capacitor or a coding with a shorter run. The share is common practice.`,
+  doc: `The series capacitors let a run of equal symbols sag, over the longest run of the coding (8b10b 5; scrambled the run met once in
+1/target-ber bits), by more than \`percent\` of the level, at the lower end of their tolerance. Closed form, 1 − e^(−t/RC), with R the
+leg's two terminations in series. It is named at the smallest capacitor. Take a larger one, or a coding with a shorter run. The share is
+common practice.`,
   bad: 'path: [{ capacitor: coupling, value: 2.2 nF }]',
   good: 'path: [{ capacitor: coupling, value: 10 nF }]',
   *check({ model }, { percent }) {
-    const seconds = model.longestRun / model.symbolRate;
-    const ohms = legOhms(model);
-    for (const element of model.elements) {
-      const value = element.kind === 'capacitor' ? (element as Element<'capacitor'>).values.value : undefined;
-      if (!value || element.file || element.incomplete) continue;
-      const [least, most] = [value.value - value.minus, value.value + value.plus];
-      const worst = droopOf(least, ohms, seconds);
-      if (worst <= percent / 100) continue;
-      const best =
-        most > least ? ` (${show.percent(droopOf(most, ohms, seconds))} at the upper end of its tolerance)` : '';
-      const fits = larger(value.value, ohms, seconds, percent / 100);
-      const fixes: Fix[] =
-        fits === undefined
-          ? []
-          : [
-              {
-                title: `Use ${show.capacitance(fits)}: ${show.percent(droopOf(fits, ohms, seconds))} of droop`,
-                edits: [{ op: 'set', at: element.place, key: 'value', text: show.capacitance(fits) }],
-              },
-            ];
-      yield {
-        at: keyOf(element, 'value'),
-        subject: element.name,
-        message: `\`${element.name}\` (${show.capacitance(least)}) sags by ${show.percent(worst)} over ${model.longestRun} equal bits${best}, more than ${show.percent(percent / 100)}.`,
-        value: worst,
-        worse: 'higher',
-        valueText: show.percent(worst),
-        fixes,
-      };
-    }
+    const worst = lowest(model);
+    if (!worst || worst.share <= percent / 100) return;
+    const best = highest(model)!.share;
+    const capacitors = model.elements.filter(({ name }) => worst.capacitors.includes(name));
+    const smallest = capacitors.reduce((a, b) => (valueOf(b)!.value < valueOf(a)!.value ? b : a));
+    const also =
+      best < worst.share ? ` at the lower end of its tolerance (${show.percent(best)} at the upper one)` : '';
+    yield {
+      at: keyOf(smallest, 'value'),
+      subject: smallest.name,
+      message: `\`${smallest.name}\` lets ${model.longestRun} equal bits sag by ${show.percent(worst.share)}${also}, more than ${show.percent(percent / 100)}.`,
+      value: worst.share,
+      worse: 'higher',
+      valueText: show.percent(worst.share),
+      fixes: fixesFor(model, smallest, percent / 100),
+    };
   },
 };
