@@ -3,6 +3,10 @@ export interface Link {
   /** The pulse after all linear equalisation (CTLE chosen), V per symbol of full swing. */
   readonly pulse: Float64Array;
   readonly sampleSeconds: number;
+  /** Time of sample 0, from the middle of the symbol's leading edge at the transmitter: a share of a sample, so that the main cursor is on a sample. */
+  readonly pulseStartSeconds?: number;
+  /** The path turns the signal over, and the receiver is taken to turn it back: `pulse` is as after that. */
+  readonly inverted?: boolean;
   readonly samplesPerUi: number;
   /** Sample of the main cursor. */
   readonly mainIndex: number;

@@ -1,0 +1,107 @@
+import type { Model } from '../model/types';
+import { automaticCtle, type Ctle, ratioOfDb } from '../time/filters';
+import type { Time } from '../time/types';
+import { solveDfe } from './dfe';
+import { figureOfMeritDb } from './figure-of-merit';
+import type { Levels } from './levels';
+import { noiseBandwidths, shapedNoise } from './noise';
+import { valueAt } from './resample';
+import { peakOf, samplingInstant } from './sampling-instant';
+
+/** One setting of the receiver, and where it samples. Volts are those of the declared swing. */
+export interface Equalised {
+  /** Periodic, positive at its peak. */
+  readonly pulse: Float64Array;
+  /** The receiver swaps the legs: the path turns the signal over. */
+  readonly inverted: boolean;
+  /** In samples, between them. */
+  readonly instant: number;
+  readonly noiseVolts: number;
+  readonly ctleDcGainDb?: number;
+}
+
+/** DC gains that `ctle: auto` tries. Source: IEEE 802.3 Table 93-8. */
+const automaticGainsDb = Array.from({ length: 13 }, (_, i) => -i);
+
+/** The pulse behind the receiver's linear equaliser: as declared, or for `auto` with the DC gain of the best figure of merit. */
+export function equalise(model: Model, time: Time, levels: Levels): Equalised {
+  const swing = model.transmitter?.swingVolts ?? 1;
+  const noise = model.receiver?.noiseVolts ?? 0;
+  const bandwidthHz = model.receiver?.bandwidthHz ?? 0.75 * model.symbolRate;
+  const ctle = model.receiver?.ctle ?? 'none';
+  if (ctle !== 'auto' || !time.ctleParts) {
+    const declared: Ctle | undefined = typeof ctle === 'object' ? ctle : undefined;
+    return {
+      ...settled(
+        time.pulse.map((value) => value * swing),
+        model,
+        time.samplesPerUi,
+      ),
+      noiseVolts: shapedNoise(noise, bandwidthHz, declared),
+      ctleDcGainDb: declared?.dcGainDb,
+    };
+  }
+  const { flat, rising } = time.ctleParts;
+  const bands = noiseBandwidths(bandwidthHz, automaticCtle(model.symbolRate));
+  const plain = noiseBandwidths(bandwidthHz).flat;
+  let best: (Equalised & { readonly merit: number }) | undefined;
+  for (const dcGainDb of automaticGainsDb) {
+    const g = ratioOfDb(dcGainDb);
+    const pulse = new Float64Array(flat.length);
+    for (let i = 0; i < pulse.length; i++) pulse[i] = swing * (g * flat[i] + rising[i]);
+    const noiseVolts = noise * Math.sqrt((g * g * bands.flat + g * bands.cross + bands.rising) / plain);
+    const setting = { ...settled(pulse, model, time.samplesPerUi), noiseVolts, ctleDcGainDb: dcGainDb };
+    const merit = meritOf(setting, model, time.samplesPerUi, levels);
+    if (!best || merit > best.merit) best = { ...setting, merit };
+  }
+  return best!;
+}
+
+/** Turns the pulse up and finds the sampling instant. `pulse` is this function's to change. */
+function settled(pulse: Float64Array, model: Model, samplesPerUi: number) {
+  const high = pulse[peakOf(pulse)];
+  let low = 0;
+  for (const value of pulse) if (value < low) low = value;
+  const inverted = -low > high;
+  if (inverted) for (let i = 0; i < pulse.length; i++) pulse[i] = -pulse[i];
+  const { taps, limit } = dfeOf(model);
+  return { pulse, inverted, instant: samplingInstant(pulse, samplesPerUi, taps > 0 ? limit : 0) };
+}
+
+/** Absent receivers have no taps. */
+export const dfeOf = ({ receiver }: Model) => receiver?.dfe ?? { taps: 0, limit: 0 };
+
+/** Deterministic jitter counts half of its peak to peak, random its rms. */
+export function jitterOf({ transmitter, unitInterval }: Model) {
+  return {
+    randomUi: (transmitter?.randomJitterSeconds ?? 0) / unitInterval,
+    deterministicUi: (transmitter?.deterministicJitterSeconds ?? 0) / unitInterval,
+  };
+}
+
+function meritOf({ pulse, instant, noiseVolts }: Equalised, model: Model, samplesPerUi: number, levels: Levels) {
+  const uis = pulse.length / samplesPerUi;
+  const cursors = Float64Array.from({ length: uis }, (_, m) => valueAt(pulse, instant + m * samplesPerUi));
+  const { taps, limit } = dfeOf(model);
+  const corrected = solveDfe(cursors[0], cursors.subarray(1), taps, limit);
+  let interferenceSquared = 0;
+  for (let m = 1; m < uis; m++) interferenceSquared += (cursors[m] - (corrected[m - 1] ?? 0)) ** 2;
+  const at = Math.round(instant);
+  let slopesSquared = 0;
+  for (let m = 0; m < uis; m++) {
+    const place = at + m * samplesPerUi;
+    const rise = pulse[(place + 1) % pulse.length] - pulse[(place - 1 + pulse.length) % pulse.length];
+    slopesSquared += ((rise * samplesPerUi) / 2) ** 2;
+  }
+  const { randomUi, deterministicUi } = jitterOf(model);
+  return figureOfMeritDb(
+    {
+      mainCursor: cursors[0],
+      interferenceSquared,
+      slopesSquared,
+      jitterUi: Math.hypot(randomUi, deterministicUi / 2),
+      noiseVolts,
+    },
+    levels,
+  );
+}
