@@ -6,9 +6,12 @@ import type { OptionLine } from './touchstone-option-line';
  * S = (z − 1)(z + 1)⁻¹ = (1 − y)(1 + y)⁻¹; of the hybrid forms as in any table of two-port parameters.
  */
 export function toScattering(matrix: Float64Array, ports: number, parameter: OptionLine['parameter']): void {
-  if (parameter === 'S') return;
-  if (parameter === 'H') return fromHybrid(matrix);
-  if (parameter === 'G') return fromHybrid(matrix, invert(matrix, 2));
+  if (parameter === 'Z' || parameter === 'Y') fromImmittance(matrix, ports, parameter);
+  else if (parameter === 'H') fromHybrid(matrix);
+  else if (parameter === 'G') fromHybrid(matrix, invert(matrix, 2));
+}
+
+function fromImmittance(matrix: Float64Array, ports: number, parameter: 'Z' | 'Y'): void {
   const one = identity(ports);
   const sign = parameter === 'Z' ? 1 : -1;
   const above = matrix.map((value, i) => sign * (value - one[i]));

@@ -1,61 +1,58 @@
 import { fullOf, toSingleEnded } from './mixed-mode';
 import type { Network, NetworkContext } from './types';
 
-export interface WriteOptions {
+export interface WriteOptions extends NetworkContext {
   /**
-   * `differential`: a two-port in the differential reference (single-ended channel: the conductor's).
-   * `single-ended`: a four-port, ports 1 and 3 enter and 2 and 4 leave, positive leg first, in half of that reference.
-   * `mixed`: a four-port whose ports are the differential and the common one of either side; each has its own reference.
+   * `legs`, what a pair takes if nothing is said: a four-port, ports 1 and 3 enter, 2 and 4 leave, 1 and 2 the positive leg, in half of the
+   * differential reference. `differential`: a two-port of that mode alone. `modes`: a four-port whose ports are the differential
+   * and the common one of either side, each with its own reference. A single-ended channel is always a two-port.
    */
-  readonly form: 'differential' | 'single-ended' | 'mixed';
-  /** Lines put before the data. */
-  readonly comments?: readonly string[];
+  readonly form?: 'legs' | 'differential' | 'modes';
+  /** Put before the data. */
+  readonly comment?: string;
 }
 
 /** A network as a Touchstone 1.1 text: hertz, S, re and im with all digits, so that reading it gives the same numbers. */
-export function writeTouchstone(
-  network: Network,
-  context: NetworkContext,
-  { form, comments = [] }: WriteOptions,
-): string {
-  const single = context.singleEnded || form === 'differential';
-  const ohms = context.referenceOhms;
-  const reference = single
-    ? `${ohms}`
-    : form === 'single-ended'
-      ? `${ohms / 2}`
-      : `${ohms} ${ohms / 4} ${ohms} ${ohms / 4}`;
-  const lines = [...comments, ...portComments(context, form)].map(
-    (comment) => `! ${comment.replace(/[^\x20-\x7e]+/g, ' ')}`,
-  );
-  lines.push(`# Hz S RI R ${reference}`);
-  const rows = single
-    ? twoPortRows(network.differential)
-    : fourPortRows(form === 'mixed' ? fullOf(network) : bookOrder(toSingleEnded(fullOf(network))));
-  context.frequencies.forEach((frequency, i) => {
-    const [first, ...others] = rows(i);
-    lines.push(`${frequency} ${first}`, ...others.map((row) => `  ${row}`));
-  });
-  return `${lines.join('\n')}\n`;
+export function writeTouchstone(network: Network, options: WriteOptions): string {
+  const { frequencies, referenceOhms: ohms, singleEnded, comment } = options;
+  const form = singleEnded ? 'differential' : (options.form ?? 'legs');
+  const lines = [...(comment === undefined ? [] : comment.split(/[\r\n]+/)), portComment(singleEnded, form)];
+  // The format knows printable ASCII alone.
+  const text = lines.map((line) => `! ${line.replace(/[^\x20-\x7e]+/g, '?')}`);
+  text.push(`# Hz S RI R ${references(ohms, form)}`);
+  const rows = rowsOf(network, form);
+  for (let i = 0; i < frequencies.length; i++) text.push(`${frequencies[i]} ${rows(i)}`);
+  return `${text.join('\n')}\n`;
 }
 
-function portComments({ singleEnded }: NetworkContext, form: WriteOptions['form']): string[] {
-  if (singleEnded) return ['Ports: 1 transmitter side, 2 receiver side'];
-  if (form === 'differential') return ['Ports: 1 transmitter side, 2 receiver side, differential mode'];
-  if (form === 'single-ended')
-    return ['Ports: 1 and 3 transmitter side, 2 and 4 receiver side; 1 and 2 the positive leg'];
-  return [
-    'Ports: 1 differential and 2 common of the transmitter side, 3 differential and 4 common of the receiver side',
-  ];
+type Form = NonNullable<WriteOptions['form']>;
+
+function references(ohms: number, form: Form): string {
+  if (form === 'legs') return `${ohms / 2}`;
+  return form === 'differential' ? `${ohms}` : `${ohms} ${ohms / 4} ${ohms} ${ohms / 4}`;
 }
 
-/** Two-ports are written 21 before 12. */
-const twoPortRows = (s: Float64Array) => (point: number) => [
-  [0, 4, 2, 6].map((at) => `${s[8 * point + at]} ${s[8 * point + at + 1]}`).join(' '),
-];
+function rowsOf(network: Network, form: Form): (point: number) => string {
+  if (form === 'differential') return twoPortRow(network.differential);
+  return fourPortRows(form === 'modes' ? fullOf(network) : bookOrder(toSingleEnded(fullOf(network))));
+}
 
+function portComment(singleEnded: boolean, form: Form): string {
+  if (singleEnded) return 'Ports: 1 transmitter side, 2 receiver side';
+  if (form === 'differential') return 'Ports: 1 transmitter side, 2 receiver side, differential mode';
+  if (form === 'legs') return 'Ports: 1 and 3 transmitter side, 2 and 4 receiver side; 1 and 2 the positive leg';
+  return 'Ports: 1 differential and 2 common of the transmitter side, 3 differential and 4 common of the receiver side';
+}
+
+/** A two-port is written 21 before 12. */
+const twoPortRow = (s: Float64Array) => (point: number) =>
+  [0, 4, 2, 6].map((at) => `${s[8 * point + at]} ${s[8 * point + at + 1]}`).join(' ');
+
+/** Each row of the matrix on its own line. */
 const fourPortRows = (s: Float64Array) => (point: number) =>
-  [0, 1, 2, 3].map((row) => Array.from(s.subarray(32 * point + 8 * row, 32 * point + 8 * row + 8)).join(' '));
+  [0, 1, 2, 3]
+    .map((row) => Array.from(s.subarray(32 * point + 8 * row, 32 * point + 8 * row + 8)).join(' '))
+    .join('\n  ');
 
 /** Ports p1, n1, p2, n2 to the file's 1 = p1, 2 = p2, 3 = n1, 4 = n2. */
 function bookOrder(s: Float64Array): Float64Array {
