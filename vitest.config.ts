@@ -8,6 +8,7 @@ export default defineConfig({
       'server/**/*.test.ts',
       'client/**/*.test.ts',
       'test/unit/**/*.test.ts',
+      'test/preview/**/*.test.ts',
     ],
     globalSetup: ['test/global-setup.ts'],
   },

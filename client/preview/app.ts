@@ -71,7 +71,9 @@ export function startPage(host: Host, main: HTMLElement): void {
   const views = new Map<string, PlotView>();
   const pictures = element('div', { class: 'plots' });
   const status = element('p', { class: 'hidden', role: 'status' });
-  const nothing = element('p', { class: 'nothing' });
+  const reason = element('p', { class: 'nothing' }, 'The channel is being computed.');
+  const nameless = element('h1', { class: 'hidden' }, 'Channel preview');
+  const nothing = element('div', {}, nameless, reason);
   const caution = element(
     'p',
     { class: 'quiet caution' },
@@ -118,8 +120,9 @@ export function startPage(host: Host, main: HTMLElement): void {
     else if (message.type === 'cursorElement') setCurrent(message.element ?? undefined);
     else if (message.type === 'theme') setTheme(message.kind);
     else {
-      setText(nothing, message.reason);
+      setText(reason, message.reason);
       nothing.hidden = false;
+      nameless.hidden = data !== undefined;
       setStale(data ? 'all' : undefined);
     }
   };

@@ -23,7 +23,7 @@ export function pageHtml({ nonce, cspSource, scriptUri, styleUri }: PageParts): 
 <title>Channel preview</title>
 </head>
 <body>
-<main id="preview"><p class="nothing">The channel is being computed.</p></main>
+<main id="preview"><h1 class="hidden">Channel preview</h1><p class="nothing">The channel is being computed.</p></main>
 <script nonce="${nonce}" src="${escaped(scriptUri)}"></script>
 </body>
 </html>

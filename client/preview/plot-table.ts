@@ -1,7 +1,7 @@
 import { tableOf } from '../../src-core/plots/kit/table';
 import type { PlotDescription } from '../../src-core/plots/types';
 import type { Actions } from './app';
-import { element, setText, whenChanged } from './dom';
+import { element, setAttribute, setText, whenChanged } from './dom';
 
 /** The plot's numbers as a table behind a button. Built only while it is open. */
 export function plotTable(name: string, actions: Actions) {
@@ -12,7 +12,7 @@ export function plotTable(name: string, actions: Actions) {
     hidden: '',
     tabindex: '0',
     role: 'region',
-    'aria-labelledby': `${name}-heading`,
+    'aria-label': 'Values',
   });
   const button = element(
     'button',
@@ -35,6 +35,7 @@ export function plotTable(name: string, actions: Actions) {
     button,
     update(next: PlotDescription | undefined) {
       description = next;
+      if (next) setAttribute(holder, 'aria-label', `${next.title}: values`);
       show();
     },
   };

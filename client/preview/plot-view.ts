@@ -60,7 +60,7 @@ export function plotView(name: string, actions: Actions): PlotView {
   const spoken = element('p', { class: 'hidden', 'aria-live': 'polite' });
   const table = plotTable(name, actions);
   const tools = element('div', { class: 'tools', role: 'group', 'aria-labelledby': `${name}-heading` });
-  const content = element('div', {}, summary, surface, keys, reading, spoken, table.node);
+  const content = element('div', { class: 'plot-content' }, summary, surface, keys, reading, spoken, table.node);
   const missing = element('p', { class: 'nothing' });
   const node = element(
     'section',

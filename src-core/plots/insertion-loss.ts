@@ -3,7 +3,7 @@ import { maskOf, networkWithin } from '../figures/insertion-loss-limit';
 import { insertionLossAt } from '../figures/measures';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
-import { lossAxis, namesOf, sampled } from './sampled';
+import { lossAxis, namesOf, nyquistGuide, sampled } from './sampled';
 import type { Mark, Plot, PlotLimit, Series } from './types';
 
 /** More marks than this hide the curve; the deepest are kept. */
@@ -31,6 +31,7 @@ export const insertionLossPlot: Plot = {
       y: lossAxis('Insertion loss', allDb),
       series: [whole, ...cuts],
       limits,
+      guides: nyquistGuide(model),
       marks,
       summary: `${atNyquist} at Nyquist (${show.frequency(nyquistFrequency)}); ${resonancesInWords(marks)}${namesOf(limits)}`,
     };

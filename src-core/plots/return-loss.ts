@@ -3,7 +3,7 @@ import { networkWithin } from '../figures/insertion-loss-limit';
 import { type End, returnLossAt, worstReturnLoss } from '../figures/measures';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
-import { lossAxis, namesOf, sampled } from './sampled';
+import { lossAxis, namesOf, nyquistGuide, sampled } from './sampled';
 import type { Plot, PlotLimit, Series } from './types';
 
 /** Nothing of interest lies deeper; the first points come near infinity. */
@@ -30,6 +30,7 @@ export const returnLossPlot: Plot = {
       ),
       series,
       limits,
+      guides: nyquistGuide(model),
       marks: [],
       summary:
         `Least ${show.loss(worst.lossDb)} up to Nyquist, at ${show.frequency(worst.frequencyHz)}, ` +

@@ -1,3 +1,4 @@
+import type { Model } from '../model/types';
 import type { Grid } from '../networks/types';
 import type { Axis, PlotLimit } from './types';
 
@@ -25,6 +26,8 @@ export function lossAxis(label: string, valuesDb: readonly number[], mostDb = 90
   const end = Math.min(mostDb, Math.max(1, Math.ceil((largest * 1.04) / step) * step));
   return { label, unit: 'dB', domain: [0, end], downwards: true };
 }
+
+export const nyquistGuide = ({ nyquistFrequency }: Model) => [{ x: nyquistFrequency, label: 'Nyquist' }];
 
 /** ` Limits: ball-to-ball met, mask not met.`; empty without limits. */
 export function namesOf(limits: readonly PlotLimit[]): string {

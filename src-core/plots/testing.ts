@@ -23,6 +23,7 @@ export function lossPlot(points = 801): PlotDescription {
       { name: 'ball-to-ball', x: [12.890625e9], y: [24], met: true, forbidden: 'above' },
       { name: 'mask', x: [5e7, 4e9, 12.9e9], y: [2, 5, 24], met: false, forbidden: 'above' },
     ],
+    guides: [{ x: 12.890625e9, label: 'Nyquist' }],
     marks: [
       { x: 19.4e9, y: loss(19.4e9), label: 'dive 19.4 GHz', element: 'dive' },
       { x: 19.9e9, y: loss(19.9e9), label: 'rise 19.9 GHz', element: 'rise' },

@@ -10,6 +10,8 @@ export interface PlotDescription {
   /** Limits drawn as lines, points or closed masks, with their name. */
   readonly limits: readonly PlotLimit[];
   readonly marks: readonly Mark[];
+  /** Values of x worth a thin line and a word: the Nyquist frequency. */
+  readonly guides?: readonly { readonly x: number; readonly label: string }[];
   readonly heat?: Heat;
   /** One sentence for a screen reader and for `report --format md`. */
   readonly summary: string;

@@ -73,7 +73,7 @@ describe('the page under its policy', () => {
     await opened.page.locator('.tools button', { hasText: 'Table' }).first().click();
     expect(await opened.page.evaluate(() => (window as unknown as { hacked?: number }).hacked)).toBeUndefined();
     expect(await opened.page.locator('main img, main script').count()).toBe(0);
-    expect(await opened.page.locator('h1').textContent()).toBe(hostile);
+    expect(await opened.page.locator('.overview h1').textContent()).toBe(hostile);
     expect(await opened.violations()).toEqual([]);
   });
 

@@ -17,14 +17,10 @@ export function drawSeries(series: Series, index: number, layout: PlotLayout, pa
   const points = loop ? allPoints(series, layout) : visiblePoints(series, layout);
   const d = path(points);
   if (!d) return '';
-  return tag('path', {
-    d: loop ? `${d}Z` : d,
-    fill: 'none',
-    stroke,
-    'stroke-width': 1.75,
-    'stroke-dasharray': dashOf(index),
-    'stroke-linejoin': 'round',
-  });
+  const shape = { d: loop ? `${d}Z` : d, fill: 'none', 'stroke-linejoin': 'round' };
+  // a loop lies on a density, whose colours it must stand out from
+  const halo = loop ? tag('path', { ...shape, stroke: palette.background, 'stroke-width': 4.5 }) : '';
+  return halo + tag('path', { ...shape, stroke, 'stroke-width': 1.75, 'stroke-dasharray': dashOf(index) });
 }
 
 function drawStems({ x, y }: Series, index: number, layout: PlotLayout, palette: Palette, stroke: string): string {

@@ -39,6 +39,7 @@ export function renderSvg(description: PlotDescription, options: RenderOptions):
     defs,
     theme === 'print' ? tag('rect', { x: 0, y: 0, width, height, fill: palette.background }) : '',
     drawGrid(layout, palette),
+    drawGuides(description, layout, palette),
     tag(
       'g',
       { 'clip-path': `url(#${clip})`, opacity: description.stale ? '0.55' : undefined },
@@ -90,6 +91,29 @@ function drawGrid({ area, x, y }: PlotLayout, palette: Palette): string {
     tag('line', { x1: area.left, x2: area.left + area.width, y1: pixel, y2: pixel, ...line }),
   );
   return tag('g', { class: 'plot-grid' }, columns.join('') + rows.join(''));
+}
+
+/** Thin dotted lines with their word at the foot, for values that one looks for. */
+function drawGuides({ guides = [] }: PlotDescription, { area, x, fontSize }: PlotLayout, palette: Palette): string {
+  return guides
+    .map(({ x: value, label }) => {
+      const pixel = x.toPixel(value);
+      if (!(pixel > area.left && pixel < area.left + area.width)) return '';
+      const bottom = area.top + area.height;
+      const line = tag('line', {
+        x1: pixel,
+        x2: pixel,
+        y1: area.top,
+        y2: bottom,
+        stroke: palette.frame,
+        'stroke-dasharray': '1 3',
+      });
+      return (
+        line +
+        tag('text', { x: pixel + 4, y: bottom - 5, fill: palette.text, 'font-size': fontSize - 1 }, escapeMarkup(label))
+      );
+    })
+    .join('');
 }
 
 function drawFrame({ area, x, y, height }: PlotLayout, palette: Palette): string {
