@@ -1,7 +1,9 @@
 import { existsSync, mkdirSync, readFileSync, renameSync, writeFileSync } from 'node:fs';
+import { plain } from './build/plain';
 import { publishedSchemas } from './build/published';
 import { formatModule, formatTypes } from './build/runtime';
 import { validatorsModule, validatorsTypes } from './build/validators';
+import { checkOutput } from './outputs/check';
 
 /** Committed files, by name. */
 function committed(): Record<string, string> {
@@ -9,6 +11,12 @@ function committed(): Record<string, string> {
   for (const [name, schema] of Object.entries(publishedSchemas())) {
     files[`${name}.schema.json`] = `${JSON.stringify(schema, null, 2)}\n`;
   }
+  const output = {
+    $schema: 'https://json-schema.org/draft/2020-12/schema',
+    $id: 'urn:lanewright:schema:1:check-output',
+    ...plain(checkOutput),
+  };
+  files['check-output.schema.json'] = `${JSON.stringify(output, null, 2)}\n`;
   return files;
 }
 

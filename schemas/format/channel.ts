@@ -1,5 +1,5 @@
 import { type Static, Type } from '@sinclair/typebox';
-import { mapping, quantity, refers } from './quantity';
+import { mapping, named, type Quantity, quantity, refers } from './quantity';
 
 export { FORMAT_VERSION } from './version';
 
@@ -26,14 +26,19 @@ const ctle = mapping(
       valid: [-40, 20],
       plausible: [-20, 0],
     }),
-    zero: quantity('frequency', { description: 'Zero.', examples: ['6.45 GHz'], tolerance: false, valid: [1, 1e13] }),
-    poles: Type.Unsafe<readonly import('./quantity').Quantity[]>({
+    zero: quantity('frequency', {
+      description: 'Where the lift begins.',
+      examples: ['6.45 GHz'],
+      tolerance: false,
+      valid: [1, 1e13],
+    }),
+    poles: Type.Unsafe<readonly Quantity[]>({
       type: 'array',
       items: { type: 'string' },
       minItems: 1,
       maxItems: 4,
-      description: 'Poles.',
-      examples: [['6.45 GHz', '25.8 GHz']],
+      description: 'Its poles: the first takes the zero’s lift back, the second ends the band.',
+      examples: ['[6.45 GHz, 25.8 GHz]'],
       'x-quantity': { dimensions: ['frequency'], at: 'never', tolerance: false, valid: [1, 1e13], list: true },
     }),
   },
@@ -222,8 +227,9 @@ export const channelProperties = {
     }),
   ),
   owners: Type.Optional(
-    Type.Record(
-      Type.String(),
+    named(
+      undefined,
+      'Who answers for what, and what they may spend.',
       quantity('loss', {
         description: 'Budget for all elements that name this owner.',
         examples: ['12 dB @ nyquist'],
@@ -232,17 +238,13 @@ export const channelProperties = {
         valid: [0, 500],
         plausible: [0.1, 100],
       }),
-      { description: 'Who answers for what, and what they may spend.' },
     ),
   ),
   use: Type.Optional(
-    Type.Record(
-      Type.String(),
+    named(
+      'use',
+      'Parts files by a name of your own: `ctrl: controller.parts.yaml` makes `ctrl.main`.',
       refers('file', 'A parts file, relative to this file.', { examples: ['../boards/sled.parts.yaml'] }),
-      {
-        description: 'Parts files by a name of your own: `ctrl: controller.parts.yaml` makes `ctrl.main`.',
-        'x-declares-keys': 'use',
-      },
     ),
   ),
   transmitter: Type.Optional(transmitter),

@@ -1,6 +1,6 @@
 import { type Static, Type } from '@sinclair/typebox';
 import { channelProperties } from './channel';
-import { mapping } from './quantity';
+import { mapping, named } from './quantity';
 
 export const severities = ['error', 'warning', 'info', 'hint', 'off'] as const;
 export type SeveritySetting = (typeof severities)[number];
@@ -11,7 +11,11 @@ export const config = mapping(
   'Severities and options of rules; the nearest such file upwards counts.',
   {
     lanewright: channelProperties.lanewright,
-    rules: Type.Optional(Type.Record(Type.String(), Type.Any(), { description: 'By rule.', 'x-entries': 'rules' })),
+    rules: Type.Optional(
+      named(undefined, 'By the rule’s name: a severity, or `severity` and the rule’s options.', Type.Any(), {
+        'x-entries': 'rules',
+      }),
+    ),
   },
   { required: ['lanewright'] },
 );

@@ -86,9 +86,17 @@ export const waiver = mapping(
     rule: refers('rule', 'The rule whose finding is accepted.'),
     at: Type.String({ description: 'The element or limit where it stands.' }),
     'up-to': Type.Optional(
-      Type.String({ description: 'The worst accepted value, where the finding has one.', examples: ['9.1 dB'] }),
+      Type.Unsafe<string>({
+        type: ['string', 'number'],
+        description: 'The worst accepted value, where the finding has one.',
+        examples: ['9.1 dB'],
+      }),
     ),
-    until: Type.String({ description: 'Last day of acceptance, YYYY-MM-DD.', examples: ['2027-03-31'] }),
+    until: Type.String({
+      description: 'The last day on which it is accepted, YYYY-MM-DD.',
+      pattern: '^[0-9]{4}-[0-9]{2}-[0-9]{2}$',
+      examples: ['2027-03-31'],
+    }),
     by: Type.String({ description: 'Who accepted it.' }),
     reason: Type.String({ description: 'Why.' }),
   },

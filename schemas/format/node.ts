@@ -28,6 +28,9 @@ export interface NodeSchema {
   readonly additionalProperties?: boolean | NodeSchema;
   readonly required?: readonly string[];
   readonly minProperties?: number;
+  readonly maxProperties?: number;
+  /** Two keys that say the same thing. */
+  readonly not?: { readonly required: readonly string[] };
   readonly items?: NodeSchema;
   readonly minItems?: number;
   readonly maxItems?: number;

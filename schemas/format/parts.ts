@@ -1,6 +1,6 @@
 import { type Static, Type } from '@sinclair/typebox';
 import { channelProperties } from './channel';
-import { declares, mapping, type Quantity, quantity, refers } from './quantity';
+import { declares, mapping, named, type Quantity, quantity, refers } from './quantity';
 
 const dk = quantity('ratio', {
   description: 'Dielectric constant; without `@` it holds at 10 GHz.',
@@ -84,7 +84,7 @@ export const roughness = mapping(
     ),
     huray: Type.Optional(huray),
   },
-  { minProperties: 1 },
+  { minProperties: 1, maxProperties: 1 },
 );
 
 export const foil = mapping('foil', 'A copper foil.', {
@@ -173,25 +173,18 @@ export const parts = mapping(
     lanewright: channelProperties.lanewright,
     title: Type.Optional(Type.String({ description: 'What this file holds.' })),
     use: channelProperties.use,
-    materials: Type.Optional(
-      Type.Record(Type.String(), material, { description: 'Dielectrics by name.', 'x-declares-keys': 'material' }),
-    ),
-    foils: Type.Optional(
-      Type.Record(Type.String(), foil, { description: 'Copper foils by name.', 'x-declares-keys': 'foil' }),
-    ),
+    materials: Type.Optional(named('material', 'Dielectrics by name.', material)),
+    foils: Type.Optional(named('foil', 'Copper foils by name.', foil)),
     stackups: Type.Optional(
-      Type.Record(Type.String(), Type.Array(Type.Any(), { 'x-entries': 'stackup-rows' }), {
-        description: 'Stackups by name, top to bottom; copper and dielectric alternate.',
-        'x-declares-keys': 'stackup',
-      }),
+      named(
+        'stackup',
+        'Stackups by name, top to bottom; copper and dielectric alternate, two dielectrics in a row are allowed.',
+        Type.Array(Type.Any(), { description: 'Its layers, top to bottom.', 'x-entries': 'stackup-rows' }),
+      ),
     ),
     'drill-rules': Type.Optional(drillRules),
     parts: Type.Optional(
-      Type.Record(Type.String(), Type.Any(), {
-        description: 'Shared parts by name: `kind` and the keys of that kind.',
-        'x-declares-keys': 'part',
-        'x-entries': 'parts',
-      }),
+      named('part', 'Shared parts by name: `kind` and the keys of that kind.', Type.Any(), { 'x-entries': 'parts' }),
     ),
   },
   { required: ['lanewright'] },

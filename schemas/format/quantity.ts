@@ -1,4 +1,4 @@
-import { type TSchema, Type } from '@sinclair/typebox';
+import { type Static, type TSchema, Type } from '@sinclair/typebox';
 
 /** What a quantity may measure. Each dimension's units stand in `src-core/quantity/units.ts`. */
 export type Dimension =
@@ -26,7 +26,7 @@ export interface Quantity {
   readonly dimension: Dimension;
   /** As written, trimmed. */
   readonly text: string;
-  /** The unit as written; '' where there is none. */
+  /** The unit in its ASCII spelling; '' where there is none. */
   readonly unit: string;
   /** Absolute, in the unit of `value`, both >= 0; 0 where no tolerance is written. */
   readonly plus: number;
@@ -155,5 +155,23 @@ export const mapping = <T extends Record<string, TSchema>>(
     description,
     additionalProperties: false,
     patternProperties: { '^x-': {} },
+    ...options,
+  });
+
+/**
+ * A mapping from names of one's own to one schema. Keys that begin with `x-` are kept and ignored, here too.
+ * @param role what the names declare; without it any text is a name
+ */
+export const named = <T extends TSchema>(
+  role: NameRole | undefined,
+  description: string,
+  entry: T,
+  options: Record<string, unknown> = {},
+) =>
+  Type.Unsafe<Record<string, Static<T>>>({
+    type: 'object',
+    description,
+    patternProperties: { '^(?!x-)': entry },
+    ...(role && { propertyNames: { pattern: NAME_PATTERN }, 'x-declares-keys': role }),
     ...options,
   });

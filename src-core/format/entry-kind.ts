@@ -1,6 +1,7 @@
 import type { EntryListName, SchemaName } from '../../schemas/format/types';
-import { entryLists } from '../../schemas/generated/format';
+import { entryLists, schemas } from '../../schemas/generated/format';
 import { nearest } from '../quantity/nearest';
+import { freeName } from './free-name';
 import type { FormatFix, FormatProblem } from './problem';
 import { isMapping, kindOfValue, listed, quote } from './say';
 
@@ -15,80 +16,64 @@ export function schemaOfKind(list: EntryListName, kind: string): SchemaName | un
 }
 
 /**
- * Which kind an entry is. In `path`, `limits` and stackups its first key says so, in `parts` its key `kind`.
- * No kind, two kinds, an unknown kind or a half-typed word give one problem, with a fix where one can be named.
+ * Which kind an entry is. In `path`, `limits` and stackups the key says so that is a kind's name, in `parts` the key `kind`.
+ * @returns the kind and its schema; or one problem, with a fix, where it is a half-typed word, has no kind, two, or an unknown one
  */
 export function entryKind(list: EntryListName, entry: unknown): EntryKind {
-  const { choice, kinds, noun } = entryLists[list];
+  const { choice, kinds } = entryLists[list];
   if (!isMapping(entry)) return { problem: notAMapping(list, entry) };
   if (choice === 'only') return found(list, kinds[0]);
   if (choice === 'kind') return kindByKey(list, entry);
   const keys = Object.keys(entry);
   const named = keys.filter((key) => kinds.includes(key));
-  if (named.length === 1) return named[0] === keys[0] ? found(list, named[0]) : secondPlace(list, keys, named[0]);
-  if (named.length > 1) return twoKinds(list, named);
-  const first = keys.find((key) => !key.startsWith('x-')) ?? keys[0];
-  if (first === undefined)
-    return {
-      problem: problemAt([], 'entry', `This entry is empty; ${noun} begins with its kind: ${listed(kinds, 'or')}.`),
-    };
-  const near = keys.map((key) => [key, nearest(key, kinds)] as const).find(([, kind]) => kind !== undefined);
-  if (near) return { problem: unknownKind(near[0], near[1]!, noun) };
-  const others = kinds.map(
-    (kind): FormatFix => ({
-      title: `Begin with \`${kind}\``,
-      edits: [{ op: 'set', path: [], key: kind, text: freeName(kind) }],
-    }),
-  );
-  const message =
-    entry[first] === null || typeof entry[first] === 'string'
-      ? `${quote(first)} is no kind of ${noun.replace(/^an? /, '')}; an entry begins with ${listed(kinds, 'or')}.`
-      : `This entry does not say what it is: its first key is its kind, ${listed(kinds, 'or')}.`;
-  return { problem: problemAt([first], 'key', message, others) };
+  if (named.length === 1) return found(list, named[0]);
+  return { problem: named.length > 1 ? twoKinds(list, named) : noKind(list, keys) };
 }
 
 const found = (list: EntryListName, kind: string): EntryKind => ({ kind, schema: schemaOfKind(list, kind)! });
 
-const problemAt = (
+const say = (
   path: (string | number)[],
   on: FormatProblem['on'],
   message: string,
   fixes: FormatFix[] = [],
-): FormatProblem => ({ rule: 'schema', path, on, message, fixes });
+): FormatProblem => ({
+  rule: 'schema',
+  path,
+  on,
+  message,
+  fixes,
+});
 
-/** `- trace`, `- tr`, `-` */
+const capital = (text: string) => `${text.charAt(0).toUpperCase()}${text.slice(1)}`;
+const bare = (noun: string) => noun.replace(/^an? /, '');
+const inBackquotes = (names: readonly string[]) => names.map((name) => `\`${name}\``);
+
+/** `- tr`, `- trace`, `-` */
 function notAMapping(list: EntryListName, entry: unknown): FormatProblem {
   const { kinds, noun, choice } = entryLists[list];
-  if (choice === 'kind')
-    return problemAt(
-      [],
-      'value',
-      `${noun} is a mapping with \`kind\` and the keys of that kind; this is ${kindOfValue(entry)}.`.replace(
-        /^./,
-        (c) => c.toUpperCase(),
-      ),
-    );
-  if (choice === 'only')
-    return problemAt(
-      [],
-      'value',
-      `${noun} is a mapping; this is ${kindOfValue(entry)}.`.replace(/^./, (c) => c.toUpperCase()),
-    );
+  if (choice !== 'first-key') {
+    const keys =
+      choice === 'kind' ? ' with `kind` and the keys of that kind' : ' with `rule`, `at`, `until`, `by` and `reason`';
+    return say([], 'value', `${capital(noun)} is a mapping${keys}; this is ${kindOfValue(entry)}.`);
+  }
   const word = typeof entry === 'string' ? entry.trim() : '';
-  const meant = word === '' ? [] : kinds.filter((kind) => kind.startsWith(word.toLowerCase()));
-  const near = meant.length > 0 ? meant : [nearest(word, kinds)].filter((kind) => kind !== undefined);
-  const fixes = (near.length > 0 ? near : kinds).map(
-    (kind): FormatFix => ({
-      title: `Write \`${kind}: ${freeName(kind)}\``,
-      edits: [{ op: 'value', path: [], text: `${kind}: ${freeName(kind)}` }],
+  const begun = word === '' ? [] : kinds.filter((kind) => kind.startsWith(word.toLowerCase()));
+  const near = begun.length > 0 ? begun : [nearest(word, kinds)].filter((kind) => kind !== undefined);
+  const offered = near.length > 0 ? near : kinds;
+  const fixes = offered.map((kind): FormatFix => {
+    const text = `${kind}: ${freeName(kind)}`;
+    return {
+      title: `Write \`${text}\``,
+      edits: [{ op: 'value', path: [], text }],
       ...(near.length === 1 && { preferred: true }),
-    }),
-  );
+    };
+  });
   const what = word === '' ? `This entry is ${kindOfValue(entry)}` : `${quote(word)} is not ${noun} yet`;
-  return problemAt(
+  return say(
     [],
     'value',
-    `${what}: write its kind and its own name, as \`${near[0] ?? kinds[0]}: ${freeName(near[0] ?? kinds[0])}\`.`,
+    `${what}: write its kind and its own name, as \`${offered[0]}: ${freeName(offered[0])}\`.`,
     fixes,
   );
 }
@@ -98,95 +83,77 @@ function kindByKey(list: EntryListName, entry: Record<string, unknown>): EntryKi
   const { kind } = entry;
   if (typeof kind === 'string' && kinds.includes(kind)) return found(list, kind);
   if (kind === undefined || kind === null) {
-    const first = Object.keys(entry).find((key) => kinds.includes(key));
-    const fixes = (first ? [first] : kinds).map(
+    const fixes = kindsWith(list, Object.keys(entry)).map(
       (name): FormatFix => ({
-        title: `Set \`kind: ${name}\``,
+        title: `Add \`kind: ${name}\``,
         edits: [{ op: 'set', path: [], key: 'kind', text: name }],
       }),
     );
     return {
-      problem: problemAt(
-        [],
-        'entry',
-        `${noun[0].toUpperCase()}${noun.slice(1)} says its \`kind\`: ${listed(kinds, 'or')}.`,
-        fixes,
-      ),
+      problem: say([], 'entry', `${capital(noun)} says its \`kind\`: ${listed(inBackquotes(kinds), 'or')}.`, fixes),
     };
   }
   const near = typeof kind === 'string' ? nearest(kind, kinds) : undefined;
   const fixes: FormatFix[] = near
     ? [{ title: `Change to \`${near}\``, edits: [{ op: 'value', path: ['kind'], text: near }], preferred: true }]
     : [];
-  const hint = near ? `did you mean \`${near}\`?` : `there are ${listed(kinds)}.`;
-  return { problem: problemAt(['kind'], 'value', `${kindOfValue(kind)} is no kind of part; ${hint}`, fixes) };
-}
-
-function unknownKind(key: string, kind: string, noun: string): FormatProblem {
-  const fix: FormatFix = {
-    title: `Change to \`${kind}\``,
-    edits: [{ op: 'key', path: [key], name: kind }],
-    preferred: true,
+  const hint = near ? `did you mean \`${near}\`?` : `there are ${listed(inBackquotes(kinds))}.`;
+  return {
+    problem: say(['kind'], 'value', `${capital(kindOfValue(kind))} is no kind of ${bare(noun)}; ${hint}`, fixes),
   };
-  return problemAt(
-    [key],
-    'key',
-    `${quote(key)} is no kind of ${noun.replace(/^an? /, '')}; did you mean \`${kind}\`?`,
-    [fix],
-  );
 }
 
-function twoKinds(list: EntryListName, named: string[]): EntryKind {
+/** The kinds that know every one of these keys that any kind knows. */
+function kindsWith(list: EntryListName, keys: readonly string[]): string[] {
+  const { kinds, prefix } = entryLists[list];
+  const knows = (kind: string, key: string) =>
+    Object.hasOwn(schemas[`${prefix}${kind}` as SchemaName].properties ?? {}, key);
+  const known = keys.filter((key) => kinds.some((kind) => knows(kind, key)));
+  return kinds.filter((kind) => known.every((key) => knows(kind, key)));
+}
+
+/** No key is a kind: the first is one misspelt or unknown, or the kind was left out. */
+function noKind(list: EntryListName, keys: readonly string[]): FormatProblem {
+  const { kinds, noun, prefix } = entryLists[list];
+  const first = keys.find((key) => !key.startsWith('x-'));
+  const choice = listed(inBackquotes(kinds), 'or');
+  if (first === undefined) return say([], 'entry', `This entry is empty: ${noun} begins with its kind, ${choice}.`);
+  const near = nearest(first, kinds);
+  const attributes = kinds.flatMap((kind) => Object.keys(schemas[`${prefix}${kind}` as SchemaName].properties ?? {}));
+  const isAttribute = attributes.includes(first) || (!near && nearest(first, attributes) !== undefined);
+  if (isAttribute) {
+    const fixes = kindsWith(list, keys).map(
+      (kind): FormatFix => ({
+        title: `Add \`${kind}: ${freeName(kind)}\``,
+        edits: [{ op: 'set', path: [], key: kind, text: freeName(kind) }],
+      }),
+    );
+    return say(
+      [],
+      'entry',
+      `This entry does not say what it is: ${noun} begins with its kind and own name, as \`${kinds[0]}: ${freeName(kinds[0])}\`.`,
+      fixes,
+    );
+  }
+  const offered = near ? [near] : kindsWith(list, keys);
+  const fixes = offered.map(
+    (kind): FormatFix => ({
+      title: `Change to \`${kind}\``,
+      edits: [{ op: 'key', path: [first], name: kind }],
+      ...(near && { preferred: true }),
+    }),
+  );
+  const hint = near ? `did you mean \`${near}\`?` : `an entry begins with ${choice}.`;
+  return say([first], 'key', `${quote(first)} is no kind of ${bare(noun)}; ${hint}`, fixes);
+}
+
+function twoKinds(list: EntryListName, named: string[]): FormatProblem {
   const fixes = named.map(
     (kept): FormatFix => ({
       title: `Keep \`${kept}\``,
       edits: named.filter((kind) => kind !== kept).map((kind) => ({ op: 'remove', path: [kind] })),
     }),
   );
-  const second = named[1];
-  const noun = entryLists[list].noun;
-  return {
-    problem: problemAt(
-      [second],
-      'key',
-      `This entry names ${named.length} kinds, ${listed(named.map((kind) => `\`${kind}\``))}; ${noun} has one. Is a dash missing before \`${second}\`?`,
-      fixes,
-    ),
-  };
-}
-
-/** The kind stands behind another key: read all the same, where that key is no reason to doubt it. */
-function secondPlace(list: EntryListName, _keys: string[], kind: string): EntryKind {
-  return found(list, kind);
-}
-
-/** A name for a new thing of a kind, not among `taken`: `trace-1`. */
-export function freeName(kind: string, taken: ReadonlySet<string> = new Set()): string {
-  for (let n = 1; ; n++) if (!taken.has(`${kind}-${n}`)) return `${kind}-${n}`;
-}
-
-/** Not names: what YAML 1.1 readers take for something else. */
-const reservedWords = new Set(['true', 'false', 'null', 'yes', 'no', 'on', 'off']);
-
-/** What is wrong with a name of our own, and the nearest right one; undefined if it is right. */
-export function nameProblem(name: string): { message: string; suggestion: string } | undefined {
-  if (/^[a-z][a-z0-9-]*$/.test(name) && !reservedWords.has(name)) return undefined;
-  const suggestion = correctedName(name);
-  const message = reservedWords.has(name)
-    ? `${quote(name)} cannot be a name: YAML readers take it for a value. Write for example \`${suggestion}\`.`
-    : `${quote(name)} cannot be a name: a name is lower-case letters, digits and dashes, beginning with a letter, as \`${suggestion}\`.`;
-  return { message, suggestion };
-}
-
-function correctedName(name: string): string {
-  const plain = name
-    .slice(0, 60)
-    .normalize('NFD')
-    .replace(/[\u0300-\u036f]/g, '')
-    .toLowerCase()
-    .replace(/[^a-z0-9]+/g, '-')
-    .replace(/^[-0-9]+/, '')
-    .replace(/-+$/, '');
-  if (plain === '') return 'name';
-  return reservedWords.has(plain) ? `${plain}-1` : plain;
+  const message = `This entry names ${listed(inBackquotes(named))}; ${entryLists[list].noun} is of one kind. Is a dash missing before \`${named[1]}\`?`;
+  return say([named[1]], 'key', message, fixes);
 }

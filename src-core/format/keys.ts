@@ -1,6 +1,7 @@
 import type { EntryListName, NameRole, NodeSchema, QuantitySpec, SchemaName } from '../../schemas/format/types';
 import { entryLists, schemas } from '../../schemas/generated/format';
 import type { FileKind, ValuePath } from '../text/types';
+import { childOf, choicesOf, mappingOf } from './node-at';
 
 /** A key, for hover and completion. */
 export interface KeyInfo {
@@ -43,9 +44,6 @@ export function keysOf(name: SchemaName): readonly KeyInfo[] {
   return keys;
 }
 
-const mappingOf = (node: NodeSchema): NodeSchema | undefined =>
-  node.properties ? node : node.anyOf?.find((branch) => branch.properties);
-
 function keysOfNode(node: NodeSchema): KeyInfo[] {
   const properties = mappingOf(node)?.properties ?? {};
   return Object.entries(properties).map(([key, child]) =>
@@ -77,14 +75,6 @@ const quantityOf = (node: NodeSchema): QuantitySpec | undefined =>
 const written = (example: unknown): string =>
   Array.isArray(example) ? `[${example.map(written).join(', ')}]` : String(example);
 
-function choicesOf(node: NodeSchema): string[] {
-  if (node.type === 'boolean') return ['true', 'false'];
-  const constants = (node.anyOf ?? [node])
-    .filter((branch) => branch.const !== undefined)
-    .map((branch) => String(branch.const));
-  return node.enum ? node.enum.map(String) : constants;
-}
-
 function typeOf(node: NodeSchema): KeyInfo['type'] {
   const spec = node['x-quantity'];
   if (spec) return spec.band ? 'band' : spec.list ? 'quantities' : 'quantity';
@@ -97,10 +87,6 @@ function typeOf(node: NodeSchema): KeyInfo['type'] {
   return node.type === 'number' || node.type === 'integer' ? 'number' : 'any';
 }
 
-/** What a mapping with names of one's own (materials, owners) holds under each name. */
-const underAnyName = (node: NodeSchema): NodeSchema | undefined =>
-  node.properties ? undefined : Object.values(node.patternProperties ?? {})[0];
-
 /** One step down; undefined where the schema ends. An entry of a list of kinds needs `kindOfEntry`. */
 function stepDown(node: NodeSchema, step: string | number, kindOfEntry: string | undefined): NodeSchema | undefined {
   const list = node['x-entries'] as EntryListName | undefined;
@@ -109,13 +95,10 @@ function stepDown(node: NodeSchema, step: string | number, kindOfEntry: string |
     const kind = kinds.length === 1 ? kinds[0] : kindOfEntry;
     return kind !== undefined && kinds.includes(kind) ? schemas[`${prefix}${kind}` as SchemaName] : undefined;
   }
-  if (typeof step === 'number') return node.items ?? node.anyOf?.find((branch) => branch.items)?.items;
-  const properties = mappingOf(node)?.properties;
-  if (properties && Object.hasOwn(properties, step)) return properties[step];
-  return underAnyName(node);
+  return childOf(node, step);
 }
 
-function nodeAt(fileKind: FileKind, path: ValuePath, kindOfEntry?: string): NodeSchema | undefined {
+function nodeOfFile(fileKind: FileKind, path: ValuePath, kindOfEntry?: string): NodeSchema | undefined {
   let node: NodeSchema | undefined =
     fileKind === 'channel' || fileKind === 'parts' || fileKind === 'config' ? schemas[fileKind] : undefined;
   for (const step of path) node = node && stepDown(node, step, kindOfEntry);
@@ -128,14 +111,14 @@ function nodeAt(fileKind: FileKind, path: ValuePath, kindOfEntry?: string): Node
  * @param kindOfEntry the kind of the entry on the way: `trace`, `eye`, `copper`, a part's kind
  */
 export function keySchemaAt(fileKind: FileKind, path: ValuePath, kindOfEntry?: string): KeyInfo | undefined {
-  const node = nodeAt(fileKind, path, kindOfEntry);
-  const holder = nodeAt(fileKind, path.slice(0, -1), kindOfEntry);
+  const node = nodeOfFile(fileKind, path, kindOfEntry);
+  const holder = nodeOfFile(fileKind, path.slice(0, -1), kindOfEntry);
   const key = String(path.at(-1) ?? '');
   return node && keyInfo(key, node, (holder && mappingOf(holder)?.required?.includes(key)) ?? false);
 }
 
 /** The keys that the mapping at a path may have. */
 export function keysAt(fileKind: FileKind, path: ValuePath, kindOfEntry?: string): readonly KeyInfo[] {
-  const node = nodeAt(fileKind, path, kindOfEntry);
+  const node = nodeOfFile(fileKind, path, kindOfEntry);
   return node ? keysOfNode(node) : [];
 }

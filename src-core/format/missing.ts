@@ -19,7 +19,7 @@ function segment(has: Has): MissingKey[] {
     ...(has('length') ? [] : [one('length')]),
     ...(has('impedance') ? [] : [one('impedance')]),
     ...(hasDelay(has) ? [] : [{ anyOf: ['delay', 'velocity', 'dk'], for: 'delay' }]),
-    ...(has('loss') || (has('dk') && has('df')) ? [] : [one('loss')]),
+    ...(has('loss') ? [] : [one('loss')]),
   ];
 }
 
@@ -30,7 +30,7 @@ function trace(has: Has, singleEnded: boolean): MissingKey[] {
   const missing = has('length') ? [] : [one('length')];
   if (!has('width') && !has('impedance')) missing.push({ anyOf: ['width', 'impedance'], for: 'impedance' });
   if (has('width') && !has('gap') && !singleEnded) missing.push(one('gap', 'impedance of a pair'));
-  const declared = has('impedance') && hasDelay(has) && (has('loss') || has('df')) && !has('width');
+  const declared = has('impedance') && hasDelay(has) && has('loss') && !has('width');
   if (!declared) for (const key of ['stackup', 'layer']) if (!has(key)) missing.push(one(key, 'delay and loss'));
   return missing;
 }

@@ -33,6 +33,8 @@ export interface FormatProblem {
   /** The part of the value's text that it is about, where that is less than all of it. */
   readonly within?: TextRange;
   readonly fixes: readonly FormatFix[];
+  /** The key that is missing, where that is the problem. */
+  readonly lacks?: string;
 }
 
 /** The problem as a report: paths from the document's root. */

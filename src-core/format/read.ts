@@ -1,9 +1,11 @@
-import type { NodeSchema, SchemaName, ValuesOf } from '../../schemas/format/types';
+import type { NodeSchema, QuantitySpec, SchemaName, ValuesOf } from '../../schemas/format/types';
 import { FORMAT_VERSION } from '../../schemas/format/version';
 import { schemas } from '../../schemas/generated/format';
 import type { QuantityProblem } from '../quantity/problem';
-import { readBand, readQuantity } from '../quantity/read';
+import { readQuantity } from '../quantity/read';
+import { readBand } from '../quantity/read-band';
 import type { ValuePath } from '../text/types';
+import { childOf, mappingOf } from './node-at';
 import type { FormatProblem } from './problem';
 import { isMapping } from './say';
 import { validateEntry } from './validate';
@@ -61,35 +63,29 @@ function versionProblems(raw: unknown, name: SchemaName): FormatProblem[] {
   ];
 }
 
+const isBad = ({ bad }: Reader, path: ValuePath) => bad.size > 0 && path.length > 0 && bad.has(JSON.stringify(path));
+
 /** The value as read; undefined where it is bad. */
 function readNode(reader: Reader, node: NodeSchema, raw: unknown, path: ValuePath): unknown {
-  if (raw === null || raw === undefined || (path.length > 0 && reader.bad.has(JSON.stringify(path)))) return undefined;
+  if (raw === null || raw === undefined || isBad(reader, path)) return undefined;
   const spec = node['x-quantity'];
   if (spec?.band) return noted(reader, path, readBand(String(raw), spec), 'band');
-  if (spec?.list) {
-    const items = Array.isArray(raw) ? raw : [raw];
-    const read = items.map((item, index) =>
-      readScalar(
-        reader,
-        { ...node, 'x-quantity': { ...spec, list: !Array.isArray(raw) } },
-        item,
-        Array.isArray(raw) ? [...path, index] : path,
-      ),
-    );
-    return read.includes(undefined) ? undefined : read;
-  }
-  if (spec) return readScalar(reader, node, raw, path);
+  if (spec?.list) return readQuantities(reader, spec, raw, path);
+  if (spec) return readOne(reader, spec, raw, path);
   if (node.anyOf) return readNode(reader, node.anyOf.find((branch) => fits(branch, raw)) ?? {}, raw, path);
-  if (isMapping(raw) && (node.properties || node.patternProperties)) return readMapping(reader, node, raw, path);
-  if (Array.isArray(raw) && node.items) {
-    const read = raw.map((item, index) => readNode(reader, node.items!, item, [...path, index]));
-    return reader.problems.length > 0 && Object.keys(node.items).length > 0
-      ? read.includes(undefined)
-        ? undefined
-        : read
-      : raw;
-  }
-  return raw;
+  if (isMapping(raw)) return node.properties || node.patternProperties ? readMapping(reader, node, raw, path) : raw;
+  if (Array.isArray(raw))
+    return node.items ? whole(raw.map((item, index) => readNode(reader, node.items!, item, [...path, index]))) : raw;
+  return Array.isArray(node.type) && node.type.includes('string') ? String(raw) : raw;
+}
+
+/** A list is read whole or not at all: a point that is left out would change a curve. */
+const whole = (read: unknown[]) => (read.includes(undefined) ? undefined : read);
+
+function readQuantities(reader: Reader, spec: QuantitySpec, raw: unknown, path: ValuePath) {
+  if (!Array.isArray(raw)) return whole([readOne(reader, spec, raw, path)]);
+  const entry = { ...spec, list: false };
+  return whole(raw.map((item, index) => readOne(reader, entry, item, [...path, index])));
 }
 
 const fits = (branch: NodeSchema, raw: unknown) =>
@@ -97,21 +93,21 @@ const fits = (branch: NodeSchema, raw: unknown) =>
     ? branch.properties !== undefined
     : branch.properties === undefined && (branch.const === undefined || branch.const === raw);
 
+/** An inner mapping that lacks what its schema demands is left out as a whole. */
 function readMapping(reader: Reader, node: NodeSchema, raw: Record<string, unknown>, path: ValuePath) {
   const values: Record<string, unknown> = Object.create(null);
-  const underAnyName = node.properties ? undefined : Object.values(node.patternProperties ?? {})[0];
   for (const [key, value] of Object.entries(raw)) {
-    const child = node.properties && Object.hasOwn(node.properties, key) ? node.properties[key] : underAnyName;
+    const child = key.startsWith('x-') ? undefined : childOf(node, key);
     const read = child && readNode(reader, child, value, [...path, key]);
     if (read !== undefined) values[key] = read;
   }
-  return values;
+  const isWhole = path.length === 0 || (mappingOf(node)?.required ?? []).every((key) => Object.hasOwn(values, key));
+  return isWhole ? values : undefined;
 }
 
-function readScalar(reader: Reader, node: NodeSchema, raw: unknown, path: ValuePath) {
-  if (reader.bad.has(JSON.stringify(path))) return undefined;
-  if (typeof raw !== 'string' && typeof raw !== 'number') return undefined;
-  return noted(reader, path, readQuantity(raw, node['x-quantity']!, reader.options), 'quantity');
+function readOne(reader: Reader, spec: QuantitySpec, raw: unknown, path: ValuePath) {
+  if (isBad(reader, path) || (typeof raw !== 'string' && typeof raw !== 'number')) return undefined;
+  return noted(reader, path, readQuantity(raw, spec, reader.options), 'quantity');
 }
 
 function noted<Key extends string, T>(

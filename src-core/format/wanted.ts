@@ -1,111 +1,148 @@
-import type { NodeSchema, SchemaName } from '../../schemas/format/types';
+import type { NodeSchema, QuantitySpec, SchemaName } from '../../schemas/format/types';
 import { nearest } from '../quantity/nearest';
 import { quantityExample, readQuantity } from '../quantity/read';
 import { wantedAny } from '../quantity/units';
 import type { ValuePath } from '../text/types';
-import { freeName } from './entry-kind';
-import type { FormatFix } from './problem';
-import { kindOfValue, listed, quote } from './say';
+import { freeName } from './free-name';
+import { choicesOf, mappingOf } from './node-at';
+import type { FormatFix, FormatProblem } from './problem';
+import { kindOfValue, listed, nounOf, quote } from './say';
 
-/** What is wanted at a key whose value is of the wrong kind, in words, with the fixes that can be named. */
-export function wantedValue(
-  path: ValuePath,
-  node: NodeSchema,
-  actual: unknown,
-  name: SchemaName,
-): { message: string; fixes: FormatFix[] } {
-  const key = path.at(-1);
-  const subject = typeof key === 'string' ? `\`${key}\`` : key === undefined ? `A ${name}` : 'Each entry of this list';
-  const set = (text: string, preferred = false): FormatFix => ({
-    title: `Change to \`${text}\``,
-    edits: [{ op: 'value', path, text }],
-    ...(preferred && { preferred }),
-  });
-  if (node['x-declares'] && (actual === null || actual === undefined)) {
-    const own = freeName(String(key));
-    return {
-      message: `This ${key} has no name yet: write its own name, as \`${key}: ${own}\`.`,
-      fixes: [{ title: `Name it \`${own}\``, edits: [{ op: 'value', path, text: own }] }],
-    };
-  }
-  const spec = node['x-quantity'];
-  if (actual === null || actual === undefined) {
-    const example = spec ? quantityExample(spec, node.examples) : exampleOf(node);
-    return { message: `${subject} has no value yet${example ? `; for example \`${example}\`` : ''}.`, fixes: [] };
-  }
-  if (spec && typeof actual === 'number') {
-    const { problem } = readQuantity(actual, spec);
-    if (problem)
-      return {
-        message: problem.message,
-        fixes: (problem.fixes ?? []).map(({ title, text }) => ({ title, edits: [{ op: 'value', path, text }] })),
-      };
-  }
-  if (spec)
-    return {
-      message: `${subject} takes ${wantedAny(spec.dimensions)}${spec.list ? ' or a list of them' : ''}, as \`${quantityExample(spec, node.examples)}\`; this is ${kindOfValue(actual)}.`,
-      fixes: [],
-    };
-  const choices = choicesOf(node);
-  if (choices.length > 0) {
-    const meant = typeof actual === 'string' ? nearest(actual, choices) : undefined;
-    const mapping = node.anyOf?.some((branch) => branch.properties) ? ', or a mapping' : '';
-    const fixes = meant ? [set(meant, true)] : choices.slice(0, 5).map((choice) => set(choice));
-    return {
-      message: `${subject} is ${listed(
-        choices.map((choice) => `\`${choice}\``),
-        'or',
-      )}${mapping}; ${kindOfValue(actual)} is not one of them.`,
-      fixes,
-    };
-  }
+/** A value of the wrong kind: what is wanted there, in words, and the fixes that can be named. */
+export function wrongType(path: ValuePath, node: NodeSchema, actual: unknown, name: SchemaName): FormatProblem {
+  const wrong: Wrong = { path, node, actual, subject: subjectOf(path, name) };
+  const isEmpty = actual === null || actual === undefined;
+  const { message, fixes } = isEmpty ? empty(wrong) : wanted(wrong);
   return {
-    message: `${subject} is ${typeInWords(node)}; this is ${kindOfValue(actual)}.`,
-    fixes: typeof actual === 'number' && node.type === 'string' ? [set(`"${actual}"`)] : wrapped(path, node, actual),
+    rule: node['x-quantity'] && !isEmpty ? 'quantity' : 'schema',
+    path,
+    on: isEmpty && path.length > 0 ? 'entry' : 'value',
+    message,
+    fixes,
   };
 }
 
-/** One value where a list is wanted. */
-function wrapped(path: ValuePath, node: NodeSchema, actual: unknown): FormatFix[] {
-  if (node.type !== 'array' || typeof actual === 'object') return [];
-  return [{ title: `Write \`[${actual}]\``, edits: [{ op: 'value', path, text: `[${actual}]` }] }];
+interface Wrong {
+  readonly path: ValuePath;
+  readonly node: NodeSchema;
+  readonly actual: unknown;
+  /** How the message begins: `` `length` `` */
+  readonly subject: string;
+}
+type Said = Pick<FormatProblem, 'message' | 'fixes'>;
+
+function subjectOf(path: ValuePath, name: SchemaName): string {
+  const last = path.at(-1);
+  if (last === undefined) return nounOf(name).replace(/^a/, 'A');
+  return typeof last === 'string' ? quote(last) : `Entry ${last + 1} of ${quote(String(path.at(-2) ?? name))}`;
 }
 
-function choicesOf(node: NodeSchema): string[] {
-  if (node.enum) return node.enum.map(String);
-  if (node.type === 'boolean') return ['true', 'false'];
-  return (node.anyOf ?? [node]).filter((branch) => branch.const !== undefined).map((branch) => String(branch.const));
+const write = (path: ValuePath, text: string, more: Partial<FormatFix> = {}): FormatFix => ({
+  title: `Write ${quote(text)}`,
+  edits: [{ op: 'value', path, text }],
+  ...more,
+});
+
+/** A key whose value is still to be typed. */
+function empty({ path, node, subject }: Wrong): Said {
+  if (node['x-declares']) {
+    const key = String(path.at(-1));
+    const name = freeName(key);
+    return {
+      message: `This ${key} has no name yet: write \`${key}: ${name}\` or a better one.`,
+      fixes: [write(path, name)],
+    };
+  }
+  const example = node['x-quantity']
+    ? quantityExample(node['x-quantity'], node.examples)
+    : (node.examples?.[0] ?? choicesOf(node)[0]);
+  return {
+    message: `${subject} has no value yet${example === undefined ? '' : `; for example \`${example}\``}.`,
+    fixes: [],
+  };
 }
 
-function exampleOf(node: NodeSchema): string | undefined {
-  const example = node.examples?.[0] ?? choicesOf(node)[0];
-  return example === undefined ? undefined : Array.isArray(example) ? `[${example.join(', ')}]` : String(example);
+function wanted(wrong: Wrong): Said {
+  const { node, actual } = wrong;
+  const spec = node['x-quantity'];
+  if (spec) return typeof actual === 'number' ? numberForQuantity(wrong, actual, spec) : notAQuantity(wrong, spec);
+  const choices = choicesOf(node);
+  return choices.length > 0 ? notAmong(wrong, choices) : otherType(wrong);
+}
+
+function numberForQuantity(wrong: Wrong, actual: number, spec: QuantitySpec): Said {
+  const { problem } = readQuantity(actual, spec);
+  if (!problem) return notAQuantity(wrong, spec);
+  const fixes = (problem.fixes ?? []).map(
+    ({ title, text }): FormatFix => ({ title, edits: [{ op: 'value', path: wrong.path, text }] }),
+  );
+  return { message: problem.message, fixes };
+}
+
+function notAQuantity({ subject, node, actual }: Wrong, spec: QuantitySpec): Said {
+  const or = spec.list ? ' or a list of them' : mappingOf(node) ? ` or ${mappingInWords(node)}` : '';
+  const example = quantityExample(spec, node.examples);
+  return {
+    message: `${subject} is ${wantedAny(spec.dimensions)}${or}, as \`${example}\`; this is ${kindOfValue(actual)}.`,
+    fixes: [],
+  };
+}
+
+function notAmong({ subject, path, node, actual }: Wrong, choices: readonly string[]): Said {
+  const meant = typeof actual === 'string' ? nearest(actual, choices) : undefined;
+  const fixes = meant
+    ? [write(path, meant, { preferred: true })]
+    : choices.slice(0, 5).map((choice) => write(path, choice));
+  const names = choices.map((choice) => `\`${choice}\``);
+  const all = mappingOf(node) ? [...names, mappingInWords(node)] : names;
+  const guess = meant ? `; did you mean \`${meant}\`?` : `; this is ${kindOfValue(actual)}.`;
+  return { message: `${subject} is ${listed(all, 'or')}${guess}`, fixes };
+}
+
+function otherType({ subject, path, node, actual }: Wrong): Said {
+  const message = `${subject} is ${typeInWords(node)}; this is ${kindOfValue(actual)}.`;
+  if (typeof actual === 'object') return { message, fixes: [] };
+  if (node.type === 'string' && typeof actual !== 'string') return { message, fixes: [write(path, `"${actual}"`)] };
+  if (node.type === 'array') return { message, fixes: [write(path, `[${actual}]`)] };
+  return { message, fixes: underOneOfItsKeys(path, node, String(actual)) };
+}
+
+/** A bare value where a mapping says what it is: `roughness: 0.6 um`. */
+function underOneOfItsKeys(path: ValuePath, node: NodeSchema, actual: string): FormatFix[] {
+  return Object.entries(mappingOf(node)?.properties ?? {})
+    .filter(([, child]) => child['x-quantity'] && readQuantity(actual, child['x-quantity']).quantity)
+    .map(([key]) => write(path, `{ ${key}: ${actual} }`));
 }
 
 function typeInWords(node: NodeSchema): string {
-  if (node.type === 'array') return `a list of ${counted(node)}${plural(node.items)}`;
+  if (node.type === 'array') return `a list${counted(node)}${itemsInWords(node.items)}`;
   if (node.type === 'integer') return `a whole number${bounds(node)}`;
   if (node.type === 'number') return `a number${bounds(node)}`;
   if (node.type === 'string') return 'text';
-  const keys = Object.keys(node.properties ?? {});
-  return keys.length > 0 && keys.length < 8 ? `a mapping with ${listed(keys.map((key) => quote(key)))}` : 'a mapping';
+  return mappingInWords(node);
 }
 
-const bounds = ({ minimum, maximum }: NodeSchema) =>
-  minimum !== undefined && maximum !== undefined
-    ? ` from ${minimum} to ${maximum}`
-    : minimum !== undefined
-      ? ` of at least ${minimum}`
-      : '';
+function mappingInWords(node: NodeSchema): string {
+  const keys = Object.keys(mappingOf(node)?.properties ?? {});
+  return keys.length > 0 && keys.length < 8
+    ? `a mapping with ${listed(
+        keys.map((key) => `\`${key}\``),
+        'or',
+      )}`
+    : 'a mapping';
+}
 
-const counted = ({ minItems, maxItems }: NodeSchema) =>
-  maxItems === undefined
-    ? ''
-    : minItems === maxItems
-      ? `${maxItems} `
-      : minItems
-        ? `${minItems} to ${maxItems} `
-        : `at most ${maxItems} `;
+function bounds({ minimum, maximum }: NodeSchema): string {
+  if (minimum === undefined) return '';
+  return maximum === undefined ? ` of at least ${minimum}` : ` from ${minimum} to ${maximum}`;
+}
 
-const plural = (items: NodeSchema | undefined) =>
-  items?.type === 'integer' || items?.type === 'number' ? 'numbers' : items?.['x-refers'] ? 'names' : 'entries';
+function counted({ minItems, maxItems }: NodeSchema): string {
+  if (maxItems === undefined) return minItems ? ` of at least ${minItems}` : ' of';
+  return minItems === maxItems ? ` of ${maxItems}` : ` of ${minItems ?? 0} to ${maxItems}`;
+}
+
+function itemsInWords(items: NodeSchema | undefined): string {
+  if (items?.type === 'integer' || items?.type === 'number') return ' numbers';
+  return items?.['x-refers'] ? ' names' : ' entries';
+}

@@ -48,3 +48,22 @@ export function quoted(text: string): string {
   const cut = text.length > LONGEST ? `${text.slice(0, LONGEST - 1)}…` : text;
   return `\`${[...cut].map((letter) => (unshown(letter) ? ' ' : letter)).join('')}\``;
 }
+
+/** What a reader of a part gives: the part, or what is wrong with the whole. */
+export type Outcome<T> = { readonly ok: T } | { readonly problem: QuantityProblem };
+
+export const problem = (
+  code: QuantityCode,
+  message: string,
+  start: number,
+  end: number,
+  fixes: readonly QuantityFix[] = [],
+): { problem: QuantityProblem } => ({
+  problem: { code, message, range: { start, end }, ...(fixes.length > 0 && { fixes }) },
+});
+
+/** The text with one piece exchanged. */
+export const replaced = (text: string, start: number, end: number, by: string) =>
+  `${text.slice(0, start)}${by}${text.slice(end)}`;
+
+export const capital = (text: string) => `${text.charAt(0).toUpperCase()}${text.slice(1)}`;

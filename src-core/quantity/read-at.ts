@@ -1,9 +1,9 @@
 import type { QuantitySpec } from '../../schemas/format/types';
-import type { QuantityFix } from './problem';
-import { quoted } from './problem';
-import { fittingUnits, type Outcome, problem, type QuantityContext, replaced, unknownUnit } from './read';
-import { type Cursor, scanNumber, scanUnit, skipSpace, take } from './scan';
+import { type Outcome, problem, type QuantityFix, quoted, replaced } from './problem';
+import type { QuantityContext } from './read';
+import { type Cursor, isAtEnd, scanNumber, scanUnit, skipSpace, take } from './scan';
 import { exactly } from './show';
+import { fittingUnits, unknownUnit, withUnit } from './unit-problems';
 import { inSi, unitNamed, wanted } from './units';
 
 /** Between these a frequency may lie. */
@@ -14,14 +14,14 @@ export function readAt(
   cursor: Cursor,
   spec: QuantitySpec,
   context: QuantityContext,
-  behindUnit: number,
+  quantityStart: number,
 ): Outcome<number | 'nyquist' | undefined> {
   const { text } = cursor;
   const allowed = spec.at ?? 'never';
   skipSpace(cursor);
   const start = cursor.at;
   if (!take(cursor, '@'))
-    return allowed === 'required' && isEnd(text, start) ? missing(cursor, context, behindUnit) : { ok: undefined };
+    return allowed === 'required' && isAtEnd(cursor) ? missing(cursor, context, quantityStart) : { ok: undefined };
   const read = readFrequency(cursor, spec, context, start);
   if ('problem' in read || allowed !== 'never') return read;
   const fixed = `${text.slice(0, start).trimEnd()}${text.slice(cursor.at)}`;
@@ -34,9 +34,7 @@ export function readAt(
   );
 }
 
-const isEnd = (text: string, at: number) => at >= text.length;
-
-function missing({ text }: Cursor, { nyquistHz }: QuantityContext, behindUnit: number) {
+function missing({ text }: Cursor, { nyquistHz }: QuantityContext, quantityStart: number) {
   const example = nyquistHz === undefined ? '12.9 GHz' : exactly(nyquistHz, 'frequency');
   const written = text.trim();
   const fixes: QuantityFix[] =
@@ -44,8 +42,8 @@ function missing({ text }: Cursor, { nyquistHz }: QuantityContext, behindUnit: n
   return problem(
     'at-missing',
     `The frequency is missing at which this holds: ${quoted(`${written} @ ${example}`)}.`,
-    0,
-    Math.max(behindUnit, text.trimEnd().length),
+    quantityStart,
+    text.trimEnd().length,
     fixes,
   );
 }
@@ -75,10 +73,7 @@ function readFrequency(
   if (token.text === '') {
     const units = fittingUnits(number.text, { dimensions: ['frequency'], plausible: [1e6, 2e11] });
     const written = text.slice(number.start, number.end);
-    const fixes = units.map((unit) => ({
-      title: `Write \`@ ${written} ${unit.text}\``,
-      text: replaced(text, number.end, number.end, ` ${unit.text}`),
-    }));
+    const fixes = units.map((unit) => withUnit(text, number, unit));
     return problem(
       'bare-number',
       `The frequency behind \`@\` needs a unit, as \`@ ${written.slice(0, 20)} ${units[0]?.text ?? 'GHz'}\`.`,

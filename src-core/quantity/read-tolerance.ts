@@ -1,7 +1,7 @@
 import type { Dimension, QuantitySpec } from '../../schemas/format/types';
-import { quoted } from './problem';
-import { type Outcome, problem, replaced, unknownUnit } from './read';
+import { type Outcome, problem, quoted, replaced } from './problem';
 import { type Cursor, type NumberToken, scanNumber, scanUnit, skipSpace, take, type UnitToken } from './scan';
+import { unknownUnit } from './unit-problems';
 import { inSi, type Unit, unitNamed, wanted } from './units';
 
 export interface Tolerance {
@@ -15,7 +15,6 @@ interface Nominal {
   readonly value: number;
   readonly unit: Unit | undefined;
   readonly dimension: Dimension;
-  readonly from: number;
 }
 
 const NONE: Tolerance = { plus: 0, minus: 0, threeSigma: false };

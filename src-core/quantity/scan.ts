@@ -19,7 +19,7 @@ export interface UnitToken {
   readonly text: string;
 }
 
-const isDigit = (letter: string | undefined) => letter !== undefined && letter >= '0' && letter <= '9';
+export const isDigit = (letter: string | undefined) => letter !== undefined && letter >= '0' && letter <= '9';
 const isSpace = (letter: string | undefined) =>
   letter === ' ' ||
   letter === '\t' ||
@@ -104,12 +104,4 @@ function endsUnit(text: string, at: number): boolean {
   if (letter !== '/') return false;
   const next = text[at + 1];
   return next === undefined || next === '-' || next === '+' || next === MINUS || isSpace(next);
-}
-
-/** A comma between two digits: where decimals are written with a comma. */
-export function decimalComma(text: string): number {
-  for (let at = text.indexOf(','); at >= 0; at = text.indexOf(',', at + 1)) {
-    if (isDigit(text[at - 1]) && isDigit(text[at + 1])) return at;
-  }
-  return -1;
 }

@@ -151,3 +151,6 @@ export const length = quantity('length', {
   valid: [0, 1e6],
   plausible: [1e-6, 10],
 });
+
+/** Options of an element with length. */
+export const segment = { not: { properties: { delay: {}, velocity: {} }, required: ['delay', 'velocity'] } };

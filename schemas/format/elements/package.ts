@@ -1,6 +1,6 @@
 import { Type } from '@sinclair/typebox';
 import { declares, mapping } from '../quantity';
-import { common, length, line } from './common';
+import { common, length, line, segment } from './common';
 
 export const packageElement = mapping(
   'package',
@@ -11,4 +11,5 @@ export const packageElement = mapping(
     ...line,
     ...common,
   },
+  segment,
 );

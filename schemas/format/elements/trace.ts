@@ -1,6 +1,6 @@
 import { Type } from '@sinclair/typebox';
 import { declares, mapping, quantity, refers } from '../quantity';
-import { common, length, line } from './common';
+import { common, length, line, segment } from './common';
 
 export const traceElement = mapping(
   'trace',
@@ -29,4 +29,5 @@ export const traceElement = mapping(
     ...line,
     ...common,
   },
+  segment,
 );
