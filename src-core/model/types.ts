@@ -1,9 +1,15 @@
-import type { DrillRulesValues, ReceiverValues, TransmitterValues } from '../../schemas/format/types';
-import type { ElementKindName, ElementValues } from '../../schemas/format/types';
-import type { LimitKindName, LimitValues } from '../../schemas/format/types';
-import type { Quantity } from '../../schemas/format/types';
-import type { FilePath, Place } from '../text/types';
+import type {
+  DrillRulesValues,
+  ElementKindName,
+  ElementValues,
+  LimitKindName,
+  LimitValues,
+  Quantity,
+  ReceiverValues,
+  TransmitterValues,
+} from '../../schemas/format/types';
 import type { Report } from '../rules/types';
+import type { FilePath, Place } from '../text/types';
 
 export interface Point {
   readonly value: number;
@@ -31,9 +37,28 @@ export interface Foil {
 }
 
 export type StackupLayer =
-  | { readonly type: 'copper'; readonly name: string; readonly thicknessMeters: number; readonly plane: boolean; readonly foil: Foil; readonly place: Place }
-  | { readonly type: 'dielectric'; readonly name: string; readonly thicknessMeters: number; readonly material: Material; readonly place: Place }
-  | { readonly type: 'mask'; readonly name: 'top' | 'bottom'; readonly thicknessMeters: number; readonly material: Material; readonly place: Place };
+  | {
+      readonly type: 'copper';
+      readonly name: string;
+      readonly thicknessMeters: number;
+      readonly plane: boolean;
+      readonly foil: Foil;
+      readonly place: Place;
+    }
+  | {
+      readonly type: 'dielectric';
+      readonly name: string;
+      readonly thicknessMeters: number;
+      readonly material: Material;
+      readonly place: Place;
+    }
+  | {
+      readonly type: 'mask';
+      readonly name: 'top' | 'bottom';
+      readonly thicknessMeters: number;
+      readonly material: Material;
+      readonly place: Place;
+    };
 
 /** Top to bottom. */
 export interface Stackup {
@@ -128,7 +153,10 @@ export interface Receiver {
   readonly capacitanceFarads: number;
   readonly bandwidthHz: number;
   readonly noiseVolts: number;
-  readonly ctle: 'none' | 'auto' | { readonly dcGainDb: number; readonly zeroHz: number; readonly polesHz: readonly number[] };
+  readonly ctle:
+    | 'none'
+    | 'auto'
+    | { readonly dcGainDb: number; readonly zeroHz: number; readonly polesHz: readonly number[] };
   readonly dfe: { readonly taps: number; readonly limit: number };
 }
 

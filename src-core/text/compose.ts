@@ -65,7 +65,8 @@ function convert(piece: string, shift: number, node: LibraryNode, fallback: numb
   if (isSeq(node)) {
     const dashes = node.flow ? [] : dashOffsets(node.srcToken);
     const items = node.items.map((item, i): ItemNode => {
-      const start = (isPair(item) ? (item.key as LibraryNode)?.range?.[0] : (item as LibraryNode)?.range?.[0]) ?? node.range[0];
+      const start =
+        (isPair(item) ? (item.key as LibraryNode)?.range?.[0] : (item as LibraryNode)?.range?.[0]) ?? node.range[0];
       const value = isPair(item)
         ? pairAsMap(convertPair(piece, shift, item as never))
         : convert(piece, shift, item as LibraryNode, start);

@@ -64,9 +64,18 @@ export function tooDeepReport({ file, path }: PieceContext, offset: number): Tex
 }
 
 /** One report for a piece that does not parse: the first cause, where it begins. */
-export function explain(context: PieceContext, piece: string, shift: number, errors: readonly ComposeError[]): TextReport {
+export function explain(
+  context: PieceContext,
+  piece: string,
+  shift: number,
+  errors: readonly ComposeError[],
+): TextReport {
   const { file, text, path } = context;
-  const report = (range: TextRange, message: string, fix?: { title: string; range: TextRange; text: string }): TextReport => ({
+  const report = (
+    range: TextRange,
+    message: string,
+    fix?: { title: string; range: TextRange; text: string },
+  ): TextReport => ({
     rule: 'yaml',
     at: { file, path },
     range,
@@ -90,12 +99,20 @@ export function explain(context: PieceContext, piece: string, shift: number, err
     return report(
       { start: first.offset, end: first.offset + 1 },
       `\`${first.opens}\` opens here and is not closed by \`${first.opens === '{' ? '}' : ']'}\`.`,
-      { title: `Close it: add \`${closers.join(' ')}\``, range: { start: end, end }, text: `${closers[0] === '}' ? ' ' : ''}${closers.join(' ')}` },
+      {
+        title: `Close it: add \`${closers.join(' ')}\``,
+        range: { start: end, end },
+        text: `${closers[0] === '}' ? ' ' : ''}${closers.join(' ')}`,
+      },
     );
   }
   if (stray) {
     const range = { start: stray.offset, end: stray.offset + 1 };
-    return report(range, `\`${stray.closes}\` closes nothing: no bracket is open here.`, { title: `Remove \`${stray.closes}\``, range, text: '' });
+    return report(range, `\`${stray.closes}\` closes nothing: no bracket is open here.`, {
+      title: `Remove \`${stray.closes}\``,
+      range,
+      text: '',
+    });
   }
   const [error] = errors;
   const start = Math.max(shift, Math.min(error.start, pieceEnd));

@@ -1,3 +1,3 @@
-export type { ParsedFile } from './parsed';
 export { parseFile } from './parse';
+export type { ParsedFile } from './parsed';
 export { rangeOf } from './range';

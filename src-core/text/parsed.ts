@@ -1,5 +1,5 @@
-import type { FileKind, FilePath } from './types';
 import type { Report } from '../rules/types';
+import type { FileKind, FilePath } from './types';
 
 /** A YAML file as read: plain values (null-prototype objects) beside what is needed to look up ranges. */
 export interface ParsedFile {

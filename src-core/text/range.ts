@@ -1,5 +1,5 @@
 import type { ParsedFile } from './parsed';
-import { lineEnd, type ItemNode, type PairNode, type Syntax, type SyntaxNode } from './syntax';
+import { type ItemNode, lineEnd, type PairNode, type Syntax, type SyntaxNode } from './syntax';
 import type { Place, TextRange, ValuePath } from './types';
 import { mergeSources } from './values';
 
@@ -82,10 +82,15 @@ function headRange({ node, pair, item }: Found, text: string): TextRange {
     return firstLine({ start: first.range.start, end: Math.max(first.keyRange.end, end) }, text);
   }
   const range = item?.range ?? node.range;
-  return range.end > range.start ? firstLine(range, text) : { start: range.start, end: Math.min(text.length, range.start + 1) };
+  return range.end > range.start
+    ? firstLine(range, text)
+    : { start: range.start, end: Math.min(text.length, range.start + 1) };
 }
 
-const firstLine = ({ start, end }: TextRange, text: string): TextRange => ({ start, end: Math.max(start, Math.min(end, lineEnd(text, start))) });
+const firstLine = ({ start, end }: TextRange, text: string): TextRange => ({
+  start,
+  end: Math.max(start, Math.min(end, lineEnd(text, start))),
+});
 
 function trimmed({ start, end }: TextRange, text: string): TextRange {
   let last = end;

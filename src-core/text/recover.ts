@@ -107,7 +107,8 @@ const contextOf = ({ file, text }: Recovery, path: ValuePath): PieceContext => (
 function leaf(recovery: Recovery, it: Block): Composed {
   if (recovery.reports.length >= MAX_REPORTS) return { node: emptyScalar(it.from), errors: [] };
   const composed = composeBlock(recovery, it);
-  if (composed.tooDeep !== undefined) add(recovery, it.path, tooDeepReport(contextOf(recovery, it.path), composed.tooDeep));
+  if (composed.tooDeep !== undefined)
+    add(recovery, it.path, tooDeepReport(contextOf(recovery, it.path), composed.tooDeep));
   else if (composed.errors.length > 0) {
     const report = explain(contextOf(recovery, it.path), pieceOf(recovery, it), it.from - it.column, composed.errors);
     if (recovery.reports.length < MAX_REPORTS) recovery.reports.push(report);
@@ -116,7 +117,11 @@ function leaf(recovery: Recovery, it: Block): Composed {
 }
 
 /** First line of content from `line` on, as the beginning of a block. */
-function nested({ lines }: Recovery, line: number, end: number): Pick<Block, 'from' | 'column' | 'first' | 'end'> | undefined {
+function nested(
+  { lines }: Recovery,
+  line: number,
+  end: number,
+): Pick<Block, 'from' | 'column' | 'first' | 'end'> | undefined {
   let first = line;
   while (first < end && !lines[first].content) first++;
   if (first >= end) return undefined;
@@ -153,7 +158,14 @@ function list(recovery: Recovery, it: Block): SyntaxNode {
 }
 
 /** The value of a key or dash whose own line holds nothing more. */
-function below(recovery: Recovery, line: number, end: number, path: ValuePath, depth: number, empty: number): SyntaxNode {
+function below(
+  recovery: Recovery,
+  line: number,
+  end: number,
+  path: ValuePath,
+  depth: number,
+  empty: number,
+): SyntaxNode {
   const lines = nested(recovery, line + 1, end);
   return lines ? block(recovery, { ...lines, path, depth: depth + 1 }) : emptyScalar(empty);
 }
@@ -174,7 +186,8 @@ function map(recovery: Recovery, it: Block): SyntaxNode {
   return { type: 'map', flow: false, column: it.column, pairs, range: { start: it.from, end } };
 }
 
-const keyAt = (text: string, from: number, end: number) => splitKey(text, from, end)?.key ?? text.slice(from, contentEnd(text, from, end));
+const keyAt = (text: string, from: number, end: number) =>
+  splitKey(text, from, end)?.key ?? text.slice(from, contentEnd(text, from, end));
 
 /** Lines at which the pairs of a mapping begin, as far as its indentation, right or wrong, tells. */
 function mapStarts({ text, lines }: Recovery, it: Block): number[] {
@@ -189,7 +202,13 @@ function mapStarts({ text, lines }: Recovery, it: Block): number[] {
     if (indent <= it.column && !closing && !dash && !belongsBelow(lines, text, i, it, blockIndent)) {
       starts.push(i);
       blockIndent = Infinity;
-    } else if (indent > it.column && indent < blockIndent && blockIndent !== Infinity && !dash && isKeyOnly(text, from, end)) {
+    } else if (
+      indent > it.column &&
+      indent < blockIndent &&
+      blockIndent !== Infinity &&
+      !dash &&
+      isKeyOnly(text, from, end)
+    ) {
       starts.push(i); // a key that slipped to the right of its neighbours, left of the block before it
       blockIndent = Infinity;
     } else if (blockIndent === Infinity) blockIndent = indent;
@@ -265,7 +284,9 @@ const pair = (split: KeySplit, value: SyntaxNode): PairNode => ({
 });
 
 const rawScalar = (text: string, start: number, end: number): SyntaxNode =>
-  start >= end ? emptyScalar(start) : { type: 'scalar', style: 'plain', value: text.slice(start, end), range: { start, end } };
+  start >= end
+    ? emptyScalar(start)
+    : { type: 'scalar', style: 'plain', value: text.slice(start, end), range: { start, end } };
 
 /** A plain value on one line that no rule of YAML could read otherwise: spares the library. */
 function quickScalar(text: string, from: number, lineEnd: number): SyntaxNode | undefined {
@@ -273,8 +294,12 @@ function quickScalar(text: string, from: number, lineEnd: number): SyntaxNode | 
   for (let at = from; at < end; at++) {
     const code = text.charCodeAt(at);
     const plain =
-      (code >= 48 && code <= 57) || (code >= 65 && code <= 90) || (code >= 97 && code <= 122) || code > 127 ||
-      (at > from && (code === 32 || code === 46 || code === 45 || code === 43 || code === 47 || code === 95 || code === 64));
+      (code >= 48 && code <= 57) ||
+      (code >= 65 && code <= 90) ||
+      (code >= 97 && code <= 122) ||
+      code > 127 ||
+      (at > from &&
+        (code === 32 || code === 46 || code === 45 || code === 43 || code === 47 || code === 95 || code === 64));
     if (!plain) return undefined;
   }
   if (end <= from) return undefined;

@@ -34,6 +34,7 @@ function withLines(text: string, { start, end }: TextRange): TextRange {
   const next = text.indexOf('\n', last);
   if (next !== -1) return { start: begin, end: next + 1 };
   // The last line has no ending of its own: the one before it goes.
-  if (begin > 0 && text[begin - 1] === '\n') return { start: text[begin - 2] === '\r' ? begin - 2 : begin - 1, end: text.length };
+  if (begin > 0 && text[begin - 1] === '\n')
+    return { start: text[begin - 2] === '\r' ? begin - 2 : begin - 1, end: text.length };
   return { start: begin, end: text.length };
 }

@@ -6,7 +6,11 @@ import type { FilePath, ValuePath } from './types';
  * Valid YAML that says something else than was meant: a comma-decimal between braces (`{ width: 0,11 mm }`), and a colon
  * without its space between braces or in a list's entry. Each gives one report and the value that was meant.
  */
-export function mendTraps(root: SyntaxNode, text: string, file: FilePath): { root: SyntaxNode; reports: readonly TextReport[] } {
+export function mendTraps(
+  root: SyntaxNode,
+  text: string,
+  file: FilePath,
+): { root: SyntaxNode; reports: readonly TextReport[] } {
   const reports: TextReport[] = [];
   const mend = (node: SyntaxNode, path: ValuePath): SyntaxNode => {
     if (node.type === 'map') {
@@ -40,7 +44,13 @@ export function mendTraps(root: SyntaxNode, text: string, file: FilePath): { roo
 const isIntegerText = (text: string) => /^[-+±]?\d{1,12}$/.test(text);
 const isFraction = (text: string) => text.length < 80 && /^\d+(?:$|[^\d:].*$)/.test(text);
 
-function mendFlowPairs(node: MapNode, text: string, file: FilePath, path: ValuePath, reports: TextReport[]): readonly PairNode[] {
+function mendFlowPairs(
+  node: MapNode,
+  text: string,
+  file: FilePath,
+  path: ValuePath,
+  reports: TextReport[],
+): readonly PairNode[] {
   const result: PairNode[] = [];
   let changed = false;
   for (const pair of node.pairs) {
@@ -52,7 +62,10 @@ function mendFlowPairs(node: MapNode, text: string, file: FilePath, path: ValueP
       changed = true;
       continue;
     }
-    const spaced = pair.value.type === 'scalar' && pair.value.style === 'empty' ? withoutSpace(pair, text, file, path, reports) : undefined;
+    const spaced =
+      pair.value.type === 'scalar' && pair.value.style === 'empty'
+        ? withoutSpace(pair, text, file, path, reports)
+        : undefined;
     changed ||= spaced !== undefined;
     result.push(spaced ?? pair);
   }
@@ -61,7 +74,13 @@ function mendFlowPairs(node: MapNode, text: string, file: FilePath, path: ValueP
 
 function isCommaDecimal(before: PairNode, pair: PairNode, text: string): boolean {
   const { value } = before;
-  if (value.type !== 'scalar' || value.style !== 'plain' || pair.value.type !== 'scalar' || pair.value.style !== 'empty') return false;
+  if (
+    value.type !== 'scalar' ||
+    value.style !== 'plain' ||
+    pair.value.type !== 'scalar' ||
+    pair.value.style !== 'empty'
+  )
+    return false;
   if (pair.keyRange.start !== value.range.end + 1 || text[value.range.end] !== ',') return false;
   return isIntegerText(text.slice(value.range.start, value.range.end)) && isFraction(pair.key);
 }
@@ -80,12 +99,17 @@ function commaReport(file: FilePath, path: ValuePath, start: number, end: number
   const written = text.slice(start, end);
   const meant = written.replace(',', '.');
   return {
-    rule: 'comma-decimal',
+    rule: 'quantity',
     at: { file, path },
     range: { start, end },
     message: `\`${written}\` has a decimal comma, which ends the value in YAML; it is read as \`${meant}\`. Write a point.`,
     fixes: [
-      { title: `Write \`${meant}\``, edits: [{ op: 'range', file, range: { start, end }, text: meant }], preferred: true, safe: true },
+      {
+        title: `Write \`${meant}\``,
+        edits: [{ op: 'range', file, range: { start, end }, text: meant }],
+        preferred: true,
+        safe: true,
+      },
     ],
   };
 }
@@ -122,7 +146,13 @@ function mendFlowItems(
 }
 
 /** `{ width:0.11 mm }` */
-function withoutSpace(pair: PairNode, text: string, file: FilePath, path: ValuePath, reports: TextReport[]): PairNode | undefined {
+function withoutSpace(
+  pair: PairNode,
+  text: string,
+  file: FilePath,
+  path: ValuePath,
+  reports: TextReport[],
+): PairNode | undefined {
   const { start, end } = pair.keyRange;
   const colon = spacelessColon(text, start, end);
   if (colon === undefined) return undefined;
@@ -138,10 +168,22 @@ function withoutSpace(pair: PairNode, text: string, file: FilePath, path: ValueP
 }
 
 /** `- trace:breakout` */
-function headWithoutSpace(value: SyntaxNode, text: string, file: FilePath, path: ValuePath, reports: TextReport[]): MapNode | undefined {
+function headWithoutSpace(
+  value: SyntaxNode,
+  text: string,
+  file: FilePath,
+  path: ValuePath,
+  reports: TextReport[],
+): MapNode | undefined {
   if (value.type !== 'scalar' || value.style !== 'plain') return undefined;
   const { start, end } = value.range;
-  const pair = withoutSpace({ key: '', keyRange: { start, end }, value, range: value.range }, text, file, path, reports);
+  const pair = withoutSpace(
+    { key: '', keyRange: { start, end }, value, range: value.range },
+    text,
+    file,
+    path,
+    reports,
+  );
   return pair && { type: 'map', flow: false, column: 0, pairs: [pair], range: value.range };
 }
 
@@ -150,14 +192,26 @@ function spacelessColon(text: string, start: number, end: number): number | unde
   return match && start + match[0].length < end ? start + match[0].length - 1 : undefined;
 }
 
-function spaceReport(file: FilePath, path: ValuePath, start: number, colon: number, end: number, text: string): TextReport {
+function spaceReport(
+  file: FilePath,
+  path: ValuePath,
+  start: number,
+  colon: number,
+  end: number,
+  text: string,
+): TextReport {
   return {
     rule: 'yaml',
     at: { file, path },
     range: { start, end },
     message: `A space is missing after the colon of \`${text.slice(start, colon + 1)}\`; without it YAML reads both as one word.`,
     fixes: [
-      { title: 'Add the space', edits: [{ op: 'range', file, range: { start: colon + 1, end: colon + 1 }, text: ' ' }], preferred: true, safe: true },
+      {
+        title: 'Add the space',
+        edits: [{ op: 'range', file, range: { start: colon + 1, end: colon + 1 }, text: ' ' }],
+        preferred: true,
+        safe: true,
+      },
     ],
   };
 }

@@ -1,7 +1,7 @@
 import { MAX_ALIAS_NODES, MAX_REPORTS } from './limits';
+import { removalRange } from './removal';
 import type { TextReport } from './reports';
 import type { AliasNode, MapNode, PairNode, SyntaxNode } from './syntax';
-import { removalRange } from './removal';
 import type { FilePath, ValuePath } from './types';
 
 interface Building {
@@ -19,7 +19,11 @@ interface Building {
  * The plain value of a tree: null-prototype objects, so that `__proto__` is a key like any other; anchors and merge keys
  * resolved; of a key that is written twice the first counts. Sets `target` of the tree's aliases.
  */
-export function buildValue(root: SyntaxNode, file: FilePath, text: string): { value: unknown; reports: readonly TextReport[] } {
+export function buildValue(
+  root: SyntaxNode,
+  file: FilePath,
+  text: string,
+): { value: unknown; reports: readonly TextReport[] } {
   const building: Building = {
     file,
     text,
@@ -99,12 +103,13 @@ function copyOf(node: SyntaxNode): unknown {
 function resolveAlias(node: AliasNode, path: ValuePath, building: Building): SyntaxNode | undefined {
   const target = building.anchors.get(node.name);
   if (!target) {
-    if (building.reports.length < MAX_REPORTS) building.reports.push({
-      rule: 'yaml',
-      at: { file: building.file, path },
-      range: node.range,
-      message: `\`*${node.name}\` refers to nothing: no \`&${node.name}\` stands before it. Name the value with \`&${node.name}\`, or write it out.`,
-    });
+    if (building.reports.length < MAX_REPORTS)
+      building.reports.push({
+        rule: 'yaml',
+        at: { file: building.file, path },
+        range: node.range,
+        message: `\`*${node.name}\` refers to nothing: no \`&${node.name}\` stands before it. Name the value with \`&${node.name}\`, or write it out.`,
+      });
     return undefined;
   }
   building.aliasNodes += sizeOf(target, building);

@@ -1,0 +1,1 @@
+export { buildModel, MAX_ELEMENTS } from './build';
