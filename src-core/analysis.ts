@@ -23,6 +23,8 @@ export interface Inputs {
 export interface AnalyseOptions {
   /** `time`: all but the link and the eye's rules (the last link is kept and marked stale); `link`: everything. */
   readonly until: 'model' | 'time' | 'link';
+  /** While one types: the frequency grid of before is kept while it suffices. At rest it is left out, so that figures depend on the text alone. */
+  readonly keepGrid?: boolean;
   /** Says whether the time for one file is over; asked between kernels. */
   readonly outOfTime?: () => boolean;
 }
