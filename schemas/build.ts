@@ -1,13 +1,15 @@
 import { existsSync, mkdirSync, readFileSync, renameSync, writeFileSync } from 'node:fs';
 import { plain } from './build/plain';
 import { publishedSchemas } from './build/published';
+import { formatReference } from './build/reference';
 import { formatModule, formatTypes } from './build/runtime';
 import { validatorsModule, validatorsTypes } from './build/validators';
 import { checkOutput } from './outputs/check';
 
 /** Committed files, by name. */
-function committed(): Record<string, string> {
-  const files: Record<string, string> = {};
+function committed(folder: string): Record<string, string> {
+  const meanings = readFileSync(`${folder}format/meanings.md`, 'utf8');
+  const files: Record<string, string> = { 'README.md': formatReference(meanings) };
   for (const [name, schema] of Object.entries(publishedSchemas())) {
     files[`${name}.schema.json`] = `${JSON.stringify(schema, null, 2)}\n`;
   }
@@ -42,12 +44,14 @@ function replaceFile(path: string, text: string) {
  * @returns with `check` the names of the stale files; else none
  */
 export async function run(folder: string, { check }: { check: boolean }): Promise<string[]> {
-  const files = check ? committed() : { ...committed(), ...(await generated()) };
+  const files = check ? committed(folder) : { ...committed(folder), ...(await generated()) };
   const changed = Object.entries(files).filter(
     ([name, text]) => !existsSync(folder + name) || readFileSync(folder + name, 'utf8') !== text,
   );
   if (check) return changed.map(([name]) => name);
   mkdirSync(`${folder}generated`, { recursive: true });
-  for (const [name, text] of changed) replaceFile(folder + name, text);
+  const made = Object.keys(files).filter((name) => name.startsWith('generated/')); // always: their age says that they are fresh
+  for (const name of new Set([...changed.map(([changedName]) => changedName), ...made]))
+    replaceFile(folder + name, files[name]);
   return [];
 }

@@ -1,11 +1,16 @@
-import { existsSync } from 'node:fs';
+import { existsSync, readdirSync, statSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
 
-/** Unit tests read the compiled validators, which are not committed: they are made where they are missing. */
+const schemas = fileURLToPath(new URL('../schemas/', import.meta.url));
+const changedAt = (path: string) => (existsSync(path) ? statSync(path).mtimeMs : 0);
+
+/** Unit tests read the compiled validators, which are not committed: they are made where they are missing or older than the format. */
 export default async function setup() {
-  const generated = ['validators.js', 'format.js'].map(
-    (file) => new URL(`../schemas/generated/${file}`, import.meta.url),
+  const oldest = Math.min(...['validators.js', 'format.js'].map((file) => changedAt(`${schemas}generated/${file}`)));
+  const sources = ['format', 'build'].flatMap((folder) =>
+    readdirSync(schemas + folder, { recursive: true, encoding: 'utf8' }).map((file) => `${schemas}${folder}/${file}`),
   );
-  if (generated.every((file) => existsSync(file))) return;
+  if (oldest > 0 && sources.every((file) => changedAt(file) <= oldest)) return;
   // @ts-expect-error a plain script without types
   const { buildSchemas } = await import('../schemas/build.mjs');
   await buildSchemas();

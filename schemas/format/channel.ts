@@ -5,15 +5,28 @@ export { FORMAT_VERSION } from './version';
 
 const version = Type.Integer({ description: 'Format version.', examples: [1] });
 
-const ffe = mapping('ffe', 'Feed-forward equaliser of the transmitter; taps multiply the swing as written.', {
-  pre: Type.Optional(
-    Type.Array(Type.Number(), { description: 'Taps before the main one, nearest first.', maxItems: 8 }),
-  ),
-  main: Type.Optional(Type.Number({ description: 'The main tap.', 'x-default': '1' })),
-  post: Type.Optional(
-    Type.Array(Type.Number(), { description: 'Taps after the main one, nearest first.', maxItems: 16 }),
-  ),
-});
+const ffe = mapping(
+  'ffe',
+  'Feed-forward equaliser of the transmitter; taps multiply the swing as written.',
+  {
+    pre: Type.Optional(
+      Type.Array(Type.Number(), {
+        description: 'Taps before the main one, nearest first.',
+        examples: ['[-0.06]'],
+        maxItems: 8,
+      }),
+    ),
+    main: Type.Optional(Type.Number({ description: 'The main tap.', examples: [0.82], 'x-default': '1' })),
+    post: Type.Optional(
+      Type.Array(Type.Number(), {
+        description: 'Taps after the main one, nearest first.',
+        examples: ['[-0.12]'],
+        maxItems: 16,
+      }),
+    ),
+  },
+  { examples: ['{ pre: [-0.06], main: 0.82, post: [-0.12] }'] },
+);
 
 const ctle = mapping(
   'ctle',
@@ -45,19 +58,24 @@ const ctle = mapping(
   { required: ['dc-gain', 'zero', 'poles'] },
 );
 
-const dfe = mapping('dfe', 'Decision-feedback equaliser: taps are solved, each within the limit.', {
-  taps: Type.Integer({ description: 'Number of taps.', minimum: 0, maximum: 64 }),
-  limit: Type.Optional(
-    quantity('ratio', {
-      description: 'Most of each tap, a share of the main cursor.',
-      examples: ['0.4'],
-      tolerance: false,
-      valid: [0, 10],
-      plausible: [0, 1],
-      default: 'none',
-    }),
-  ),
-});
+const dfe = mapping(
+  'dfe',
+  'Decision-feedback equaliser: taps are solved, each within the limit.',
+  {
+    taps: Type.Integer({ description: 'Number of taps.', examples: [5], minimum: 0, maximum: 64 }),
+    limit: Type.Optional(
+      quantity('ratio', {
+        description: 'Most of each tap, a share of the main cursor.',
+        examples: ['0.4'],
+        tolerance: false,
+        valid: [0, 10],
+        plausible: [0, 1],
+        default: 'none',
+      }),
+    ),
+  },
+  { examples: ['{ taps: 5, limit: 0.4 }'] },
+);
 
 const termination = (end: string) => ({
   impedance: Type.Optional(
@@ -152,7 +170,7 @@ export const receiver = mapping('receiver', 'What the path ends in.', {
     Type.Unsafe<'auto' | Static<typeof ctle>>({
       anyOf: [{ const: 'auto', description: 'DC gain chosen for the largest eye.' }, ctle],
       description: ctle.description,
-      examples: ['auto'],
+      examples: ['auto', '{ dc-gain: -6 dB, zero: 6.45 GHz, poles: [6.45 GHz, 25.8 GHz] }'],
       'x-default': 'none',
     }),
   ),
@@ -161,7 +179,13 @@ export const receiver = mapping('receiver', 'What the path ends in.', {
 
 export const channelProperties = {
   lanewright: version,
-  title: Type.Optional(Type.String({ description: 'What this lane is.', 'x-default': 'the file’s name' })),
+  title: Type.Optional(
+    Type.String({
+      description: 'What this lane is.',
+      'x-default': 'the file’s name',
+      examples: ['Camera sled to controller, lane 0'],
+    }),
+  ),
   'line-rate': quantity('bitRate', {
     description: 'Line rate.',
     examples: ['25.78125 Gb/s'],
@@ -170,7 +194,11 @@ export const channelProperties = {
     plausible: [1e8, 2.5e11],
   }),
   modulation: Type.Optional(
-    Type.Union([Type.Literal('NRZ'), Type.Literal('PAM4')], { description: 'Levels a symbol.', 'x-default': 'NRZ' }),
+    Type.Union([Type.Literal('NRZ'), Type.Literal('PAM4')], {
+      description: 'Levels a symbol.',
+      examples: ['NRZ'],
+      'x-default': 'NRZ',
+    }),
   ),
   'target-ber': Type.Optional(
     quantity('ratio', {
@@ -188,7 +216,12 @@ export const channelProperties = {
         { const: 'scrambled' },
         { const: '8b10b' },
         mapping('coding', 'A coding with a known longest run.', {
-          'longest-run': Type.Integer({ minimum: 1, maximum: 100000, description: 'Longest run of equal bits.' }),
+          'longest-run': Type.Integer({
+            minimum: 1,
+            maximum: 100000,
+            description: 'Longest run of equal bits.',
+            examples: [66],
+          }),
         }),
       ],
       description: 'Line coding, for the longest run of equal bits.',
@@ -199,6 +232,7 @@ export const channelProperties = {
   signalling: Type.Optional(
     Type.Union([Type.Literal('differential'), Type.Literal('single-ended')], {
       description: 'A pair, or one conductor.',
+      examples: ['single-ended'],
       'x-default': 'differential',
     }),
   ),
@@ -213,18 +247,23 @@ export const channelProperties = {
     }),
   ),
   conditions: Type.Optional(
-    mapping('conditions', 'Conditions under which the figures hold.', {
-      temperature: Type.Optional(
-        quantity('temperature', {
-          description: 'Temperature of the copper.',
-          examples: ['60 degC'],
-          tolerance: false,
-          valid: [-273, 1000],
-          plausible: [-60, 160],
-          default: '20 degC',
-        }),
-      ),
-    }),
+    mapping(
+      'conditions',
+      'Conditions under which the figures hold.',
+      {
+        temperature: Type.Optional(
+          quantity('temperature', {
+            description: 'Temperature of the copper.',
+            examples: ['60 degC'],
+            tolerance: false,
+            valid: [-273, 1000],
+            plausible: [-60, 160],
+            default: '20 degC',
+          }),
+        ),
+      },
+      { examples: ['{ temperature: 60 degC }'] },
+    ),
   ),
   owners: Type.Optional(
     named(

@@ -3,6 +3,7 @@ import { band, declares, mapping, quantities, quantity, refers } from './quantit
 
 const between = Type.Optional(
   Type.Array(refers('element', 'An element.'), {
+    examples: ['[breakout, twinax]'],
     minItems: 2,
     maxItems: 2,
     description: 'From the input of the first to the output of the second element.',
@@ -36,6 +37,7 @@ export const limitSchemas = {
     at: Type.Optional(
       Type.Union([Type.Literal('transmitter'), Type.Literal('receiver')], {
         description: 'The end one looks in from.',
+        examples: ['receiver'],
         'x-default': 'both ends',
       }),
     ),
@@ -83,8 +85,8 @@ export const waiver = mapping(
   'waiver',
   'A finding accepted in writing.',
   {
-    rule: refers('rule', 'The rule whose finding is accepted.'),
-    at: Type.String({ description: 'The element or limit where it stands.' }),
+    rule: refers('rule', 'The rule whose finding is accepted.', { examples: ['return-loss'] }),
+    at: Type.String({ description: 'The element or limit where it stands.', examples: ['receiver-side'] }),
     'up-to': Type.Optional(
       Type.Unsafe<string>({
         type: ['string', 'number'],
@@ -97,8 +99,8 @@ export const waiver = mapping(
       pattern: '^[0-9]{4}-[0-9]{2}-[0-9]{2}$',
       examples: ['2027-03-31'],
     }),
-    by: Type.String({ description: 'Who accepted it.' }),
-    reason: Type.String({ description: 'Why.' }),
+    by: Type.String({ description: 'Who accepted it.', examples: ['connector team'] }),
+    reason: Type.String({ description: 'Why.', examples: ['replaced in revision C'] }),
   },
   { required: ['rule', 'at', 'until', 'by', 'reason'] },
 );

@@ -59,7 +59,7 @@ const huray = mapping(
       plausible: [0, 20],
     }),
   },
-  { required: ['radius', 'ratio'] },
+  { required: ['radius', 'ratio'], examples: ['{ radius: 0.5 um, ratio: 2.1 }'] },
 );
 
 export const roughness = mapping(
@@ -84,7 +84,7 @@ export const roughness = mapping(
     ),
     huray: Type.Optional(huray),
   },
-  { minProperties: 1, maxProperties: 1 },
+  { minProperties: 1, maxProperties: 1, examples: ['{ rms: 0.6 um }'] },
 );
 
 export const foil = mapping('foil', 'A copper foil.', {
@@ -115,8 +115,10 @@ export const stackupRowSchemas = {
     {
       copper: declares('layer', 'Its name.'),
       thickness,
-      foil: Type.Optional(refers('foil', 'Its foil.', { default: 'smooth copper' })),
-      plane: Type.Optional(Type.Boolean({ description: 'A plane that carries no signal.', 'x-default': 'false' })),
+      foil: Type.Optional(refers('foil', 'Its foil.', { examples: ['low-profile'], default: 'smooth copper' })),
+      plane: Type.Optional(
+        Type.Boolean({ description: 'A plane that carries no signal.', examples: ['true'], 'x-default': 'false' }),
+      ),
     },
     { required: ['copper', 'thickness'] },
   ),
@@ -125,7 +127,7 @@ export const stackupRowSchemas = {
     'A dielectric layer; two in a row are allowed.',
     {
       dielectric: declares('layer', 'Its name.'),
-      material: refers('material', 'Its material.'),
+      material: refers('material', 'Its material.', { examples: ['core-m6'] }),
       thickness,
     },
     { required: ['dielectric', 'material', 'thickness'] },
@@ -135,7 +137,7 @@ export const stackupRowSchemas = {
     'Solder mask over an outer layer.',
     {
       mask: Type.String({ description: 'Its side: `top` or `bottom`.', enum: ['top', 'bottom'] }),
-      material: refers('material', 'Its material.'),
+      material: refers('material', 'Its material.', { examples: ['mask'] }),
       thickness,
     },
     { required: ['mask', 'material', 'thickness'] },

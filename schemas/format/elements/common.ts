@@ -2,18 +2,25 @@ import { Type } from '@sinclair/typebox';
 import { mapping, quantities, quantity, refers } from '../quantity';
 
 /** Which file port stands where: transmitter side, receiver side; the positive leg first. One number each in a single-ended channel or where a two-port file is one leg. */
-export const ports = mapping('ports', 'Which ports of the file stand on which side; the positive leg first.', {
-  enter: Type.Array(Type.Integer({ minimum: 1 }), {
-    minItems: 1,
-    maxItems: 2,
-    description: 'Ports on the transmitter side.',
-  }),
-  leave: Type.Array(Type.Integer({ minimum: 1 }), {
-    minItems: 0,
-    maxItems: 2,
-    description: 'Ports on the receiver side; empty for a one-port.',
-  }),
-});
+export const ports = mapping(
+  'ports',
+  'Which ports of the file stand on which side; the positive leg first.',
+  {
+    enter: Type.Array(Type.Integer({ minimum: 1 }), {
+      minItems: 1,
+      maxItems: 2,
+      description: 'Ports on the transmitter side.',
+      examples: ['[1, 3]'],
+    }),
+    leave: Type.Array(Type.Integer({ minimum: 1 }), {
+      minItems: 0,
+      maxItems: 2,
+      description: 'Ports on the receiver side; empty for a one-port.',
+      examples: ['[2, 4]'],
+    }),
+  },
+  { examples: ['{ enter: [1, 3], leave: [2, 4] }'] },
+);
 
 /** Keys that an element of any kind takes. */
 export const common = {
@@ -21,6 +28,7 @@ export const common = {
     refers(
       'part',
       'A part of a parts file that gives the keys which are not written here; a key beside `part` overrides that key.',
+      { examples: ['ctrl.mezz-row-c'] },
     ),
   ),
   touchstone: Type.Optional(
@@ -33,21 +41,29 @@ export const common = {
     Type.Array(refers('element', 'A neighbour.'), {
       description:
         'Neighbours that the file already holds: they stay in the path, their network is a straight through.',
+      examples: ['[rise]'],
     }),
   ),
-  reversed: Type.Optional(Type.Boolean({ description: 'Placed the other way round.', 'x-default': 'false' })),
+  reversed: Type.Optional(
+    Type.Boolean({ description: 'Placed the other way round.', examples: ['true'], 'x-default': 'false' }),
+  ),
   active: Type.Optional(
-    Type.Boolean({ description: 'The file may give gain: lifts the demand to be passive.', 'x-default': 'false' }),
+    Type.Boolean({
+      description: 'The file may give gain: lifts the demand to be passive.',
+      examples: ['true'],
+      'x-default': 'false',
+    }),
   ),
   net: Type.Optional(
     Type.Array(Type.String(), {
       minItems: 1,
       maxItems: 2,
       description: 'Net names in the layout, the positive leg first.',
+      examples: ['[CAM0_P, CAM0_N]'],
     }),
   ),
-  refdes: Type.Optional(Type.String({ description: 'Reference designator on the board.' })),
-  note: Type.Optional(Type.String({ description: 'Free text, kept and shown.' })),
+  refdes: Type.Optional(Type.String({ description: 'Reference designator on the board.', examples: ['J3'] })),
+  note: Type.Optional(Type.String({ description: 'Free text, kept and shown.', examples: ['revision B moves it'] })),
   budget: Type.Optional(
     quantity('loss', {
       description: 'What this element may spend of its own insertion loss.',
@@ -56,7 +72,11 @@ export const common = {
       valid: [0, 200],
     }),
   ),
-  owner: Type.Optional(refers('owner', 'Who answers for it; `owners` may hold a budget for all that name this owner.')),
+  owner: Type.Optional(
+    refers('owner', 'Who answers for it; `owners` may hold a budget for all that name this owner.', {
+      examples: ['sled board'],
+    }),
+  ),
 };
 
 const positive = [1e-9, 1e9] as const;

@@ -16,15 +16,19 @@ export const viaElement = mapping(
   'A plated hole that joins two layers, or a pair of them. Its stub is derived from stackup, layers, span and backdrill.',
   {
     via: declares('element', 'Its own name.'),
-    stackup: Type.Optional(refers('stackup', 'The stackup it goes through.')),
-    from: Type.Optional(refers('layer', 'The layer on the transmitter side.', { default: 'the neighbouring trace’s' })),
-    to: Type.Optional(refers('layer', 'The layer on the receiver side.', { default: 'the neighbouring trace’s' })),
+    stackup: Type.Optional(refers('stackup', 'The stackup it goes through.', { examples: ['sled.main'] })),
+    from: Type.Optional(
+      refers('layer', 'The layer on the transmitter side.', { examples: ['L1'], default: 'the neighbouring trace’s' }),
+    ),
+    to: Type.Optional(
+      refers('layer', 'The layer on the receiver side.', { examples: ['L6'], default: 'the neighbouring trace’s' }),
+    ),
     span: Type.Optional(
       Type.Array(Type.String({ pattern: LAYER_PATTERN, 'x-refers': 'layer' }), {
         minItems: 2,
         maxItems: 2,
         description: 'First and last layer of a blind, buried or micro via.',
-        examples: [['L1', 'L4']],
+        examples: ['[L1, L4]'],
         'x-default': 'through',
       }),
     ),
@@ -62,10 +66,15 @@ export const viaElement = mapping(
       }),
     ),
     backdrill: Type.Optional(
-      mapping('backdrill', 'Drilled away from one or both outer sides.', {
-        top: Type.Optional(remaining('top')),
-        bottom: Type.Optional(remaining('bottom')),
-      }),
+      mapping(
+        'backdrill',
+        'Drilled away from one or both outer sides.',
+        {
+          top: Type.Optional(remaining('top')),
+          bottom: Type.Optional(remaining('bottom')),
+        },
+        { examples: ['{ bottom: 0.3 mm ± 0.1 mm }'] },
+      ),
     ),
     ...common,
   },
