@@ -204,9 +204,12 @@ export function crossSection(geometry: TraceGeometry): CrossSection {
 /** Gap of a pair whose impedance alone is declared, in widths. */
 export const GAP_IN_WIDTHS = 1.5;
 
+/** Of ln(width): fine enough not to step over the widths at which a pair of thick copper has its largest impedance. */
+const WIDTH_STEP = 0.1;
+
 /**
- * The width that gives an impedance, with a gap of 1.5 widths in a pair. Impedance falls as the width grows, so the root
- * is bracketed and halved.
+ * The width that gives an impedance, with a gap of 1.5 widths in a pair. From the widest on downwards the impedance rises, so the root
+ * is bracketed from there and halved.
  * @param geometry without width and gap
  * @param ohms of the pair (twice the odd mode's), or of the single strip
  * @returns undefined if no width from a fiftieth to fifty times the nearest plane's distance gives it
@@ -225,9 +228,16 @@ export function widthForImpedance(
       legOhms
     );
   };
-  let narrow = Math.log(0.02);
-  let wide = Math.log(50);
-  if (!(excess(narrow) > 0 && excess(wide) < 0)) return undefined;
+  // Of a pair narrower than its copper is thick the flanks face each other and the impedance falls again: the wider root is meant.
+  const narrowest = Math.log(0.02);
+  let narrow = Math.log(50);
+  if (!(excess(narrow) < 0)) return undefined;
+  let wide = narrow;
+  while (!(excess(narrow) > 0)) {
+    if (narrow <= narrowest) return undefined;
+    wide = narrow;
+    narrow = Math.max(narrowest, narrow - WIDTH_STEP);
+  }
   for (let i = 0; i < 50; i++) {
     const middle = (narrow + wide) / 2;
     if (excess(middle) > 0) narrow = middle;
