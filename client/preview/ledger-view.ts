@@ -1,3 +1,4 @@
+import { ledgerLines } from '../../src-core/plots/ledger-lines';
 import type { LedgerTable, PreviewData } from '../../src-core/plots/preview-data';
 import type { Actions } from './app';
 import { element, setAttribute, setText } from './dom';
@@ -74,8 +75,9 @@ export function ledgerView(actions: Actions): LedgerView {
       shown = ledger;
       node.classList.toggle('is-empty', !ledger);
       setText(missing, ledger ? '' : (plots[0]?.missing ?? ''));
-      fill(head, ledger ? [headings(ledger)] : [], 'th');
-      fill(body, ledger ? bodyRows(ledger) : [], 'td');
+      const lines = ledger && ledgerLines(ledger);
+      fill(head, lines ? [lines.head] : [], 'th');
+      fill(body, lines?.rows ?? [], 'td');
       setText(owners, ledger ? ledger.owners.map(({ owner, text }) => `${owner}: ${text}`).join(' · ') : '');
       if (ledger) for (const [i, row] of rows().entries()) showShare(row, ledger.rows[i]?.share);
       focused = Math.min(focused, Math.max(0, rows().length - 1));
@@ -87,23 +89,6 @@ export function ledgerView(actions: Actions): LedgerView {
       markCurrent();
     },
   };
-}
-
-const headings = ({ columns }: LedgerTable): string[] => [
-  'Element',
-  'Kind',
-  ...columns.map(({ title }) => title),
-  'Loss so far',
-  'Budget',
-  'Owner',
-];
-
-function bodyRows({ rows, columns, reflections }: LedgerTable): string[][] {
-  const blank = columns.map((_, i) => (i === 0 ? reflections : ''));
-  return [
-    ...rows.map(({ element: name, kind, cells, sofar, budget, owner }) => [name, kind, ...cells, sofar, budget, owner]),
-    ['reflections between elements', '', ...blank, '', '', ''],
-  ];
 }
 
 /** Rows and cells are kept and rewritten where they differ: no flash, and the focus stays. */

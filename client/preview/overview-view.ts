@@ -41,10 +41,7 @@ function limitsAndFigures({ limits, figures }: PreviewData, actions: Actions): N
       'li',
       {},
       element('span', { class: met ? 'state' : 'state missed' }, met ? 'met' : 'not met'),
-      ' ',
-      at ? linkButton(name, () => actions.select(at)) : name,
-      ' ',
-      ...withCode(text),
+      element('span', {}, at ? linkButton(name, () => actions.select(at)) : name, ' ', ...withCode(text)),
     ),
   );
   const list = figures.map(({ title, text, note }) =>
@@ -73,7 +70,7 @@ function findingList({ findings, moreFindings }: PreviewData, actions: Actions):
   ];
 }
 
-function findingRow({ severity, rule, message, accepted, at }: FindingText, actions: Actions): HTMLElement {
+function findingRow({ severity, rule, subject, message, accepted, at }: FindingText, actions: Actions): HTMLElement {
   const button = element('button', { type: 'button', class: 'link' }, ...withCode(message));
   button.addEventListener('click', () => actions.select(at));
   const state = element(
@@ -81,7 +78,8 @@ function findingRow({ severity, rule, message, accepted, at }: FindingText, acti
     { class: `state ${accepted ? 'accepted' : severity}` },
     accepted ? 'accepted' : severity,
   );
-  return element('li', {}, state, ' ', button, ' ', element('span', { class: 'quiet' }, rule));
+  const where = element('span', { class: 'quiet' }, subject === undefined ? rule : `${rule}, at ${subject}`);
+  return element('li', {}, state, element('span', {}, button, ' ', where));
 }
 
 function linkButton(text: string, act: () => void): HTMLButtonElement {

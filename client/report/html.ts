@@ -1,5 +1,5 @@
 import type { Analysis } from '../../src-core/analysis';
-import { type PreviewData, plots, previewData, renderSvg } from '../../src-core/plots';
+import { ledgerLines, type PreviewData, plots, previewData, renderSvg } from '../../src-core/plots';
 import { escapeMarkup } from '../../src-core/plots/kit/svg';
 import { caution, methods } from './cautions';
 import type { ReportOptions } from './index';
@@ -112,19 +112,7 @@ function findings({ findings: list, moreFindings }: PreviewData): string {
 
 function ledger({ ledger: found }: PreviewData): string {
   if (!found) return '';
-  const head = ['Element', 'Kind', ...found.columns.map(({ title }) => title), 'Loss so far', 'Budget', 'Owner'];
-  const blank = found.columns.map((_, i) => (i === 0 ? found.reflections : ''));
-  const rows = [
-    ...found.rows.map(({ element, kind, cells, sofar, budget, owner }) => [
-      element,
-      kind,
-      ...cells,
-      sofar,
-      budget,
-      owner,
-    ]),
-    ['reflections between elements', '', ...blank, '', '', ''],
-  ];
+  const { head, rows } = ledgerLines(found);
   const owners = found.owners
     .map(({ owner, text }) => `<li>${escapeMarkup(owner)}: ${escapeMarkup(text)}</li>`)
     .join('');

@@ -1,5 +1,5 @@
 import type { Analysis } from '../../src-core/analysis';
-import { type PreviewData, previewData } from '../../src-core/plots';
+import { ledgerLines, type PreviewData, previewData } from '../../src-core/plots';
 import { caution, methods } from './cautions';
 import type { ReportOptions } from './index';
 import { escapeMarkdown, markdownOf, markdownTable } from './markdown-text';
@@ -62,19 +62,7 @@ const stateInWords = ({ verdict }: PreviewData): string => words[verdict.state];
 
 function ledger({ ledger: table }: PreviewData): string {
   if (!table) return '';
-  const head = ['element', 'kind', ...table.columns.map(({ title }) => title), 'loss so far', 'budget', 'owner'];
-  const blank = table.columns.map((_, i) => (i === 0 ? table.reflections : ''));
-  const rows = [
-    ...table.rows.map(({ element, kind, cells, sofar, budget, owner }) => [
-      element,
-      kind,
-      ...cells,
-      sofar,
-      budget,
-      owner,
-    ]),
-    ['reflections between elements', '', ...blank, '', '', ''],
-  ];
+  const { head, rows } = ledgerLines(table);
   const owners = table.owners
     .map(({ owner, text }) => `- ${escapeMarkdown(owner)}: ${escapeMarkdown(text)}`)
     .join('\n');

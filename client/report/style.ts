@@ -16,7 +16,7 @@ p{margin:4px 0}
 .verdict.warnings{border-left-color:var(--plot-series-2)}
 .scroll{overflow-x:auto}
 table{border-collapse:collapse;font-variant-numeric:tabular-nums}
-th,td{padding:3px 14px 3px 0;border-bottom:1px solid var(--line);text-align:left;vertical-align:top;font-weight:400;overflow-wrap:anywhere}
+th,td{padding:3px 14px 3px 0;border-bottom:1px solid var(--line);text-align:left;vertical-align:top;font-weight:400;overflow-wrap:break-word}
 figure{margin:0}
 figure svg{display:block;max-width:100%;height:auto}
 code{font-family:ui-monospace,monospace;font-size:.95em}

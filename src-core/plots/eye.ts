@@ -22,7 +22,7 @@ export const eyePlot: Plot = {
     return {
       name: this.name,
       title: this.title,
-      x: { label: 'Time from the sampling instant', unit: 'UI', domain: [-0.5, 0.5] },
+      x: { label: 'Time from the sampling instant', unit: 'UI', domain: spanOf(link.density) },
       y: { label: 'Voltage at the slicer', unit: 'V', domain: [lowestVolts, highestVolts] },
       series: contoursOf(link.density, ratio),
       limits,
@@ -37,17 +37,24 @@ export const eyePlot: Plot = {
 /** Below this probability a bin is not drawn: it is the floor of the pictures, not of the computation. */
 const drawnFloor = -18;
 
-function heatOf({ phases, voltages, lowestVolts, highestVolts, log10 }: EyeDensity): Heat {
+function heatOf(density: EyeDensity): Heat {
+  const { phases, voltages, lowestVolts, highestVolts, log10 } = density;
   return {
     columns: phases,
     rows: voltages,
-    x: [-0.5, 0.5],
+    x: spanOf(density),
     y: [lowestVolts, highestVolts],
     values: log10,
     floor: drawnFloor,
     unit: 'probability of a bin',
   };
 }
+
+/** Left edge of the first and right edge of the last column, each standing around its phase. */
+const spanOf = ({ phases }: EyeDensity): [number, number] => [
+  phaseOf(0, phases) - 0.5 / phases,
+  phaseOf(phases - 1, phases) + 0.5 / phases,
+];
 
 /** Phase of each column's middle, as the density has it: the sampling instant in column phases / 2. */
 const phaseOf = (column: number, phases: number) => (column - Math.floor(phases / 2)) / phases;
@@ -87,7 +94,7 @@ function masksOf({ model, limits }: Analysis, { density }: Link): PlotLimit[] {
       return {
         name:
           density.openings.length > 1
-            ? `${limit.name}, ${names[3]?.[index]?.toLowerCase() ?? `eye ${index + 1}`}`
+            ? `${limit.name} (${names[3]?.[index]?.toLowerCase() ?? `eye ${index + 1}`})`
             : limit.name,
         x: [-widthUi / 2, 0, widthUi / 2, 0],
         y: [middle, middle + height / 2, middle, middle - height / 2],

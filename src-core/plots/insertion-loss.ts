@@ -3,7 +3,7 @@ import { maskOf, networkWithin } from '../figures/insertion-loss-limit';
 import { insertionLossAt } from '../figures/measures';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
-import { lossAxis, namesOf, nyquistGuide, sampled } from './sampled';
+import { frequencyEnd, lossAxis, namesOf, nyquistGuide, sampled } from './sampled';
 import type { Mark, Plot, PlotLimit, Series } from './types';
 
 /** More marks than this hide the curve; the deepest are kept. */
@@ -17,7 +17,7 @@ export const insertionLossPlot: Plot = {
     const { model, networks, cascade } = analysis;
     if (!networks || !cascade) return undefined;
     const { nyquistFrequency } = model;
-    const domain = [0, 2 * nyquistFrequency] as const;
+    const domain = [0, frequencyEnd(analysis)] as const;
     const whole = lossOf(analysis, undefined, 'Whole path');
     const cuts = cutsOf(analysis);
     const limits = limitsOf(analysis);
@@ -33,21 +33,18 @@ export const insertionLossPlot: Plot = {
       limits,
       guides: nyquistGuide(model),
       marks,
-      summary: `${atNyquist} at Nyquist (${show.frequency(nyquistFrequency)}); ${resonancesInWords(marks)}${namesOf(limits)}`,
+      summary: `${atNyquist} at Nyquist (${show.frequency(nyquistFrequency)}); ${resonancesInWords(marks, domain[1])}${namesOf(limits)}`,
     };
   },
 };
 
-function lossOf(
-  { networks, model, cascade }: Analysis,
-  between: readonly [number, number] | undefined,
-  name: string,
-): Series {
+function lossOf(analysis: Analysis, between: readonly [number, number] | undefined, name: string): Series {
+  const { networks, cascade } = analysis;
   const { differential } = between ? cascade!.between(between[0], between[1]) : cascade!.total;
   const grid = networks!.grid;
   return {
     name,
-    ...sampled(grid, 2 * model.nyquistFrequency, (frequencyHz) => insertionLossAt(differential, grid, frequencyHz)),
+    ...sampled(grid, frequencyEnd(analysis), (frequencyHz) => insertionLossAt(differential, grid, frequencyHz)),
   };
 }
 
@@ -95,7 +92,7 @@ function resonanceMarks({ cascade }: Analysis, endHz: number): Mark[] {
     }));
 }
 
-function resonancesInWords(marks: readonly Mark[]): string {
-  if (marks.length === 0) return 'no resonance in view.';
+function resonancesInWords(marks: readonly Mark[], endHz: number): string {
+  if (marks.length === 0) return `no resonance up to ${show.frequency(endHz)}.`;
   return `${marks.length === 1 ? 'resonance' : 'resonances'}: ${marks.map(({ label }) => label).join(', ')}.`;
 }

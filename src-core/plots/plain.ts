@@ -9,14 +9,28 @@ export function plainDescription(description: PlotDescription): PlotDescription 
     ...description,
     series: description.series.map(plainSeries),
     limits: description.limits.map((limit) => ({ ...limit, x: digits(limit.x, 8), y: digits(limit.y, 6) })),
-    marks: description.marks.map((mark) => ({ ...mark, x: toDigits(mark.x, 8), y: toDigits(mark.y, 6) })),
+    marks: description.marks.map((mark) => ({
+      ...mark,
+      x: digits([mark.x], 8)[0] ?? 0,
+      y: digits([mark.y], 6)[0] ?? 0,
+    })),
     ...(description.heat && { heat: plainHeat(description.heat) }),
   };
 }
 
 function plainSeries({ x, y, ...rest }: Series): Series {
   const kept = thinned(x, y, mostPoints);
-  return { ...rest, x: kept.map((i) => toDigits(x[i], 8)), y: kept.map((i) => toDigits(y[i], 6)) };
+  return {
+    ...rest,
+    x: digits(
+      kept.map((i) => x[i]),
+      8,
+    ),
+    y: digits(
+      kept.map((i) => y[i]),
+      6,
+    ),
+  };
 }
 
 /** Indices to keep: all finite ones, or of each bucket the lowest and the highest. */
@@ -47,9 +61,20 @@ function plainHeat({ values, floor, ...rest }: Heat): Heat {
   return { ...rest, floor, values: plain };
 }
 
-const digits = (values: ArrayLike<number>, count: number): number[] =>
-  Array.from(values)
-    .filter(Number.isFinite)
-    .map((value) => toDigits(value, count));
+/** All with the same place of rounding, so that the largest keeps `count` digits. */
+function digits(values: ArrayLike<number>, count: number): number[] {
+  let largest = 0;
+  for (let i = 0; i < values.length; i++)
+    if (Number.isFinite(values[i])) largest = Math.max(largest, Math.abs(values[i]));
+  const places = largest > 0 ? count - 1 - Math.floor(Math.log10(largest)) : 0;
+  const plain: number[] = [];
+  for (let i = 0; i < values.length; i++) if (Number.isFinite(values[i])) plain.push(roundedTo(values[i], places));
+  return plain;
+}
 
-const toDigits = (value: number, count: number): number => Number(value.toPrecision(count));
+/** Rounded to decimal places (negative: tens, hundreds, …); a power of ten divides exactly enough to print short. */
+function roundedTo(value: number, places: number): number {
+  const scale = 10 ** Math.abs(places);
+  if (!Number.isFinite(scale)) return value;
+  return (places >= 0 ? Math.round(value * scale) / scale : Math.round(value / scale) * scale) + 0;
+}

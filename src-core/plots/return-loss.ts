@@ -3,7 +3,7 @@ import { networkWithin } from '../figures/insertion-loss-limit';
 import { type End, returnLossAt, worstReturnLoss } from '../figures/measures';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
-import { lossAxis, namesOf, nyquistGuide, sampled } from './sampled';
+import { frequencyEnd, lossAxis, namesOf, nyquistGuide, sampled } from './sampled';
 import type { Plot, PlotLimit, Series } from './types';
 
 /** Nothing of interest lies deeper; the first points come near infinity. */
@@ -22,7 +22,7 @@ export const returnLossPlot: Plot = {
     return {
       name: this.name,
       title: this.title,
-      x: { label: 'Frequency', unit: 'Hz', domain: [0, 2 * model.nyquistFrequency] },
+      x: { label: 'Frequency', unit: 'Hz', domain: [0, frequencyEnd(analysis)] },
       y: lossAxis(
         'Return loss',
         [...series.flatMap(({ y }) => Array.from(y)), ...limits.flatMap(({ y }) => Array.from(y))],
@@ -41,16 +41,11 @@ export const returnLossPlot: Plot = {
 
 const ends: readonly End[] = ['transmitter', 'receiver'];
 
-function endsOf(
-  { model, networks }: Analysis,
-  s: Float64Array,
-  suffix: string,
-  which: readonly End[] = ends,
-): Series[] {
-  const grid = networks!.grid;
+function endsOf(analysis: Analysis, s: Float64Array, suffix: string, which: readonly End[] = ends): Series[] {
+  const grid = analysis.networks!.grid;
   return which.map((end) => ({
     name: `From the ${end}${suffix}`,
-    ...sampled(grid, 2 * model.nyquistFrequency, (frequencyHz) => returnLossAt(s, grid, end, frequencyHz)),
+    ...sampled(grid, frequencyEnd(analysis), (frequencyHz) => returnLossAt(s, grid, end, frequencyHz)),
   }));
 }
 

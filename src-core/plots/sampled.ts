@@ -1,6 +1,14 @@
+import type { Analysis } from '../analysis';
 import type { Model } from '../model/types';
 import type { Grid } from '../networks/types';
 import type { Axis, PlotLimit } from './types';
+
+/** Twice Nyquist, or three or four times where it takes that to show the lowest notch that has a name. */
+export function frequencyEnd({ model: { nyquistFrequency }, cascade }: Analysis): number {
+  const lowest = cascade?.resonances.find(({ elements }) => elements.length > 0)?.frequencyHz ?? 0;
+  const multiple = [2, 3, 4].find((times) => lowest <= 0.95 * times * nyquistFrequency) ?? 2;
+  return multiple * nyquistFrequency;
+}
 
 /** A function of frequency at the grid's points up to `endHz`. */
 export function sampled(

@@ -42,9 +42,9 @@ export function textWidth(text: string, fontSize: number): number {
   let units = 0;
   for (const character of text) {
     if ("il.,:;|'! ".includes(character)) units += 0.32;
-    else if (character >= 'A' && character <= 'Z') units += 0.68;
+    else if (character >= 'A' && character <= 'Z') units += 0.7;
     else if (character > '\u2e80') units += 1;
-    else units += 0.57;
+    else units += 0.6;
   }
   return units * fontSize;
 }
