@@ -1,7 +1,7 @@
 import { straightThrough } from '../networks/through';
 import type { Network, Networks } from '../networks/types';
 import { type Chainer, keepProducts, type Products } from './product';
-import { resonancesOf } from './resonances';
+import { type KeptDips, keepDips, resonancesOf } from './resonances';
 import type { Cascade } from './types';
 
 /**
@@ -15,6 +15,7 @@ export function cascadeOf(networks: Networks, previous?: Cascade): Cascade {
   const names = networks.elements.map(({ element }) => element.name);
   if (previous && kept && same(kept.factors, factors) && same(kept.names, names)) return previous;
   const chainer = keepProducts(kept?.products);
+  const dips = kept?.dips ?? keepDips();
   const through = straightThrough(networks.context);
   const total = treeProduct(factors, 0, factors.length, chainer) ?? through;
   const between = (from: number, to: number): Network => {
@@ -25,8 +26,8 @@ export function cascadeOf(networks: Networks, previous?: Cascade): Cascade {
   return {
     total,
     between,
-    resonances: resonancesOf(networks, total),
-    kept: { factors, names, products: chainer.products } satisfies Kept,
+    resonances: resonancesOf(networks, dips),
+    kept: { factors, names, products: chainer.products, dips } satisfies Kept,
     products,
   };
 }
@@ -35,6 +36,7 @@ interface Kept {
   readonly factors: readonly (Network | undefined)[];
   readonly names: readonly string[];
   readonly products: Products;
+  readonly dips: KeptDips;
 }
 
 type Factors = readonly (Network | undefined)[];

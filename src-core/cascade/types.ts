@@ -3,11 +3,11 @@ import type { Network } from '../networks/types';
 /** A dip of the cascade's transmission, refined between grid points on the networks themselves. */
 export interface Resonance {
   readonly frequencyHz: number;
-  /** Below the loss that its surroundings would give, dB. */
+  /** What its elements add to the insertion loss there, dB. */
   readonly depthDb: number;
   /** Insertion loss there. */
   readonly lossDb: number;
-  /** Frequency over width where the dip is 3 dB above its bottom... see `cascade/resonances.ts`. */
+  /** Frequency over the width in which the dip is less than 3 dB above its bottom; see `cascade/resonances.ts`. */
   readonly quality: number;
   /** The elements that make it; two where they are alike within 2 %. */
   readonly elements: readonly string[];

@@ -18,7 +18,9 @@ export function inverseTransform(spectrum: Float64Array): Float64Array {
   }
   const out = new Float64Array(2 * samples);
   fft.inverseTransform(out, whole);
-  return out.filter((_, i) => i % 2 === 0);
+  const real = new Float64Array(samples);
+  for (let n = 0; n < samples; n++) real[n] = out[2 * n];
+  return real;
 }
 
 /** Tables of sines by length; a handful of lengths exist, since the grid's are powers of two. */
