@@ -1,0 +1,71 @@
+import type { CancellationToken, Diagnostic } from 'vscode-languageserver';
+import type { AnalyseOptions, Analysis, Inputs } from '../src-core/analysis';
+import type { FilePath, Files } from '../src-core/text/types';
+import { type ResultIds, toDiagnostic } from './diagnostics';
+import { idOf, type Located } from './roots';
+import type { Services } from './services';
+
+export interface ClosedReport {
+  readonly resultId: string;
+  readonly items: Diagnostic[];
+}
+
+/** Findings of files that are not open. The analysis is thrown away, its findings are kept until a file that they depend on changes. */
+export interface ClosedFiles {
+  report(located: Located, token: CancellationToken): Promise<ClosedReport | undefined>;
+  changed(located: Located): void;
+  clear(): void;
+}
+
+export interface ClosedFilesParts {
+  readonly services: Services;
+  readonly ids: ResultIds;
+  readonly analyse: (inputs: Inputs, previous: undefined, options: AnalyseOptions) => Analysis;
+  readonly gather: (files: Files, file: FilePath, today: string, previous?: Inputs) => Promise<Inputs>;
+  readonly today: () => string;
+  readonly now: () => number;
+  readonly pause: () => Promise<void>;
+  readonly announce: (located: Located, running: boolean) => Promise<void>;
+}
+
+const TIME_FOR_ONE_FILE = 5000;
+
+export function keepClosedFiles({ services, ids, analyse, gather, today, now, pause, announce }: ClosedFilesParts): ClosedFiles {
+  const kept = new Map<string, { report: ClosedReport; root: string; dependsOn: ReadonlySet<FilePath> }>();
+  return {
+    async report(located, token) {
+      const id = idOf(located);
+      const known = kept.get(id);
+      if (known) return known.report;
+      if (services.skipped.has(id)) return undefined;
+      // What is being typed goes first.
+      while (services.analyses.busy() && !token.isCancellationRequested) await pause();
+      if (token.isCancellationRequested) return undefined;
+      const inputs = await gather(services.filesOf(located.root), located.file, today());
+      if (inputs.files.get(located.file)?.kind !== 'text') return undefined;
+      await announce(located, true);
+      let items: Diagnostic[];
+      try {
+        const end = now() + TIME_FOR_ONE_FILE;
+        const analysis = analyse(inputs, undefined, { until: 'link', outOfTime: () => now() > end });
+        const text = analysis.parsed.get(located.file)?.text ?? '';
+        items = analysis.findings
+          .filter(({ at, waivedBy }) => at.file === located.file && !waivedBy)
+          .map((finding) => toDiagnostic(services, located, analysis, finding, text));
+      } catch (error) {
+        services.log.error(`${located.file}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`);
+        items = [];
+      } finally {
+        await announce(located, false);
+      }
+      const report = { resultId: ids.idFor(`closed ${id}`, items), items };
+      kept.set(id, { report, root: located.root.key, dependsOn: new Set(inputs.files.keys()) });
+      await pause();
+      return report;
+    },
+    changed({ root, file }) {
+      for (const [id, entry] of kept) if (entry.root === root.key && entry.dependsOn.has(file)) kept.delete(id);
+    },
+    clear: () => kept.clear(),
+  };
+}

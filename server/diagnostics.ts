@@ -1,0 +1,105 @@
+import { type Diagnostic, DiagnosticSeverity, DiagnosticTag } from 'vscode-languageserver';
+import type { Analysis } from '../src-core/analysis';
+import type { Finding, Severity } from '../src-core/rules/types';
+import { rangeOf } from '../src-core/text/index';
+import type { FilePath, TextRange } from '../src-core/text/types';
+import { toRange } from './convert';
+import { idOf, type Located } from './roots';
+import type { Services } from './services';
+
+const SEVERITIES: Readonly<Record<Severity, DiagnosticSeverity>> = {
+  error: DiagnosticSeverity.Error,
+  warning: DiagnosticSeverity.Warning,
+  info: DiagnosticSeverity.Information,
+  hint: DiagnosticSeverity.Hint,
+};
+const TAGS = { unnecessary: DiagnosticTag.Unnecessary, deprecated: DiagnosticTag.Deprecated } as const;
+const MOST_SHOWN = 200;
+
+/** Where a finding stands in the text that its analysis read. */
+export function rangeOfFinding(analysis: Analysis, { at, range }: Pick<Finding, 'at' | 'range'>): TextRange {
+  const parsed = analysis.parsed.get(at.file);
+  if (range) return range;
+  return parsed ? rangeOf(parsed, at) : { start: 0, end: 0 };
+}
+
+/** Every finding that the open files' analyses place in this file, once each. Waived ones are not shown. */
+export function diagnosticsOf(services: Services, located: Located): Diagnostic[] {
+  const { analyses, skipped, documents } = services;
+  if (skipped.has(idOf(located))) return [notAnalysed('Opened without analysis: the server ended twice while it worked on this file. Choose “Analyse this file again” to try.', 'not-analysed')];
+  const failure = analyses.failure(located);
+  if (failure !== undefined) return [notAnalysed(`This text broke the analysis, which is a fault of ours: ${failure}`, 'internal-error')];
+  const found = new Map<string, Diagnostic>();
+  for (const { located: source, analysis } of analyses.all()) {
+    if (source.root.key !== located.root.key) continue;
+    // Only what was read from the text that is open now has ranges that hold.
+    const text = analysis.parsed.get(located.file)?.text;
+    if (text === undefined || text !== (documents.at(located)?.text ?? text)) continue;
+    for (const finding of analysis.findings) {
+      if (finding.at.file !== located.file || finding.waivedBy) continue;
+      const diagnostic = toDiagnostic(services, source, analysis, finding, text);
+      const key = `${finding.rule}\n${finding.message}\n${JSON.stringify(diagnostic.range)}`;
+      if (!found.has(key)) found.set(key, diagnostic);
+    }
+  }
+  return [...found.values()].slice(0, MOST_SHOWN);
+}
+
+export function toDiagnostic(services: Services, source: Located, analysis: Analysis, finding: Finding, text: string): Diagnostic {
+  const reference = services.rulesReference();
+  const related = (finding.related ?? []).flatMap(({ at, message }) => {
+    const parsed = analysis.parsed.get(at.file);
+    if (!parsed) return [];
+    const uri = services.documents.uriOf({ root: source.root, file: at.file });
+    return [{ location: { uri, range: toRange(parsed.text, rangeOf(parsed, at)) }, message }];
+  });
+  return {
+    range: toRange(text, rangeOfFinding(analysis, finding)),
+    severity: SEVERITIES[finding.severity],
+    code: finding.rule,
+    source: 'lanewright',
+    message: finding.message,
+    ...(reference && { codeDescription: { href: `${reference}#${finding.rule}` } }),
+    ...(related.length > 0 && { relatedInformation: related }),
+    ...(finding.tags && { tags: finding.tags.map((tag) => TAGS[tag]) }),
+  };
+}
+
+const notAnalysed = (message: string, code: string): Diagnostic => ({
+  range: { start: { line: 0, character: 0 }, end: { line: 0, character: 0 } },
+  severity: DiagnosticSeverity.Warning,
+  code,
+  source: 'lanewright',
+  message,
+});
+
+/** Files other than the analysed one that its findings stand in. */
+export function otherFilesOf(analysis: Analysis): readonly FilePath[] {
+  return [...new Set(analysis.findings.map(({ at }) => at.file))].filter((file) => file !== analysis.inputs.file);
+}
+
+/** Names for reports: the same name as long as the report says the same. */
+export function keepResultIds() {
+  const stamp = Math.random().toString(36).slice(2, 8);
+  const kept = new Map<string, { id: string; content: string }>();
+  const given = new Map<string, string>();
+  let count = 0;
+  return {
+    idFor(key: string, items: readonly Diagnostic[]): string {
+      const content = JSON.stringify(items);
+      const before = kept.get(key);
+      if (before?.content === content) return before.id;
+      const id = `${stamp}-${++count}`;
+      kept.set(key, { id, content });
+      return id;
+    },
+    /** The client has this report now. */
+    served: (key: string, id: string) => void given.set(key, id),
+    lastServed: (key: string) => given.get(key),
+    forget(key: string): void {
+      kept.delete(key);
+      given.delete(key);
+    },
+  };
+}
+export type ResultIds = ReturnType<typeof keepResultIds>;

@@ -1,0 +1,46 @@
+import { type InlayHint, InlayHintKind, type InlayHintParams, MarkupKind } from 'vscode-languageserver';
+import { describeElement } from '../../src-core/assist/describe-element';
+import { type Hint, hintsOf } from '../../src-core/assist/hints';
+import { rangeOf } from '../../src-core/text/index';
+import { fromRange, positionAt, toRange, toTextEdit } from '../convert';
+import { type Analysed, type Handler, located } from '../handler';
+import type { Services } from '../services';
+import type { Settings } from '../settings';
+
+/** Figures beside the elements, for the part of the text that is seen. */
+export const inlayHints: Handler<InlayHintParams, InlayHint[] | null> = (services) => async ({ textDocument, range }, token) => {
+  const settings = await services.settings.of(textDocument.uri);
+  const at = await located(services, textDocument.uri, token);
+  if (!at) return null;
+  return hintsOf(at.analysis, at.file, fromRange(at.text, range))
+    .filter(({ kind }) => isWanted(settings, kind))
+    .map((hint) => toInlayHint(services, at, textDocument.uri, hint));
+};
+
+const isWanted = ({ hints }: Settings, kind: Hint['kind']) => hints[kind];
+
+interface HintData {
+  readonly uri: string;
+  readonly element: string;
+}
+
+function toInlayHint(services: Services, { analysis, root, text }: Analysed, uri: string, { offset, label, kind, target, insert, element }: Hint): InlayHint {
+  const targetText = target && analysis.parsed.get(target.file);
+  const location = target && targetText && { uri: services.documents.uriOf({ root, file: target.file }), range: toRange(targetText.text, rangeOf(targetText, target)) };
+  return {
+    position: positionAt(text, offset),
+    label: [{ value: label, ...(location && { location }) }],
+    paddingLeft: true,
+    ...(kind === 'derived' && { kind: InlayHintKind.Parameter }),
+    ...(insert && { textEdits: [toTextEdit(text, insert)] }),
+    data: { uri, element } satisfies HintData,
+  };
+}
+
+/** The explanation of a hint, made when the pointer rests on it. */
+export const resolveHint: Handler<InlayHint, InlayHint> = (services) => async (hint, token) => {
+  const { uri, element } = (hint.data ?? {}) as Partial<HintData>;
+  const at = uri === undefined ? undefined : await located(services, uri, token);
+  const found = at?.analysis.model.elements.find(({ name }) => name === element);
+  return found ? { ...hint, tooltip: { kind: MarkupKind.Markdown, value: describeElement(at!.analysis, found) } } : hint;
+};
