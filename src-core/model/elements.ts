@@ -1,15 +1,15 @@
 import type { ElementKindName, Quantity } from '../../schemas/format/types';
 import { entryKind, freeName, keysOf, missingKeyProblems, missingKeys, readValues } from '../format/index';
-import { fileKind, joinPath } from '../inputs';
 import { nearest } from '../quantity/nearest';
 import { show } from '../quantity/show';
-import type { FilePath, Place } from '../text/types';
+import type { Place } from '../text/types';
 import { type Draft, headOf } from './draft';
 import { lookUp } from './names';
 import { isMapping, mappingAt, type RawMapping } from './raw';
 import { formatReports, type ModelReport, placeIn, quoted } from './reports';
-import { type Sources, unreadable } from './sources';
+import type { Sources } from './sources';
 import type { Shelves } from './stackups';
+import { touchstoneFile } from './touchstone';
 
 export const KINDS: readonly ElementKindName[] = [
   'package',
@@ -198,19 +198,15 @@ function resolveFile({ sources, reports }: ElementContext, draft: Draft): void {
   const written = draft.values.touchstone;
   if (typeof written !== 'string') return;
   const place = draft.places.touchstone;
-  const refuse = (rule: string, message: string) => {
+  const named = touchstoneFile(sources, draft.sourceOf('touchstone'), written);
+  if (named.file === undefined) {
     draft.incomplete = true;
-    reports.push({ rule, at: place, subject: draft.name, message });
-  };
-  const joined = joinPath(draft.sourceOf('touchstone'), written);
-  if (joined.problem !== undefined) return refuse('refused-file', `The path ${quoted(written)} ${joined.problem}.`);
-  if (fileKind(joined.file) !== 'touchstone')
-    return refuse('refused-file', `${quoted(written)} is no Touchstone file: its name ends with \`.s1p\` to \`.s4p\`.`);
-  if (sources.inputs.files.get(joined.file)?.kind !== 'text')
-    return refuse(...unreadable(sources.inputs, joined.file, written));
+    reports.push({ rule: named.rule, at: place, subject: draft.name, message: named.message });
+    return;
+  }
   const ports = draft.values.ports as { enter?: readonly number[]; leave?: readonly number[] } | undefined;
   draft.fileReference = {
-    file: joined.file as FilePath,
+    file: named.file,
     place,
     ...(ports?.enter && { enter: ports.enter }),
     ...(ports?.leave && { leave: ports.leave }),

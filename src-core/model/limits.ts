@@ -145,8 +145,13 @@ export function readWaivers({ sources, reports }: ElementContext): Waiver[] {
 
 function readUpTo(written: string | undefined, at: Place, reports: ModelReport[]): Quantity | undefined | 'bad' {
   if (written === undefined) return undefined;
-  const { quantity, problem } = readQuantity(written, ANY_VALUE);
-  if (quantity && !problem) return quantity;
+  // Some findings are shares of something; `%` is no unit of the format elsewhere.
+  const [, percent] = /^(\d+(?:\.\d+)?)\s*%$/.exec(written) ?? [];
+  const { quantity, problem } = readQuantity(
+    percent === undefined ? written : String(Number(percent) / 100),
+    ANY_VALUE,
+  );
+  if (quantity && !problem) return { ...quantity, text: written };
   reports.push({ rule: 'quantity', at, message: problem?.message ?? `${quoted(written)} is no quantity.` });
   return 'bad';
 }

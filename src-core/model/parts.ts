@@ -1,10 +1,10 @@
 import { entryKind, readValues } from '../format/index';
-import { fileKind, joinPath } from '../inputs';
 import type { ElementContext } from './elements';
 import { lookUp } from './names';
 import { isMapping, mappingAt } from './raw';
-import { formatReports, placeIn, quoted } from './reports';
-import { type Source, unreadable } from './sources';
+import { formatReports, placeIn } from './reports';
+import type { Source } from './sources';
+import { touchstoneFile } from './touchstone';
 
 /** What is wrong with the parts of a file, whether an element names them or not. */
 export function readParts(context: ElementContext, source: Source): void {
@@ -23,29 +23,10 @@ export function readParts(context: ElementContext, source: Source): void {
     const used = context.usedParts.has(`${source.file}\n${name}`); // an element has reported its names already
     if (typeof stackup === 'string' && !used)
       lookUp(sources, source.file, 'stackups', stackup, placeIn(source.file, [...path, 'stackup']), reports, name);
-    if (typeof touchstone === 'string' && !used) checkFile(context, source, name, touchstone);
-  }
-}
-
-function checkFile({ sources, reports }: ElementContext, source: Source, part: string, written: string): void {
-  const at = placeIn(source.file, ['parts', part, 'touchstone']);
-  const joined = joinPath(source.file, written);
-  if (joined.problem !== undefined)
-    reports.push({
-      rule: 'refused-file',
-      at,
-      subject: part,
-      message: `The path ${quoted(written)} ${joined.problem}.`,
-    });
-  else if (fileKind(joined.file) !== 'touchstone') {
-    reports.push({
-      rule: 'refused-file',
-      at,
-      subject: part,
-      message: `${quoted(written)} is no Touchstone file: its name ends with \`.s1p\` to \`.s4p\`.`,
-    });
-  } else if (sources.inputs.files.get(joined.file)?.kind !== 'text') {
-    const [rule, message] = unreadable(sources.inputs, joined.file, written);
-    reports.push({ rule, at, subject: part, message });
+    if (typeof touchstone === 'string' && !used) {
+      const named = touchstoneFile(sources, source.file, touchstone);
+      const at = placeIn(source.file, [...path, 'touchstone']);
+      if (named.file === undefined) reports.push({ rule: named.rule, at, subject: name, message: named.message });
+    }
   }
 }

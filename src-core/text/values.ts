@@ -33,18 +33,18 @@ export function buildValue(
     aliasNodes: 0,
     aliasLimitReported: false,
   };
-  return { value: valueOf(root, [], building), reports: building.reports };
+  return { value: valueAt(root, [], building), reports: building.reports };
 }
 
-function valueOf(node: SyntaxNode, path: ValuePath, building: Building): unknown {
-  const value = bareValueOf(node, path, building);
+function valueAt(node: SyntaxNode, path: ValuePath, building: Building): unknown {
+  const value = builtValue(node, path, building);
   if (node.anchor) building.anchors.set(node.anchor, node);
   return value;
 }
 
-function bareValueOf(node: SyntaxNode, path: ValuePath, building: Building): unknown {
+function builtValue(node: SyntaxNode, path: ValuePath, building: Building): unknown {
   if (node.type === 'scalar') return node.value;
-  if (node.type === 'list') return node.items.map((item, i) => valueOf(item.value, [...path, i], building));
+  if (node.type === 'list') return node.items.map((item, i) => valueAt(item.value, [...path, i], building));
   if (node.type === 'map') return mapValue(node, path, building);
   const target = resolveAlias(node, path, building);
   return target ? copyOf(target) : null;
@@ -61,7 +61,7 @@ function mapValue(node: MapNode, path: ValuePath, building: Building): Record<st
       continue;
     }
     first.set(pair.key, pair);
-    const value = valueOf(pair.value, [...path, pair.key], building);
+    const value = valueAt(pair.value, [...path, pair.key], building);
     if (pair.key === '<<') merged.push(pair.value);
     else result[pair.key] = value;
   }
