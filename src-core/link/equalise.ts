@@ -5,8 +5,8 @@ import { solveDfe } from './dfe';
 import { figureOfMeritDb } from './figure-of-merit';
 import type { Levels } from './levels';
 import { noiseBandwidths, shapedNoise } from './noise';
-import { valueAt } from './resample';
-import { peakOf, samplingInstant } from './sampling-instant';
+import { weighted, weightsAt } from './resample';
+import { samplingInstant } from './sampling-instant';
 
 /** One setting of the receiver, and where it samples. Volts are those of the declared swing. */
 export interface Equalised {
@@ -32,11 +32,7 @@ export function equalise(model: Model, time: Time, levels: Levels): Equalised {
   if (ctle !== 'auto' || !time.ctleParts) {
     const declared: Ctle | undefined = typeof ctle === 'object' ? ctle : undefined;
     return {
-      ...settled(
-        time.pulse.map((value) => value * swing),
-        model,
-        time.samplesPerUi,
-      ),
+      ...settled(scaled(time.pulse, swing), model, time.samplesPerUi),
       noiseVolts: shapedNoise(noise, bandwidthHz, declared),
       ctleDcGainDb: declared?.dcGainDb,
     };
@@ -47,8 +43,7 @@ export function equalise(model: Model, time: Time, levels: Levels): Equalised {
   let best: (Equalised & { readonly merit: number }) | undefined;
   for (const dcGainDb of automaticGainsDb) {
     const g = ratioOfDb(dcGainDb);
-    const pulse = new Float64Array(flat.length);
-    for (let i = 0; i < pulse.length; i++) pulse[i] = swing * (g * flat[i] + rising[i]);
+    const pulse = scaled(rising, swing, flat, g * swing);
     const noiseVolts = noise * Math.sqrt((g * g * bands.flat + g * bands.cross + bands.rising) / plain);
     const setting = { ...settled(pulse, model, time.samplesPerUi), noiseVolts, ctleDcGainDb: dcGainDb };
     const merit = meritOf(setting, model, time.samplesPerUi, levels);
@@ -57,15 +52,26 @@ export function equalise(model: Model, time: Time, levels: Levels): Equalised {
   return best!;
 }
 
+/** a × first + b × second. */
+function scaled(first: Float64Array, a: number, second?: Float64Array, b = 0): Float64Array {
+  const out = new Float64Array(first.length);
+  if (second) for (let i = 0; i < out.length; i++) out[i] = a * first[i] + b * second[i];
+  else for (let i = 0; i < out.length; i++) out[i] = a * first[i];
+  return out;
+}
+
 /** Turns the pulse up and finds the sampling instant. `pulse` is this function's to change. */
 function settled(pulse: Float64Array, model: Model, samplesPerUi: number) {
-  const high = pulse[peakOf(pulse)];
-  let low = 0;
-  for (const value of pulse) if (value < low) low = value;
-  const inverted = -low > high;
+  let [highest, lowest] = [0, 0];
+  for (let i = 1; i < pulse.length; i++) {
+    if (pulse[i] > pulse[highest]) highest = i;
+    else if (pulse[i] < pulse[lowest]) lowest = i;
+  }
+  const inverted = -pulse[lowest] > pulse[highest];
   if (inverted) for (let i = 0; i < pulse.length; i++) pulse[i] = -pulse[i];
   const { taps, limit } = dfeOf(model);
-  return { pulse, inverted, instant: samplingInstant(pulse, samplesPerUi, taps > 0 ? limit : 0) };
+  const peak = inverted ? lowest : highest;
+  return { pulse, inverted, instant: samplingInstant(pulse, samplesPerUi, taps > 0 ? limit : 0, peak) };
 }
 
 /** Absent receivers have no taps. */
@@ -81,7 +87,10 @@ export function jitterOf({ transmitter, unitInterval }: Model) {
 
 function meritOf({ pulse, instant, noiseVolts }: Equalised, model: Model, samplesPerUi: number, levels: Levels) {
   const uis = pulse.length / samplesPerUi;
-  const cursors = Float64Array.from({ length: uis }, (_, m) => valueAt(pulse, instant + m * samplesPerUi));
+  const first = Math.floor(instant);
+  const w = weightsAt(instant - first);
+  const cursors = new Float64Array(uis);
+  for (let m = 0; m < uis; m++) cursors[m] = weighted(pulse, first + m * samplesPerUi, w);
   const { taps, limit } = dfeOf(model);
   const corrected = solveDfe(cursors[0], cursors.subarray(1), taps, limit);
   let interferenceSquared = 0;

@@ -13,36 +13,45 @@ export interface Workspace {
 
 /** What lies beyond may be cut off the ends: far below the smallest target bit error ratio, 1e-18. */
 const negligible = 1e-26;
-/** Amplitudes below this share of a bin are left to the Gaussian: hundreds of them make one, and their fourth moment is nil. */
+/**
+ * Amplitudes below this share of a bin are left to the Gaussian: hundreds of them make one. Beside noise of 8 bins or more, a thousand of
+ * 0.1 bins move a tail of 1e-15 by 0.4 %, usual ones by far less.
+ */
 const tooSmall = 0.02;
+const tooSmallBesideNoise = 0.1;
 
 /**
  * Density of a sum of terms that are each +a or -a with equal chance: intersymbol interference of NRZ, and of PAM4 as two such terms a cursor.
  *
  * Each term adds two shifted copies, all terms non-negative, so that tails keep their relative precision to any depth. An amplitude
- * between two bins is shared out among them. With `noisy`, linearly, above one bin: the variance that this adds, f (1 - f) a term, is returned, and taking it off the
- * noise leaves errors of third order; else, and below one bin, so that the variance is exact. Smallest first: most terms meet a narrow density.
- * @param amplitudes bins, in any order, all at least 0; sorted in place
+ * between two bins is, with `noisy`, shared out among them linearly; the variance that this adds, f (1 - f) a term, is returned, and taking
+ * it off the noise leaves errors of third order. Without noise to take it off it is rounded, what rounding left handed on to the next: the
+ * worst pattern stays where it is to half a bin. Smallest first: most terms meet a narrow density.
+ * @param amplitudes bins, in any order, all at least 0
  */
 export function evenDensity(amplitudes: Float64Array, noisy: boolean, space: Workspace): EvenDensity {
-  amplitudes.sort();
-  let reach = 0;
-  for (const a of amplitudes) reach += Math.floor(a) + 1;
-  ensure(space, 2 * reach + 4);
-  const first = amplitudes.findIndex((a) => a >= tooSmall);
-  const binned = first < 0 ? amplitudes.length : first;
+  const smallest = noisy ? tooSmallBesideNoise : tooSmall;
   let excess = 0;
-  for (let k = 0; k < binned; k++) excess -= amplitudes[k] ** 2;
+  for (const a of amplitudes) if (a < smallest) excess -= a * a;
+  const terms = amplitudes.filter((a) => a >= smallest).sort();
+  let reach = 0;
+  for (const a of terms) reach += Math.floor(a) + 1;
+  ensure(space, 2 * reach + 4);
   let size = 1;
   space.front[0] = 1;
-  for (let k = binned; k < amplitudes.length; k++) {
-    const a = amplitudes[k];
-    const n = Math.floor(a);
-    const f = a - n;
-    let far = n === 0 ? a * a : (a * a - n * n) / (2 * n + 1);
-    if (noisy && n > 0) {
-      far = f;
-      excess += f * (1 - f);
+  let carried = 0;
+  for (const a of terms) {
+    // below one bin: to 0 and to ±1, variance exact
+    let n = 0;
+    let far = a * a;
+    if (a >= 1 && noisy) {
+      n = Math.floor(a);
+      far = a - n;
+      excess += far * (1 - far);
+    } else if (a >= 1) {
+      n = Math.round(a + carried);
+      far = 0;
+      carried += a - n;
     }
     addShifted(space.front, space.back, size, n, far / 2);
     const kept = space.front;

@@ -15,10 +15,15 @@ const leastHeight = 0.5;
  * Source: IEEE 802.3 Annex 93A, sampling rule. Check value E-11.
  * @param pulse periodic; its largest value is positive
  * @param firstTapLimit 0 without a DFE
+ * @param peak index of the largest value
  */
-export function samplingInstant(pulse: Float64Array, samplesPerUi: number, firstTapLimit: number): number {
+export function samplingInstant(
+  pulse: Float64Array,
+  samplesPerUi: number,
+  firstTapLimit: number,
+  peak = peakOf(pulse),
+): number {
   const limit = Math.min(firstTapLimit, mostForTiming);
-  const peak = peakOf(pulse);
   const n = pulse.length;
   const sampleAt = (place: number) => pulse[((place % n) + n) % n];
   const balance = (value: (place: number) => number) => (place: number) => {
@@ -45,8 +50,7 @@ export function samplingInstant(pulse: Float64Array, samplesPerUi: number, first
   return peak;
 }
 
-/** Index of the largest value. */
-export function peakOf(record: Float64Array): number {
+function peakOf(record: Float64Array): number {
   let peak = 0;
   for (let i = 1; i < record.length; i++) if (record[i] > record[peak]) peak = i;
   return peak;
