@@ -2,7 +2,7 @@ import type { Model } from '../model/types';
 import { sameValue } from '../same-value';
 import { estimatedDecay, probeFrequencies } from './decay';
 import { chooseGrid, type Decay } from './grid';
-import { recipeOf } from './recipe';
+import { keptRecipe, recipeBasis, recipeOf } from './recipe';
 import { type Kept, openShelf } from './shelf';
 import type { TouchstoneResult } from './touchstone-types';
 import type { ElementNetwork, NetworkContext, Networks } from './types';
@@ -30,9 +30,11 @@ export function computeNetworks(
 ): Networks {
   const shelf = openShelf(previous?.kept as Kept | undefined);
   const base = { referenceOhms: model.referenceOhms, singleEnded: model.signalling === 'single-ended' };
+  const basis = recipeBasis(model);
+  const recipesBefore = shelf.recipesFor(basis);
   const recipes = model.elements.map((element) => {
     checkTime?.();
-    return recipeOf(element, model, touchstoneOf);
+    return keptRecipe(element, recipesBefore?.get(element.name)) ?? recipeOf(element, model, touchstoneOf);
   });
 
   const probing: NetworkContext = { ...base, frequencies: probeFrequencies(model.nyquistFrequency) };
@@ -52,6 +54,7 @@ export function computeNetworks(
     previous &&
     previous.grid === grid &&
     sameContext(previous.context, context) &&
+    recipesBefore &&
     sameElements(previous.elements, elements)
   ) {
     return previous;
@@ -60,7 +63,7 @@ export function computeNetworks(
   const without = elements
     .filter(({ element, through }) => through && element.includedIn === undefined)
     .map(({ element }) => element.name);
-  return { grid, context, elements, without, failures, kept: shelf.kept, computed: shelf.computed() };
+  return { grid, context, elements, without, failures, kept: shelf.keep(basis, recipes), computed: shelf.computed() };
 }
 
 const sameContext = (a: NetworkContext, b: NetworkContext) =>

@@ -1,5 +1,6 @@
 import { elementKinds } from '../elements/index';
 import type { AnyElement, Model } from '../model/types';
+import { sameValue } from '../same-value';
 import { straightThrough } from './through';
 import { prepareFile } from './touchstone-element';
 import type { TouchstoneResult } from './touchstone-types';
@@ -15,6 +16,34 @@ export interface Recipe {
   /** What a kind's code threw, which it never should. */
   readonly failure?: unknown;
 }
+
+/** What of the model an element's recipe may depend on, beside the element itself: never on other elements. */
+export function recipeBasis({
+  symbolRate,
+  signalling,
+  referenceOhms,
+  temperatureCelsius,
+  transmitter,
+  receiver,
+}: Model): unknown {
+  return { symbolRate, signalling, referenceOhms, temperatureCelsius, transmitter, receiver };
+}
+
+/**
+ * The recipe of before, if the element says the same: solving a geometry for its width is the dearest part of an edit. An element that moved
+ * in the path keeps its recipe too, unless that holds notes, which name places.
+ */
+export function keptRecipe(element: AnyElement, before: Recipe | undefined): Recipe | undefined {
+  if (!before || before.failure !== undefined || element.file) return undefined;
+  const moved = before.element.index !== element.index;
+  if (moved && before.prepared?.notes.length) return undefined;
+  return sameValue(withoutPlace(before.element, moved), withoutPlace(element, moved))
+    ? { ...before, element }
+    : undefined;
+}
+
+const withoutPlace = (element: AnyElement, moved: boolean) =>
+  moved ? { ...element, index: 0, place: 0, places: 0 } : element;
 
 /** A straight through for what is incomplete or already held by a neighbour's file; else the element's kind, or its file. */
 export function recipeOf(

@@ -1,3 +1,4 @@
+import { sameValue } from '../same-value';
 import { type Probe, probeOf } from './decay';
 import type { Recipe } from './recipe';
 import { straightThrough } from './through';
@@ -13,6 +14,9 @@ interface Used {
 export interface Kept {
   readonly current: Used;
   readonly last?: Used;
+  /** By the element's name, and what of the model they were made from. */
+  readonly recipes: ReadonlyMap<string, Recipe>;
+  readonly basis: unknown;
 }
 
 /** Gives each element's network and probe, computed at most once by content. A kind's failure gives a straight through and is told. */
@@ -22,7 +26,13 @@ export function openShelf(previous: Kept | undefined) {
   let computed = 0;
 
   return {
-    kept: { current, last: previous?.current } satisfies Kept as Kept,
+    recipesFor: (basis: unknown) => (previous && sameValue(previous.basis, basis) ? previous.recipes : undefined),
+    keep: (basis: unknown, recipes: readonly Recipe[]): Kept => ({
+      current,
+      last: previous?.current,
+      recipes: new Map(recipes.map((recipe) => [recipe.element.name, recipe])),
+      basis,
+    }),
     computed: () => computed,
 
     /** Undefined for what is no element: a straight through. */

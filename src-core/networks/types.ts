@@ -92,7 +92,9 @@ export interface Prepared<P = unknown> {
 /**
  * One kind of element.
  * `prepare` turns what is written into numbers; it never throws on user input: what is missing gives `undefined` (the model marks the
- * element incomplete before this, so that `prepare` may count on the required keys). `network` throws on a caller's mistake only.
+ * element incomplete before this, so that `prepare` may count on the required keys). Of the model it reads line rate, signalling,
+ * reference, temperature, transmitter and receiver, never other elements: its result is kept while those and the element are the same.
+ * `network` throws on a caller's mistake only.
  */
 export interface ElementKind<P = unknown> {
   prepare(element: AnyElement, context: PrepareContext): Prepared<P> | undefined;
