@@ -15,7 +15,7 @@ export function escapeMarkdown(text: string): string {
       .replace(/^(\s*)([-.\d])/, (_, space: string, first: string) =>
         /\d/.test(first) ? `${space}${first}` : `${space}\\${first}`,
       )
-      .replace(/^(\s*\d+)([.)])/, '$1\\$2')
+      .replace(/^(\s*\d+)([.)])(?=\s|$)/, '$1\\$2')
       .replace(/@(?=\w)/g, '@\u200b')
       .replace(/#(?=\d)/g, '#\u200b')
       .replace(/\b(https?|ftp|mailto|www)(?=[:.])/gi, '$1\u200b')

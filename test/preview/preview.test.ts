@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import type { Browser, BrowserContext } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, test } from 'vitest';
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, test, vi } from 'vitest';
 import type { ToPage } from '../../client/preview/messages';
 import type { PreviewData } from '../../src-core/plots/preview-data';
 import { exampleData } from '../../src-core/plots/testing';
@@ -16,6 +16,9 @@ const dataMessage = (data: PreviewData = exampleData()): ToPage => ({
   version: 1,
   data,
 });
+
+// A browser on a busy machine is slow; nothing here is timed.
+vi.setConfig({ testTimeout: 60_000 });
 
 let browser: Browser;
 let script: string;
@@ -242,6 +245,11 @@ describe('keyboard and pointer', () => {
     expect(svg).toMatchObject({ type: 'save', format: 'svg', name: 'insertion-loss' });
     expect(svg.content).toContain('<svg xmlns="http://www.w3.org/2000/svg"');
     expect(svg.content).not.toContain('var(');
+    const faults = await opened.page.evaluate(
+      (text) => new DOMParser().parseFromString(text, 'image/svg+xml').querySelectorAll('parsererror').length,
+      svg.content,
+    );
+    expect(faults).toBe(0);
     expect(csv.content.split('\r\n')[0]).toBe('Frequency (Hz),Whole path (dB),breakout to twinax (dB)');
   });
 });
