@@ -15,7 +15,13 @@ const TIME_FOR_ONE_FILE = 5000;
 /** What the server hands in: the core's functions, files, a clock. Tests hand in their own. */
 export interface AnalysesParts {
   readonly analyse: (inputs: Inputs, previous: Analysis | undefined, options: AnalyseOptions) => Analysis;
-  readonly gather: (files: Files, file: FilePath, today: string, previous: Inputs | undefined, parsed: Analysis['parsed'] | undefined) => Promise<Inputs>;
+  readonly gather: (
+    files: Files,
+    file: FilePath,
+    today: string,
+    previous: Inputs | undefined,
+    parsed: Analysis['parsed'] | undefined,
+  ) => Promise<Inputs>;
   readonly filesOf: (root: Root) => Files;
   readonly today: () => string;
   readonly now: () => number;
@@ -76,7 +82,8 @@ export function keepAnalyses(parts: AnalysesParts): Analyses {
   const computed: Record<string, number> = {};
   let running = 0;
 
-  const has = (entry: Entry, until: Until) => entry.doneGeneration === entry.generation && rank(entry.doneStage) >= rank(until);
+  const has = (entry: Entry, until: Until) =>
+    entry.doneGeneration === entry.generation && rank(entry.doneStage) >= rank(until);
 
   /** One stage further, or nothing if the text changed meanwhile. */
   async function advance(entry: Entry, until: Until): Promise<void> {
@@ -84,9 +91,17 @@ export function keepAnalyses(parts: AnalysesParts): Analyses {
     const overtaken = () => entry.closed || entry.generation !== generation;
     running++;
     try {
-      const inputs = await parts.gather(parts.filesOf(located.root), located.file, parts.today(), entry.analysis?.inputs, entry.analysis?.parsed);
+      const inputs = await parts.gather(
+        parts.filesOf(located.root),
+        located.file,
+        parts.today(),
+        entry.analysis?.inputs,
+        entry.analysis?.parsed,
+      );
       // From the start: a text never seen is read first, so that a wait for names is short and a cancellation is heard.
-      const stages = STAGES.filter((stage) => rank(stage) <= rank(until) && (stage !== 'model' || !entry.analysis || until === 'model'));
+      const stages = STAGES.filter(
+        (stage) => rank(stage) <= rank(until) && (stage !== 'model' || !entry.analysis || until === 'model'),
+      );
       for (const stage of stages) {
         if (overtaken()) return;
         if (has(entry, stage)) continue;
@@ -106,7 +121,8 @@ export function keepAnalyses(parts: AnalysesParts): Analyses {
     try {
       entry.analysis = parts.analyse(inputs, entry.analysis, { until: stage, outOfTime: () => parts.now() > end });
       entry.failure = undefined;
-      for (const [name, times] of Object.entries(entry.analysis.computed)) computed[name] = (computed[name] ?? 0) + times;
+      for (const [name, times] of Object.entries(entry.analysis.computed))
+        computed[name] = (computed[name] ?? 0) + times;
     } catch (error) {
       entry.analysis = undefined;
       entry.failure = error instanceof Error ? error.message : String(error);
@@ -115,7 +131,12 @@ export function keepAnalyses(parts: AnalysesParts): Analyses {
     entry.doneGeneration = generation;
     entry.doneStage = entry.failure === undefined ? stage : 'link';
     if (!entry.analysis || stage === 'model') return;
-    const renewed: Renewed = { located: entry.located, analysis: entry.analysis, stage, cause: isLaterStage && stage === 'link' ? 'stage' : entry.cause };
+    const renewed: Renewed = {
+      located: entry.located,
+      analysis: entry.analysis,
+      stage,
+      cause: isLaterStage && stage === 'link' ? 'stage' : entry.cause,
+    };
     for (const listener of listeners) listener(renewed);
   }
 
@@ -138,7 +159,10 @@ export function keepAnalyses(parts: AnalysesParts): Analyses {
         .then(() => {
           if (entry.closed) return;
           clearTimeout(entry.timer);
-          entry.timer = setTimeout(() => reach(entry, 'link').catch((error) => parts.failed(entry.located, error)), REST_BEFORE_LINK);
+          entry.timer = setTimeout(
+            () => reach(entry, 'link').catch((error) => parts.failed(entry.located, error)),
+            REST_BEFORE_LINK,
+          );
         })
         .catch((error) => parts.failed(entry.located, error));
     }, delay);
@@ -173,7 +197,8 @@ export function keepAnalyses(parts: AnalysesParts): Analyses {
       }
     },
     allChanged(root, soon = EDIT_PAUSE) {
-      for (const entry of entries.values()) if (!root || entry.located.root.key === root.key) renew(entry, 'used', soon);
+      for (const entry of entries.values())
+        if (!root || entry.located.root.key === root.key) renew(entry, 'used', soon);
     },
     async current(located, token, until = 'time') {
       const entry = entryOf(located);
@@ -183,7 +208,10 @@ export function keepAnalyses(parts: AnalysesParts): Analyses {
     },
     last: (located) => entryOf(located)?.analysis,
     failure: (located) => entryOf(located)?.failure,
-    all: () => [...entries.values()].flatMap(({ located, analysis, generation, doneGeneration }) => (analysis && generation === doneGeneration ? [{ located, analysis }] : [])),
+    all: () =>
+      [...entries.values()].flatMap(({ located, analysis, generation, doneGeneration }) =>
+        analysis && generation === doneGeneration ? [{ located, analysis }] : [],
+      ),
     busy: () => running > 0,
     computed: () => computed,
     onRenewed: (listener) => void listeners.push(listener),

@@ -12,7 +12,6 @@ export interface ClientAbilities {
   readonly snippets: boolean;
   readonly itemDefaults: boolean;
   readonly definitionLinks: boolean;
-  readonly disabledActions: boolean;
   readonly watchFiles: boolean;
   readonly progress: boolean;
   readonly folderChanges: boolean;
@@ -20,7 +19,9 @@ export interface ClientAbilities {
 
 export const NO_ABILITIES: ClientAbilities = abilitiesFrom({ processId: null, rootUri: null, capabilities: {} });
 
-export function abilitiesFrom({ capabilities: { workspace, textDocument, window } }: InitializeParams): ClientAbilities {
+export function abilitiesFrom({
+  capabilities: { workspace, textDocument, window },
+}: InitializeParams): ClientAbilities {
   const completion = textDocument?.completion;
   return {
     pullDiagnostics: textDocument?.diagnostic !== undefined,
@@ -33,7 +34,6 @@ export function abilitiesFrom({ capabilities: { workspace, textDocument, window 
     snippets: completion?.completionItem?.snippetSupport === true,
     itemDefaults: completion?.completionList?.itemDefaults?.includes('editRange') === true,
     definitionLinks: textDocument?.definition?.linkSupport === true,
-    disabledActions: textDocument?.codeAction?.disabledSupport === true,
     watchFiles: workspace?.didChangeWatchedFiles?.dynamicRegistration === true,
     progress: window?.workDoneProgress === true,
     folderChanges: workspace?.workspaceFolders === true,

@@ -30,7 +30,16 @@ export interface ClosedFilesParts {
 
 const TIME_FOR_ONE_FILE = 5000;
 
-export function keepClosedFiles({ services, ids, analyse, gather, today, now, pause, announce }: ClosedFilesParts): ClosedFiles {
+export function keepClosedFiles({
+  services,
+  ids,
+  analyse,
+  gather,
+  today,
+  now,
+  pause,
+  announce,
+}: ClosedFilesParts): ClosedFiles {
   const kept = new Map<string, { report: ClosedReport; root: string; dependsOn: ReadonlySet<FilePath> }>();
   return {
     async report(located, token) {
@@ -53,7 +62,9 @@ export function keepClosedFiles({ services, ids, analyse, gather, today, now, pa
           .filter(({ at, waivedBy }) => at.file === located.file && !waivedBy)
           .map((finding) => toDiagnostic(services, located, analysis, finding, text));
       } catch (error) {
-        services.log.error(`${located.file}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`);
+        services.log.error(
+          `${located.file}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`,
+        );
         items = [];
       } finally {
         await announce(located, false);

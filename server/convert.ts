@@ -1,4 +1,10 @@
-import { type Location, Position, Range, type TextEdit as ProtocolTextEdit, type WorkspaceEdit } from 'vscode-languageserver';
+import {
+  type Location,
+  Position,
+  type TextEdit as ProtocolTextEdit,
+  Range,
+  type WorkspaceEdit,
+} from 'vscode-languageserver';
 import type { FilePath, TextEdit, TextRange } from '../src-core/text/types';
 
 /** Line starts of one text, for quick changes between offsets and positions. Lines end with LF, CRLF or CR, as the protocol has it. */
@@ -42,10 +48,20 @@ export function offsetAt(text: string, { line, character }: Position): number {
   return Math.max(starts[line], Math.min(starts[line] + character, end));
 }
 
-export const toRange = (text: string, { start, end }: TextRange): Range => Range.create(positionAt(text, start), positionAt(text, end));
-export const fromRange = (text: string, { start, end }: Range): TextRange => ({ start: offsetAt(text, start), end: offsetAt(text, end) });
-export const toLocation = (uri: string, text: string, range: TextRange): Location => ({ uri, range: toRange(text, range) });
-export const toTextEdit = (text: string, edit: { range: TextRange; text: string }): ProtocolTextEdit => ({ range: toRange(text, edit.range), newText: edit.text });
+export const toRange = (text: string, { start, end }: TextRange): Range =>
+  Range.create(positionAt(text, start), positionAt(text, end));
+export const fromRange = (text: string, { start, end }: Range): TextRange => ({
+  start: offsetAt(text, start),
+  end: offsetAt(text, end),
+});
+export const toLocation = (uri: string, text: string, range: TextRange): Location => ({
+  uri,
+  range: toRange(text, range),
+});
+export const toTextEdit = (text: string, edit: { range: TextRange; text: string }): ProtocolTextEdit => ({
+  range: toRange(text, edit.range),
+  newText: edit.text,
+});
 
 /** Edits of several files as one change; with versions of open documents where the client can hold us to them. */
 export function toWorkspaceEdit(

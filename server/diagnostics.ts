@@ -26,9 +26,16 @@ export function rangeOfFinding(analysis: Analysis, { at, range }: Pick<Finding, 
 /** Every finding that the open files' analyses place in this file, once each. Waived ones are not shown. */
 export function diagnosticsOf(services: Services, located: Located): Diagnostic[] {
   const { analyses, skipped, documents } = services;
-  if (skipped.has(idOf(located))) return [notAnalysed('Opened without analysis: the server ended twice while it worked on this file. Choose “Analyse this file again” to try.', 'not-analysed')];
+  if (skipped.has(idOf(located)))
+    return [
+      notAnalysed(
+        'Opened without analysis: the server ended twice while it worked on this file. Choose “Analyse this file again” to try.',
+        'not-analysed',
+      ),
+    ];
   const failure = analyses.failure(located);
-  if (failure !== undefined) return [notAnalysed(`This text broke the analysis, which is a fault of ours: ${failure}`, 'internal-error')];
+  if (failure !== undefined)
+    return [notAnalysed(`This text broke the analysis, which is a fault of ours: ${failure}`, 'internal-error')];
   const found = new Map<string, Diagnostic>();
   for (const { located: source, analysis } of analyses.all()) {
     if (source.root.key !== located.root.key) continue;
@@ -45,7 +52,13 @@ export function diagnosticsOf(services: Services, located: Located): Diagnostic[
   return [...found.values()].slice(0, MOST_SHOWN);
 }
 
-export function toDiagnostic(services: Services, source: Located, analysis: Analysis, finding: Finding, text: string): Diagnostic {
+export function toDiagnostic(
+  services: Services,
+  source: Located,
+  analysis: Analysis,
+  finding: Finding,
+  text: string,
+): Diagnostic {
   const reference = services.rulesReference();
   const related = (finding.related ?? []).flatMap(({ at, message }) => {
     const parsed = analysis.parsed.get(at.file);

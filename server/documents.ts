@@ -25,7 +25,10 @@ export interface Documents {
 }
 
 /** What a document without a telling name is by its language. */
-const ENDINGS: Readonly<Record<string, string>> = { 'lanewright-channel': '.channel.yaml', 'lanewright-parts': '.parts.yaml' };
+const ENDINGS: Readonly<Record<string, string>> = {
+  'lanewright-channel': '.channel.yaml',
+  'lanewright-parts': '.parts.yaml',
+};
 
 export function followDocuments(roots: Roots): Documents {
   const texts = new TextDocuments(TextDocument);

@@ -1,6 +1,6 @@
 import type { Connection } from 'vscode-languageserver';
 import type { FileContent } from '../src-core/text/types';
-import { type FolderEntry, refusalOf, type RootFiles, sizeLimit } from './files';
+import { type FolderEntry, type RootFiles, refusalOf, sizeLimit } from './files';
 import { listFolderRequest, readFileRequest } from './protocol';
 import type { Root } from './roots';
 
@@ -13,7 +13,9 @@ export function clientFiles(connection: Connection, root: Root, uriOf: (file: st
       try {
         const limit = sizeLimit(file);
         const content = await connection.sendRequest(readFileRequest, { uri: uriOf(file), root: root.uri, limit });
-        return content.kind === 'text' && content.text.length > limit ? { kind: 'too-large', bytes: content.text.length, limit } : content;
+        return content.kind === 'text' && content.text.length > limit
+          ? { kind: 'too-large', bytes: content.text.length, limit }
+          : content;
       } catch {
         return { kind: 'refused', reason: 'the editor did not hand it out' };
       }

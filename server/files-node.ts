@@ -11,7 +11,8 @@ const SYSTEM_FOLDERS = ['/proc/', '/dev/', '/sys/'];
 const OPEN_FLAGS = constants.O_RDONLY | (constants.O_NONBLOCK ?? 0) | (constants.O_NOFOLLOW ?? 0);
 
 const absent = (error: unknown): undefined => {
-  if (['ENOENT', 'ENOTDIR', 'ELOOP', 'ENAMETOOLONG'].includes((error as NodeJS.ErrnoException).code ?? '')) return undefined;
+  if (['ENOENT', 'ENOTDIR', 'ELOOP', 'ENAMETOOLONG'].includes((error as NodeJS.ErrnoException).code ?? ''))
+    return undefined;
   throw error;
 };
 
@@ -50,7 +51,10 @@ export function nodeFiles(rootUri: string): RootFiles {
     async list(path): Promise<readonly FolderEntry[]> {
       if (path !== '' && refusalOf(path)) return [];
       try {
-        const [root, real] = await Promise.all([realpath(folder), realpath(path === '' ? folder : `${folder}/${path}`)]);
+        const [root, real] = await Promise.all([
+          realpath(folder),
+          realpath(path === '' ? folder : `${folder}/${path}`),
+        ]);
         if (real !== root && !real.startsWith(root.endsWith(sep) ? root : root + sep)) return [];
         const entries = await readdir(real, { withFileTypes: true });
         return entries

@@ -7,7 +7,9 @@ import type { Root } from './roots';
 import type { Services } from './services';
 
 /** One feature: given the services, answers one request. */
-export type Handler<Params, Result> = (services: Services) => (params: Params, token: CancellationToken) => Promise<Result>;
+export type Handler<Params, Result> = (
+  services: Services,
+) => (params: Params, token: CancellationToken) => Promise<Result>;
 
 /** A file with the analysis of its newest text. */
 export interface Analysed {
@@ -21,7 +23,13 @@ export interface Analysed {
 }
 
 /** Waits for the analysis of the newest text of an open file; undefined if there is none. */
-export async function located(services: Services, uri: string, token?: CancellationToken, position?: Position, until?: Until): Promise<Analysed | undefined> {
+export async function located(
+  services: Services,
+  uri: string,
+  token?: CancellationToken,
+  position?: Position,
+  until?: Until,
+): Promise<Analysed | undefined> {
   const { analyses, documents } = services;
   for (;;) {
     const document = documents.get(uri);
@@ -38,7 +46,11 @@ export async function located(services: Services, uri: string, token?: Cancellat
 }
 
 /** Answers a failure as an error, in the log too: one broken request ends nothing else. */
-export function guarded<Params, Result>(services: Services, name: string, handler: (params: Params, token: CancellationToken) => Promise<Result>) {
+export function guarded<Params, Result>(
+  services: Services,
+  name: string,
+  handler: (params: Params, token: CancellationToken) => Promise<Result>,
+) {
   return async (params: Params, token: CancellationToken): Promise<Result> => {
     if (token?.isCancellationRequested) throw new ResponseError(LSPErrorCodes.RequestCancelled, 'cancelled');
     try {
@@ -47,7 +59,10 @@ export function guarded<Params, Result>(services: Services, name: string, handle
       if (error instanceof ResponseError) throw error;
       const message = error instanceof Error ? (error.stack ?? error.message) : String(error);
       services.log.error(`${name}: ${message}`);
-      throw new ResponseError(LSPErrorCodes.RequestFailed, `${name} failed: ${error instanceof Error ? error.message : String(error)}`);
+      throw new ResponseError(
+        LSPErrorCodes.RequestFailed,
+        `${name} failed: ${error instanceof Error ? error.message : String(error)}`,
+      );
     }
   };
 }

@@ -28,15 +28,18 @@ export function keepFiles(files: RootFiles, now: () => number, lifetime: () => n
       forget(file);
       const entry = { content: files.read(file), size: 0, since: now() };
       kept.set(file, entry);
-      entry.content.then((content) => {
-        if (kept.get(file) !== entry || content.kind !== 'text') return;
-        entry.size = content.text.length;
-        total += entry.size;
-        for (const oldest of kept.keys()) {
-          if (total <= MOST_KEPT || oldest === file) break;
-          forget(oldest);
-        }
-      }, () => forget(file));
+      entry.content.then(
+        (content) => {
+          if (kept.get(file) !== entry || content.kind !== 'text') return;
+          entry.size = content.text.length;
+          total += entry.size;
+          for (const oldest of kept.keys()) {
+            if (total <= MOST_KEPT || oldest === file) break;
+            forget(oldest);
+          }
+        },
+        () => forget(file),
+      );
       return entry.content;
     },
     list: (folder) => files.list(folder),

@@ -12,11 +12,14 @@ const connection = createConnection(process.stdin, process.stdout);
 const { uriOf } = keepRoots();
 
 // A fault that nothing caught is told, and costs its own answer only.
-process.on('unhandledRejection', (reason) => connection.console.error(`unhandled: ${reason instanceof Error ? reason.stack : String(reason)}`));
+process.on('unhandledRejection', (reason) =>
+  connection.console.error(`unhandled: ${reason instanceof Error ? reason.stack : String(reason)}`),
+);
 
 const reference = join(__dirname, 'rules.md');
 startServer(connection, {
-  files: (root) => (root.uri.startsWith('file:') ? nodeFiles(root.uri) : clientFiles(connection, root, (file) => uriOf({ root, file }))),
+  files: (root) =>
+    root.uri.startsWith('file:') ? nodeFiles(root.uri) : clientFiles(connection, root, (file) => uriOf({ root, file })),
   now: () => performance.now(),
   ...(existsSync(reference) && { rulesReference: pathToFileURL(reference).href }),
   heapMegabytes: () => Math.round(process.memoryUsage().heapUsed / 1e5) / 10,

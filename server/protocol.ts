@@ -4,14 +4,24 @@ import type { FileContent, Place } from '../src-core/text/types';
 /** The requests and notifications beyond the language server protocol; the extension uses these names too. */
 
 /** Server to client, where the server has no disk: the text of a file, at most `limit` bytes of it. */
-export const readFileRequest = new RequestType<{ uri: string; root: string; limit: number }, FileContent, void>('lanewright/readFile');
+export const readFileRequest = new RequestType<{ uri: string; root: string; limit: number }, FileContent, void>(
+  'lanewright/readFile',
+);
 /** Server to client, where the server has no disk: the entries of a folder. */
-export const listFolderRequest = new RequestType<{ uri: string }, { name: string; kind: 'file' | 'folder' }[], void>('lanewright/listFolder');
+export const listFolderRequest = new RequestType<{ uri: string }, { name: string; kind: 'file' | 'folder' }[], void>(
+  'lanewright/listFolder',
+);
 
 /** Client to server: what the preview draws of a file, `null` if there is nothing yet. */
-export const previewRequest = new RequestType<{ uri: string }, { uri: string; version: number | null; data: unknown } | null, void>('lanewright/preview');
+export const previewRequest = new RequestType<
+  { uri: string },
+  { uri: string; version: number | null; data: unknown } | null,
+  void
+>('lanewright/preview');
 /** Server to client: ask again. `stale`: only the eye is older than the text. */
-export const previewChanged = new NotificationType<{ uri: string; version: number | null; stale: boolean }>('lanewright/previewChanged');
+export const previewChanged = new NotificationType<{ uri: string; version: number | null; stale: boolean }>(
+  'lanewright/previewChanged',
+);
 /** Server to client, before and after each piece of work on a file: what was running is then known if the server dies. */
 export const analysing = new NotificationType<{ uri: string; running: boolean }>('lanewright/analysing');
 
@@ -61,6 +71,10 @@ export const waiverRequest = new RequestType<
 >('lanewright/waiver');
 
 /** Client to server: where a place stands in the newest text, for a click in the preview. */
-export const rangeRequest = new RequestType<{ uri: string; place: Place }, { uri: string; range: Range } | null, void>('lanewright/range');
+export const rangeRequest = new RequestType<{ uri: string; place: Place }, { uri: string; range: Range } | null, void>(
+  'lanewright/range',
+);
 /** Client to server: the element whose lines hold a position, for the preview's mark. */
-export const elementAtRequest = new RequestType<{ uri: string; position: Position }, { element: string | null }, void>('lanewright/elementAt');
+export const elementAtRequest = new RequestType<{ uri: string; position: Position }, { element: string | null }, void>(
+  'lanewright/elementAt',
+);

@@ -35,7 +35,11 @@ export function publishRenewed(connection: Connection, services: Services, ids: 
   const push = (located: Located) => {
     const document = documents.at(located);
     const items = diagnosticsOf(services, located);
-    void connection.sendDiagnostics({ uri: documents.uriOf(located), ...(document && { version: document.version }), diagnostics: items });
+    void connection.sendDiagnostics({
+      uri: documents.uriOf(located),
+      ...(document && { version: document.version }),
+      diagnostics: items,
+    });
   };
 
   function renewed({ located, analysis, stage, cause }: Renewed): void {
@@ -44,7 +48,8 @@ export function publishRenewed(connection: Connection, services: Services, ids: 
     const touched = [...others, ...(placedIn.get(id) ?? [])];
     placedIn.set(id, others);
     if (services.client.pullDiagnostics) {
-      const isNews = (one: Located) => documents.at(one) && ids.lastServed(idOf(one)) !== ids.idFor(idOf(one), diagnosticsOf(services, one));
+      const isNews = (one: Located) =>
+        documents.at(one) && ids.lastServed(idOf(one)) !== ids.idFor(idOf(one), diagnosticsOf(services, one));
       // Its own edit makes the client ask by itself.
       const own = stage === 'link' || cause === 'used' ? [located] : [];
       if ([...own, ...touched].some(isNews)) ask('diagnostics');
@@ -65,7 +70,11 @@ export function publishRenewed(connection: Connection, services: Services, ids: 
       const state = `${rounds.get(id)} ${analysis.linkIsStale}`;
       if (previews.get(id) !== state) {
         previews.set(id, state);
-        void connection.sendNotification(previewChanged, { uri: document.uri, version: document.version, stale: analysis.linkIsStale });
+        void connection.sendNotification(previewChanged, {
+          uri: document.uri,
+          version: document.version,
+          stale: analysis.linkIsStale,
+        });
       }
     }
   }

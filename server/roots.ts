@@ -80,5 +80,8 @@ export function spelledAlike(uri: string): string {
       return escaped;
     }
   });
-  return decoded.replace(/^(file:\/\/\/)([A-Z]):/, (_all, start: string, drive: string) => `${start}${drive.toLowerCase()}:`);
+  return decoded.replace(
+    /^(file:\/\/\/)([A-Z]):/,
+    (_all, start: string, drive: string) => `${start}${drive.toLowerCase()}:`,
+  );
 }

@@ -12,7 +12,6 @@ import { abilitiesFrom, NO_ABILITIES } from './client-abilities';
 import { keepClosedFiles } from './closed-files';
 import { keepResultIds } from './diagnostics';
 import { followDocuments } from './documents';
-import { followWatchedFiles } from './watched-files';
 import { codeActions, FIX_ALL, resolveAction } from './features/actions';
 import { completion, resolveCompletion } from './features/completion';
 import { definition } from './features/definition';
@@ -33,11 +32,21 @@ import { type FilesFactory, type RootFiles, unsavedFirst } from './files';
 import { guarded, type Handler } from './handler';
 import { type KeptFiles, keepFiles } from './kept-files';
 import { keepProgress } from './progress';
-import { analyseAgain, analysing, elementAtRequest, type InitializationOptions, previewRequest, rangeRequest, statusRequest, waiverRequest } from './protocol';
+import {
+  analyseAgain,
+  analysing,
+  elementAtRequest,
+  type InitializationOptions,
+  previewRequest,
+  rangeRequest,
+  statusRequest,
+  waiverRequest,
+} from './protocol';
 import { publishRenewed } from './publish';
 import { idOf, keepRoots, type Root } from './roots';
 import type { Services } from './services';
 import { followSettings } from './settings';
+import { followWatchedFiles } from './watched-files';
 import { keepWorkspace } from './workspace';
 
 declare const LANEWRIGHT_VERSION: string | undefined;
@@ -64,7 +73,10 @@ export function startServer(connection: Connection, host: Host): void {
   const progress = keepProgress(connection, () => client.progress, now);
   const ids = keepResultIds();
   const today = () => options.today ?? new Date().toISOString().slice(0, 10);
-  const log = { info: (message: string) => connection.console.info(message), error: (message: string) => connection.console.error(message) };
+  const log = {
+    info: (message: string) => connection.console.info(message),
+    error: (message: string) => connection.console.error(message),
+  };
 
   // Clients that cannot watch files: what was read holds for a second.
   const kept = new Map<string, { disk: KeptFiles; files: RootFiles }>();
@@ -93,7 +105,8 @@ export function startServer(connection: Connection, host: Host): void {
     now,
     pause,
     announce,
-    failed: (located, error) => log.error(`${located.file}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`),
+    failed: (located, error) =>
+      log.error(`${located.file}: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}`),
   });
   const workspace = keepWorkspace(filesOf);
   const services: Services = {
@@ -127,12 +140,17 @@ export function startServer(connection: Connection, host: Host): void {
   connection.onInitialized(() => {
     settings.register();
     if (client.watchFiles) {
-      const watchers = ['**/*.channel.yaml', '**/*.parts.yaml', '**/lanewright.config.yaml', '**/*.s[0-9]*p'].map((globPattern) => ({ globPattern }));
+      const watchers = ['**/*.channel.yaml', '**/*.parts.yaml', '**/lanewright.config.yaml', '**/*.s[0-9]*p'].map(
+        (globPattern) => ({ globPattern }),
+      );
       connection.client.register(DidChangeWatchedFilesNotification.type, { watchers }).catch(() => undefined);
     }
     if (client.folderChanges) {
       connection.workspace.onDidChangeWorkspaceFolders(({ added, removed }) => {
-        roots.change(added.map(({ uri }) => uri), removed.map(({ uri }) => uri));
+        roots.change(
+          added.map(({ uri }) => uri),
+          removed.map(({ uri }) => uri),
+        );
         for (const { located } of analyses.all()) analyses.close(located);
         closed.clear();
         for (const document of documents.all()) if (isOurs(document.located.file)) analyses.open(document.located);
@@ -247,7 +265,9 @@ function capabilities({ capabilities: client }: InitializeParams): InitializeRes
     documentFormattingProvider: true,
     renameProvider: client.textDocument?.rename?.prepareSupport ? { prepareProvider: true } : true,
     inlayHintProvider: { resolveProvider: true },
-    ...(client.textDocument?.diagnostic && { diagnosticProvider: { identifier: 'lanewright', interFileDependencies: true, workspaceDiagnostics: true } }),
+    ...(client.textDocument?.diagnostic && {
+      diagnosticProvider: { identifier: 'lanewright', interFileDependencies: true, workspaceDiagnostics: true },
+    }),
     workspace: {
       workspaceFolders: { supported: true, changeNotifications: true },
       fileOperations: { willRename: { filters: files.map(({ pattern }) => ({ pattern })) } },

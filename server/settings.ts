@@ -2,7 +2,12 @@ import { type Connection, DidChangeConfigurationNotification, type InitializePar
 
 /** What a user may set; every key has the prefix `lanewright.`, and may differ by folder. */
 export interface Settings {
-  readonly hints: { readonly loss: boolean; readonly stub: boolean; readonly derived: boolean; readonly defaults: boolean };
+  readonly hints: {
+    readonly loss: boolean;
+    readonly stub: boolean;
+    readonly derived: boolean;
+    readonly defaults: boolean;
+  };
   readonly lens: boolean;
   /** Findings of files that are not open. */
   readonly workspaceDiagnostics: boolean;
@@ -31,7 +36,8 @@ export function followSettings(connection: Connection): SettingsFollower {
   let pushed: Settings = DEFAULT_SETTINGS;
   connection.onDidChangeConfiguration(({ settings }) => {
     kept.clear();
-    if (settings && typeof settings === 'object' && 'lanewright' in settings) pushed = settingsFrom(settings.lanewright);
+    if (settings && typeof settings === 'object' && 'lanewright' in settings)
+      pushed = settingsFrom(settings.lanewright);
     for (const listener of listeners) listener();
   });
   return {
@@ -54,18 +60,27 @@ export function followSettings(connection: Connection): SettingsFollower {
       canRegister = capabilities.workspace?.didChangeConfiguration?.dynamicRegistration === true;
     },
     register() {
-      if (canRegister) connection.client.register(DidChangeConfigurationNotification.type, { section: 'lanewright' }).catch(() => undefined);
+      if (canRegister)
+        connection.client
+          .register(DidChangeConfigurationNotification.type, { section: 'lanewright' })
+          .catch(() => undefined);
     },
   };
 }
 
 /** Takes what has the right type and the default for the rest: settings are typed by hand. */
 export function settingsFrom(given: unknown): Settings {
-  const at = (value: unknown, key: string): unknown => (value && typeof value === 'object' ? (value as Record<string, unknown>)[key] : undefined);
+  const at = (value: unknown, key: string): unknown =>
+    value && typeof value === 'object' ? (value as Record<string, unknown>)[key] : undefined;
   const flag = (value: unknown, byDefault: boolean) => (typeof value === 'boolean' ? value : byDefault);
   const hints = at(given, 'hints');
   return {
-    hints: { loss: flag(at(hints, 'loss'), true), stub: flag(at(hints, 'stub'), true), derived: flag(at(hints, 'derived'), true), defaults: flag(at(hints, 'defaults'), true) },
+    hints: {
+      loss: flag(at(hints, 'loss'), true),
+      stub: flag(at(hints, 'stub'), true),
+      derived: flag(at(hints, 'derived'), true),
+      defaults: flag(at(hints, 'defaults'), true),
+    },
     lens: flag(at(given, 'lens'), true),
     workspaceDiagnostics: flag(at(given, 'workspaceDiagnostics'), true),
   };

@@ -17,22 +17,36 @@ interface ActionData {
 }
 
 /** What answers the findings here. Only listed: an edit is worked out when it is chosen. */
-export const codeActions: Handler<CodeActionParams, CodeAction[] | null> = (services) => async ({ textDocument, range, context }, token) => {
-  const at = await located(services, textDocument.uri, token);
-  if (!at) return null;
-  const wanted = (kind: string) => !context.only || context.only.some((only) => kind === only || kind.startsWith(`${only}.`));
-  const actions: CodeAction[] = [];
-  if (wanted(CodeActionKind.QuickFix)) {
-    for (const action of actionsAt(at.analysis, at.file, fromRange(at.text, range))) actions.push(toCodeAction(services, at, textDocument.uri, action));
-  }
-  if (context.only && wanted(FIX_ALL)) {
-    const edits = fixAllOf(at.analysis, at.file);
-    if (edits.length > 0) actions.push({ title: 'Fix all that is safe', kind: FIX_ALL, edit: workspaceEdit(services, at.root, at.analysis.parsed, edits) });
-  }
-  return actions;
-};
+export const codeActions: Handler<CodeActionParams, CodeAction[] | null> =
+  (services) =>
+  async ({ textDocument, range, context }, token) => {
+    const at = await located(services, textDocument.uri, token);
+    if (!at) return null;
+    const wanted = (kind: string) =>
+      !context.only || context.only.some((only) => kind === only || kind.startsWith(`${only}.`));
+    const actions: CodeAction[] = [];
+    if (wanted(CodeActionKind.QuickFix)) {
+      for (const action of actionsAt(at.analysis, at.file, fromRange(at.text, range)))
+        actions.push(toCodeAction(services, at, textDocument.uri, action));
+    }
+    if (context.only && wanted(FIX_ALL)) {
+      const edits = fixAllOf(at.analysis, at.file);
+      if (edits.length > 0)
+        actions.push({
+          title: 'Fix all that is safe',
+          kind: FIX_ALL,
+          edit: workspaceEdit(services, at.root, at.analysis.parsed, edits),
+        });
+    }
+    return actions;
+  };
 
-function toCodeAction(services: Services, { analysis, root, file, text }: Analysed, uri: string, action: Action): CodeAction {
+function toCodeAction(
+  services: Services,
+  { analysis, root, file, text }: Analysed,
+  uri: string,
+  action: Action,
+): CodeAction {
   const { finding, title } = action;
   const diagnostics: Diagnostic[] = [toDiagnostic(services, { root, file }, analysis, finding, text)];
   if (action.kind === 'fix') {
@@ -40,13 +54,18 @@ function toCodeAction(services: Services, { analysis, root, file, text }: Analys
     return { title, kind: CodeActionKind.QuickFix, diagnostics, data, ...(action.preferred && { isPreferred: true }) };
   }
   const { rule, subject, valueText, message } = finding;
-  const argument: AcceptFinding = { uri, rule, at: subject ?? '', message, ...(valueText !== undefined && { value: valueText }) };
-  const refused = action.refused !== undefined && services.client.disabledActions;
+  const argument: AcceptFinding = {
+    uri,
+    rule,
+    at: subject ?? '',
+    message,
+    ...(valueText !== undefined && { value: valueText }),
+  };
   return {
     title,
     kind: CodeActionKind.QuickFix,
     diagnostics,
-    ...(refused ? { disabled: { reason: action.refused! } } : { command: { title, command: acceptFindingCommand, arguments: [argument] } }),
+    command: { title, command: acceptFindingCommand, arguments: [argument] },
   };
 }
 
@@ -55,5 +74,7 @@ export const resolveAction: Handler<CodeAction, CodeAction> = (services) => asyn
   if (uri === undefined || rule === undefined || title === undefined || place === undefined) return action;
   const at = await located(services, uri, token);
   const edits = at ? editsOfFix(at.analysis, rule, title, place) : [];
-  return at && edits.length > 0 ? { ...action, edit: workspaceEdit(services, at.root, at.analysis.parsed, edits) } : action;
+  return at && edits.length > 0
+    ? { ...action, edit: workspaceEdit(services, at.root, at.analysis.parsed, edits) }
+    : action;
 };

@@ -1,8 +1,16 @@
-import { type CompletionItem, CompletionItemKind, type CompletionList, type CompletionParams, InsertTextFormat, InsertTextMode, MarkupKind } from 'vscode-languageserver';
+import {
+  type CompletionItem,
+  CompletionItemKind,
+  type CompletionList,
+  type CompletionParams,
+  InsertTextFormat,
+  InsertTextMode,
+  MarkupKind,
+} from 'vscode-languageserver';
 import { type Completion, completionsAt } from '../../src-core/assist/completions';
 import { describeKeyAt } from '../../src-core/assist/describe-key';
 import { parseCached } from '../../src-core/inputs';
-import { toRange, offsetAt, toTextEdit } from '../convert';
+import { offsetAt, toRange, toTextEdit } from '../convert';
 import type { Handler } from '../handler';
 
 const KINDS: Readonly<Record<Completion['kind'], CompletionItemKind>> = {
@@ -21,19 +29,24 @@ interface ItemData {
 }
 
 /** What may be written here. The text is read anew; names come from the last analysis, so that no list waits for figures. */
-export const completion: Handler<CompletionParams, CompletionList | null> = (services) => async ({ textDocument, position }, token) => {
-  const document = services.documents.get(textDocument.uri);
-  if (!document) return null;
-  const { text, located } = document;
-  const { root, file } = located;
-  const parsed = parseCached(file, text);
-  const analysis = services.analyses.last(located) ?? (await services.analyses.current(located, token, 'model'));
-  const items = await completionsAt(parsed, analysis, offsetAt(text, position), {
-    list: (folder) => services.filesOf(root).list(folder),
-    library: () => services.workspace.library(root, token),
-  });
-  return { isIncomplete: items.some(({ kind }) => kind === 'unit'), items: items.map((item) => toItem(item, text, parsed.kind, services.client.snippets)) };
-};
+export const completion: Handler<CompletionParams, CompletionList | null> =
+  (services) =>
+  async ({ textDocument, position }, token) => {
+    const document = services.documents.get(textDocument.uri);
+    if (!document) return null;
+    const { text, located } = document;
+    const { root, file } = located;
+    const parsed = parseCached(file, text);
+    const analysis = services.analyses.last(located) ?? (await services.analyses.current(located, token, 'model'));
+    const items = await completionsAt(parsed, analysis, offsetAt(text, position), {
+      list: (folder) => services.filesOf(root).list(folder),
+      library: () => services.workspace.library(root, token),
+    });
+    return {
+      isIncomplete: items.some(({ kind }) => kind === 'unit'),
+      items: items.map((item) => toItem(item, text, parsed.kind, services.client.snippets)),
+    };
+  };
 
 function toItem(completion: Completion, text: string, fileKind: string, snippets: boolean): CompletionItem {
   const { label, kind, detail, insert, isSnippet, range, filter, rank, preselect, retrigger, also, about } = completion;
@@ -54,7 +67,8 @@ function toItem(completion: Completion, text: string, fileKind: string, snippets
   };
 }
 
-const withoutPlaceholders = (snippet: string) => snippet.replace(/\$\{\d+:((?:[^\\}]|\\.)*)\}|\$\d/g, '$1').replace(/\\([\\$}])/g, '$1');
+const withoutPlaceholders = (snippet: string) =>
+  snippet.replace(/\$\{\d+:((?:[^\\}]|\\.)*)\}|\$\d/g, '$1').replace(/\\([\\$}])/g, '$1');
 
 /** The explanation of a key, made for the one that is looked at. */
 export const resolveCompletion: Handler<CompletionItem, CompletionItem> = () => async (item) => {

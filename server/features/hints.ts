@@ -8,32 +8,43 @@ import type { Services } from '../services';
 import type { Settings } from '../settings';
 
 /** Figures beside the elements, for the part of the text that is seen. */
-export const inlayHints: Handler<InlayHintParams, InlayHint[] | null> = (services) => async ({ textDocument, range }, token) => {
-  const settings = await services.settings.of(textDocument.uri);
-  const at = await located(services, textDocument.uri, token);
-  if (!at) return null;
-  return hintsOf(at.analysis, at.file, fromRange(at.text, range))
-    .filter(({ kind }) => isWanted(settings, kind))
-    .map((hint) => toInlayHint(services, at, textDocument.uri, hint));
-};
+export const inlayHints: Handler<InlayHintParams, InlayHint[] | null> =
+  (services) =>
+  async ({ textDocument, range }, token) => {
+    const settings = await services.settings.of(textDocument.uri);
+    const at = await located(services, textDocument.uri, token);
+    if (!at) return null;
+    return hintsOf(at.analysis, at.file, fromRange(at.text, range))
+      .filter(({ kind }) => isWanted(settings, kind))
+      .map((hint) => toInlayHint(services, at, textDocument.uri, hint));
+  };
 
 const isWanted = ({ hints }: Settings, kind: Hint['kind']) => hints[kind];
 
 interface HintData {
   readonly uri: string;
-  readonly element: string;
+  readonly element?: string;
 }
 
-function toInlayHint(services: Services, { analysis, root, text }: Analysed, uri: string, { offset, label, kind, target, insert, element }: Hint): InlayHint {
+function toInlayHint(
+  services: Services,
+  { analysis, root, text }: Analysed,
+  uri: string,
+  { offset, label, kind, target, insert, element }: Hint,
+): InlayHint {
   const targetText = target && analysis.parsed.get(target.file);
-  const location = target && targetText && { uri: services.documents.uriOf({ root, file: target.file }), range: toRange(targetText.text, rangeOf(targetText, target)) };
+  const location = target &&
+    targetText && {
+      uri: services.documents.uriOf({ root, file: target.file }),
+      range: toRange(targetText.text, rangeOf(targetText, target)),
+    };
   return {
     position: positionAt(text, offset),
     label: [{ value: label, ...(location && { location }) }],
     paddingLeft: true,
     ...(kind === 'derived' && { kind: InlayHintKind.Parameter }),
     ...(insert && { textEdits: [toTextEdit(text, insert)] }),
-    data: { uri, element } satisfies HintData,
+    data: { uri, ...(element !== undefined && { element }) } satisfies HintData,
   };
 }
 
@@ -41,6 +52,8 @@ function toInlayHint(services: Services, { analysis, root, text }: Analysed, uri
 export const resolveHint: Handler<InlayHint, InlayHint> = (services) => async (hint, token) => {
   const { uri, element } = (hint.data ?? {}) as Partial<HintData>;
   const at = uri === undefined ? undefined : await located(services, uri, token);
-  const found = at?.analysis.model.elements.find(({ name }) => name === element);
-  return found ? { ...hint, tooltip: { kind: MarkupKind.Markdown, value: describeElement(at!.analysis, found) } } : hint;
+  const found = element === undefined ? undefined : at?.analysis.model.elements.find(({ name }) => name === element);
+  return found
+    ? { ...hint, tooltip: { kind: MarkupKind.Markdown, value: describeElement(at!.analysis, found) } }
+    : hint;
 };

@@ -1,5 +1,7 @@
 import type { Analysis } from '../analysis';
 import { isAcceptable } from '../rules/add-waivers';
+import { rules } from '../rules/list';
+import { reportedByStages } from '../rules/reported';
 import type { Finding } from '../rules/types';
 import { resolveEdits } from '../text/edits';
 import { rangeOf } from '../text/index';
@@ -7,8 +9,14 @@ import type { FilePath, PlaceEdit, TextEdit, TextRange } from '../text/types';
 
 /** Something that answers a finding. The edits are places until they are asked for. */
 export type Action =
-  | { readonly kind: 'fix'; readonly title: string; readonly finding: Finding; readonly preferred: boolean; readonly edits: readonly PlaceEdit[] }
-  | { readonly kind: 'accept'; readonly title: string; readonly finding: Finding; /** Why it cannot be accepted. */ readonly refused?: string };
+  | {
+      readonly kind: 'fix';
+      readonly title: string;
+      readonly finding: Finding;
+      readonly preferred: boolean;
+      readonly edits: readonly PlaceEdit[];
+    }
+  | { readonly kind: 'accept'; readonly title: string; readonly finding: Finding };
 
 /** What can be done about the findings that touch a range; in the order of the findings, fixes before acceptance. */
 export function actionsAt(analysis: Analysis, file: FilePath, range: TextRange): readonly Action[] {
@@ -24,17 +32,31 @@ export function actionsAt(analysis: Analysis, file: FilePath, range: TextRange):
     const onlyOne = fixes.length === 1;
     const accept = acceptance(analysis, finding);
     return [
-      ...fixes.map(({ title, edits, preferred }): Action => ({ kind: 'fix', title, finding, preferred: preferred ?? onlyOne, edits })),
+      ...fixes.map(
+        ({ title, edits, preferred }): Action => ({
+          kind: 'fix',
+          title,
+          finding,
+          preferred: preferred ?? onlyOne,
+          edits,
+        }),
+      ),
       ...(accept ? [accept] : []),
     ];
   });
 }
 
 function acceptance(analysis: Analysis, finding: Finding): Action | undefined {
-  const title = `Accept this finding… (${finding.rule})`;
-  if (isAcceptable(finding, analysis.model.file)) return { kind: 'accept', title, finding };
-  return undefined;
+  if (cannotBeRead.has(finding.rule) || !isAcceptable(finding, analysis.model.file)) return undefined;
+  return { kind: 'accept', title: `Accept this finding… (${finding.rule})`, finding };
 }
+
+/** Errors of what is written: they are mended, not accepted. */
+const cannotBeRead: ReadonlySet<string> = new Set(
+  rules
+    .filter(({ severity, check }) => severity === 'error' && (check as unknown) === reportedByStages)
+    .map(({ name }) => name),
+);
 
 /** One safe fix for each finding that has one, as long as they do not touch each other: what may be done unasked. */
 export function fixAllOf(analysis: Analysis, file: FilePath): readonly TextEdit[] {
@@ -45,7 +67,10 @@ export function fixAllOf(analysis: Analysis, file: FilePath): readonly TextEdit[
     const fix = safe.find(({ preferred }) => preferred) ?? (safe.length === 1 ? safe[0] : undefined);
     if (!fix) continue;
     const edits = resolveEdits(fix.edits, analysis.parsed);
-    const isFree = edits.every((edit) => edit.file === file && taken.every(({ range }) => edit.range.end < range.start || edit.range.start > range.end));
+    const isFree = edits.every(
+      (edit) =>
+        edit.file === file && taken.every(({ range }) => edit.range.end < range.start || edit.range.start > range.end),
+    );
     if (isFree) taken.push(...edits);
   }
   return taken;

@@ -7,7 +7,11 @@ import { relativePath } from './names';
 const MOST_FOUND = 200;
 
 /** Paths for `use` and `touchstone`, relative to this file, never outside the root; undefined where no path is wanted. */
-export async function completePaths(parsed: ParsedFile, cursor: Cursor, { list, library }: Surroundings): Promise<readonly Completion[] | undefined> {
+export async function completePaths(
+  parsed: ParsedFile,
+  cursor: Cursor,
+  { list, library }: Surroundings,
+): Promise<readonly Completion[] | undefined> {
   const wanted = wantedKind(cursor);
   if (!wanted) return undefined;
   const quote = /^['"]/.test(cursor.typed) ? 1 : 0;
@@ -20,12 +24,40 @@ export async function completePaths(parsed: ParsedFile, cursor: Cursor, { list, 
   const entries = (await list(folder)).slice(0, MOST_FOUND);
   const found = entries.flatMap(({ name, kind }): Completion[] => {
     if (kind === 'folder') {
-      return name.startsWith('.') || name === 'node_modules' ? [] : [{ label: `${name}/`, kind: 'folder', insert: `${name}/`, isSnippet: false, range, filter: name, rank: 200, retrigger: true }];
+      return name.startsWith('.') || name === 'node_modules'
+        ? []
+        : [
+            {
+              label: `${name}/`,
+              kind: 'folder',
+              insert: `${name}/`,
+              isSnippet: false,
+              range,
+              filter: name,
+              rank: 200,
+              retrigger: true,
+            },
+          ];
     }
-    return fileKind(name) === wanted && `${folder}/${name}` !== parsed.file ? [{ label: name, kind: 'file', insert: name, isSnippet: false, range, filter: name, rank: 0 }] : [];
+    return fileKind(name) === wanted && `${folder}/${name}` !== parsed.file
+      ? [{ label: name, kind: 'file', insert: name, isSnippet: false, range, filter: name, rank: 0 }]
+      : [];
   });
   const above: Completion[] =
-    folder === '' || !/^(\.\.\/)*$/.test(typed.slice(0, slash)) ? [] : [{ label: '../', kind: 'folder', insert: '../', isSnippet: false, range, filter: '../', rank: 300, retrigger: true }];
+    folder === '' || !/^(\.\.\/)*$/.test(typed.slice(0, slash))
+      ? []
+      : [
+          {
+            label: '../',
+            kind: 'folder',
+            insert: '../',
+            isSnippet: false,
+            range,
+            filter: '../',
+            rank: 300,
+            retrigger: true,
+          },
+        ];
   return [...found, ...(slash === 0 && wanted === 'parts' ? await knownParts(parsed, range, library) : []), ...above];
 }
 
@@ -41,11 +73,17 @@ function folderOf(file: string, written: string): string | undefined {
 }
 
 /** Every parts file of the folder that is open, wherever it lies. */
-async function knownParts(parsed: ParsedFile, range: Completion['range'], library: Surroundings['library']): Promise<Completion[]> {
+async function knownParts(
+  parsed: ParsedFile,
+  range: Completion['range'],
+  library: Surroundings['library'],
+): Promise<Completion[]> {
   const files = library ? [...(await library()).keys()] : [];
   const own = parsed.file.split('/').slice(0, -1).join('/');
   return files
-    .filter((file) => fileKind(file) === 'parts' && file !== parsed.file && file.split('/').slice(0, -1).join('/') !== own)
+    .filter(
+      (file) => fileKind(file) === 'parts' && file !== parsed.file && file.split('/').slice(0, -1).join('/') !== own,
+    )
     .slice(0, MOST_FOUND)
     .map((file): Completion => {
       const path = relativePath(parsed.file, file);

@@ -1,8 +1,8 @@
-import { entryLists } from '../../schemas/generated/format';
 import type { NameRole } from '../../schemas/format/types';
+import { entryLists } from '../../schemas/generated/format';
 import type { Analysis } from '../analysis';
 import { freeName, type KeyInfo, keySchemaAt } from '../format/index';
-import { show } from '../quantity/show';
+import { exactly, show } from '../quantity/show';
 import { unitsOf } from '../quantity/units';
 import { rules } from '../rules/list';
 import type { ParsedFile } from '../text/parsed';
@@ -14,19 +14,27 @@ import { kindOfEntry } from './subject';
 import { unusedNames } from './unused-names';
 
 /** Names, choices, units and examples for the value under the cursor. */
-export async function completeValues(parsed: ParsedFile, analysis: Analysis | undefined, cursor: Cursor, around: Surroundings): Promise<readonly Completion[]> {
+export async function completeValues(
+  parsed: ParsedFile,
+  analysis: Analysis | undefined,
+  cursor: Cursor,
+  around: Surroundings,
+): Promise<readonly Completion[]> {
   const kind = kindOfEntry(cursor.levels) ?? kindBeingNamed(cursor);
   const inList = typeof cursor.path.at(-1) === 'number';
   const path = inList ? cursor.path.slice(0, -1) : cursor.path;
   const key = keySchemaAt(parsed.kind, path, kind);
   const name = String(path.at(-1) ?? '');
-  if (path[0] === 'parts' && path.length === 3 && name === 'kind') return entryLists.parts.kinds.map((one, rank) => plain(cursor, one, 'value', rank));
-  if (parsed.kind === 'config' && path[0] === 'rules') return ['error', 'warning', 'info', 'hint', 'off'].map((one, rank) => plain(cursor, one, 'value', rank));
+  if (path[0] === 'parts' && path.length === 3 && name === 'kind')
+    return entryLists.parts.kinds.map((one, rank) => plain(cursor, one, 'value', rank));
+  if (parsed.kind === 'config' && path[0] === 'rules')
+    return ['error', 'warning', 'info', 'hint', 'off'].map((one, rank) => plain(cursor, one, 'value', rank));
   if (path[0] === 'waivers' && name === 'at') return subjects(analysis, cursor);
   if (!key) return [];
   if (key.refers) return referable(parsed, analysis, cursor, key.refers, name, around, kind);
-  if (key.declares === 'element' || key.declares === 'limit') return [plain(cursor, nameFor(analysis, name), 'name', 0)];
-  if (key.quantity) return quantities(cursor, key);
+  if (key.declares === 'element' || key.declares === 'limit')
+    return [plain(cursor, nameFor(analysis, name), 'name', 0)];
+  if (key.quantity) return quantities(cursor, key, analysis);
   return key.choices.map((one, rank) => plain(cursor, one, 'value', rank, one === key.default ? 'default' : undefined));
 }
 
@@ -51,28 +59,75 @@ function nameFor(analysis: Analysis | undefined, kind: string): string {
 
 function subjects(analysis: Analysis | undefined, cursor: Cursor): Completion[] {
   const rule = cursor.levels.at(-1)?.keys.get('rule');
-  const found = (analysis?.findings ?? []).filter((finding) => finding.rule === rule).flatMap(({ subject }) => (subject === undefined ? [] : [subject]));
-  const names = [...new Set([...found, ...(analysis?.model.limits ?? []).map(({ name }) => name), ...(analysis?.model.elements ?? []).map(({ name }) => name)])];
-  return names.map((name, rank) => ({ ...plain(cursor, name, 'name', rank, found.includes(name) ? 'has this finding' : undefined), ...(rank === 0 && found.length > 0 && { preselect: true }) }));
+  const found = (analysis?.findings ?? [])
+    .filter((finding) => finding.rule === rule)
+    .flatMap(({ subject }) => (subject === undefined ? [] : [subject]));
+  const names = [
+    ...new Set([
+      ...found,
+      ...(analysis?.model.limits ?? []).map(({ name }) => name),
+      ...(analysis?.model.elements ?? []).map(({ name }) => name),
+    ]),
+  ];
+  return names.map((name, rank) => ({
+    ...plain(cursor, name, 'name', rank, found.includes(name) ? 'has this finding' : undefined),
+    ...(rank === 0 && found.length > 0 && { preselect: true }),
+  }));
 }
 
-async function referable(parsed: ParsedFile, analysis: Analysis | undefined, cursor: Cursor, role: NameRole, key: string, around: Surroundings, kind: string | undefined): Promise<readonly Completion[]> {
+async function referable(
+  parsed: ParsedFile,
+  analysis: Analysis | undefined,
+  cursor: Cursor,
+  role: NameRole,
+  key: string,
+  around: Surroundings,
+  kind: string | undefined,
+): Promise<readonly Completion[]> {
   const model = analysis?.model;
   switch (role) {
     case 'element':
-      return (model?.elements ?? []).filter(({ index }) => index !== cursor.path[1] || cursor.path[0] !== 'path').map((element, rank) => plain(cursor, element.name, 'name', rank, element.kind));
+      return (model?.elements ?? [])
+        .filter(({ index }) => index !== cursor.path[1] || cursor.path[0] !== 'path')
+        .map((element, rank) => plain(cursor, element.name, 'name', rank, element.kind));
     case 'layer':
       return analysis ? layers(analysis, cursor, key) : [];
     case 'part': {
       const names = (model?.names.parts ?? []).filter((part) => !kind || !part.kind || part.kind === kind);
-      return [...names.flatMap((part) => writings(cursor, part.writtenAs, part.kind)), ...(await unusedNames(parsed, cursor, 'part', around, kind))];
+      return [
+        ...names.flatMap((part) => writings(cursor, part.writtenAs, part.kind)),
+        ...(await unusedNames(parsed, cursor, 'part', around, kind)),
+      ];
     }
     case 'stackup':
-      return [...(model?.names.stackups ?? []).flatMap(({ writtenAs, stackup }) => writings(cursor, writtenAs, stackup && show.count(stackup.layers.filter(({ type }) => type === 'copper'), 'copper layer'))), ...(await unusedNames(parsed, cursor, 'stackup', around, kind))];
+      return [
+        ...(model?.names.stackups ?? []).flatMap(({ writtenAs, stackup }) =>
+          writings(
+            cursor,
+            writtenAs,
+            stackup &&
+              show.count(
+                stackup.layers.filter(({ type }) => type === 'copper'),
+                'copper layer',
+              ),
+          ),
+        ),
+        ...(await unusedNames(parsed, cursor, 'stackup', around, kind)),
+      ];
     case 'material':
-      return namesIn(parsed, 'materials', cursor, model?.names.materials.map(({ writtenAs }) => writtenAs));
+      return namesIn(
+        parsed,
+        'materials',
+        cursor,
+        model?.names.materials.map(({ writtenAs }) => writtenAs),
+      );
     case 'foil':
-      return namesIn(parsed, 'foils', cursor, model?.names.foils.map(({ writtenAs }) => writtenAs));
+      return namesIn(
+        parsed,
+        'foils',
+        cursor,
+        model?.names.foils.map(({ writtenAs }) => writtenAs),
+      );
     case 'owner':
       return ownersOf(parsed, analysis).map((owner, rank) => plain(cursor, owner, 'name', rank));
     case 'rule':
@@ -86,7 +141,12 @@ async function referable(parsed: ParsedFile, analysis: Analysis | undefined, cur
 const writings = (cursor: Cursor, writtenAs: readonly string[], detail: string | undefined): Completion[] =>
   writtenAs.map((text) => plain(cursor, text, 'name', text.includes('.') ? 0 : 10, detail));
 
-function namesIn(parsed: ParsedFile, section: string, cursor: Cursor, known: readonly (readonly string[])[] | undefined): Completion[] {
+function namesIn(
+  parsed: ParsedFile,
+  section: string,
+  cursor: Cursor,
+  known: readonly (readonly string[])[] | undefined,
+): Completion[] {
   const value = isRecord(parsed.value) ? parsed.value[section] : undefined;
   const own = isRecord(value) ? Object.keys(value) : [];
   return [...new Set([...own, ...(known ?? []).flat()])].map((name, rank) => plain(cursor, name, 'name', rank));
@@ -94,7 +154,12 @@ function namesIn(parsed: ParsedFile, section: string, cursor: Cursor, known: rea
 
 function ownersOf(parsed: ParsedFile, analysis: Analysis | undefined): string[] {
   const value = isRecord(parsed.value) ? parsed.value.owners : undefined;
-  return [...new Set([...(isRecord(value) ? Object.keys(value) : []), ...(analysis?.model.elements ?? []).flatMap(({ owner }) => (owner === undefined ? [] : [owner]))])];
+  return [
+    ...new Set([
+      ...(isRecord(value) ? Object.keys(value) : []),
+      ...(analysis?.model.elements ?? []).flatMap(({ owner }) => (owner === undefined ? [] : [owner])),
+    ]),
+  ];
 }
 
 /** Copper layers of the stackup, top to bottom; the likely one is marked, planes come last. */
@@ -105,7 +170,13 @@ function layers(analysis: Analysis, cursor: Cursor, key: string): Completion[] {
   return stackup.layers
     .filter((layer) => layer.type === 'copper')
     .map((layer, index) => ({
-      ...plain(cursor, layer.name, 'name', (layer.plane ? 100 : 0) + index + (layer.name === likely ? -50 : 0), layer.plane ? 'plane' : show.length(layer.thicknessMeters)),
+      ...plain(
+        cursor,
+        layer.name,
+        'name',
+        (layer.plane ? 100 : 0) + index + (layer.name === likely ? -50 : 0),
+        layer.plane ? 'plane' : show.length(layer.thicknessMeters),
+      ),
       ...(layer.name === likely && { preselect: true }),
     }));
 }
@@ -114,16 +185,26 @@ const NUMBER = /^([-+]?(?:\d+\.?\d*|\.\d+)(?:e[-+]?\d+)?)\s*([A-Za-zµμΩ/]*)$/
 const AT = /^(.*\S)\s*@\s*(?:([-+]?(?:\d+\.?\d*|\.\d+)(?:e[-+]?\d+)?)\s*)?([A-Za-z]*)$/;
 
 /** Behind a number its units; behind `@` frequencies; where nothing is typed yet, examples. */
-function quantities(cursor: Cursor, { quantity, examples, default: byDefault }: KeyInfo): Completion[] {
+function quantities(
+  cursor: Cursor,
+  { quantity, examples, default: byDefault }: KeyInfo,
+  analysis: Analysis | undefined,
+): Completion[] {
   const typed = cursor.typed;
   const dimensions = quantity?.dimensions ?? [];
   const units = dimensions.flatMap((dimension) => unitsOf(dimension));
   const upToCursor = { start: cursor.token.start, end: cursor.token.start + typed.length };
   const at = AT.exec(typed);
   if (at && quantity?.at && quantity.at !== 'never') {
-    const nyquist = quantity.at === 'nyquist' && at[2] === undefined ? ['nyquist'] : [];
+    const figure = analysis?.model.computable ? [exactly(analysis.model.nyquistFrequency, 'frequency')] : [];
+    const nyquist = at[2] !== undefined ? [] : quantity.at === 'nyquist' ? ['nyquist'] : figure;
     const frequencies = at[2] === undefined ? [] : unitsOf('frequency').map(({ text }) => `${at[2]} ${text}`);
-    return [...nyquist, ...frequencies].map((one, rank) => ({ ...plain(cursor, `@ ${one}`, 'unit', rank), insert: `${at[1]} @ ${one}`, filter: `${at[1]} @ ${one}`, range: upToCursor }));
+    return [...nyquist, ...frequencies].map((one, rank) => ({
+      ...plain(cursor, `@ ${one}`, 'unit', rank),
+      insert: `${at[1]} @ ${one}`,
+      filter: `${at[1]} @ ${one}`,
+      range: upToCursor,
+    }));
   }
   const number = NUMBER.exec(typed);
   if (number) {
@@ -138,8 +219,11 @@ function quantities(cursor: Cursor, { quantity, examples, default: byDefault }: 
     }));
   }
   if (typed !== '') return [];
-  return [...examples, ...(byDefault !== undefined && /^\d/.test(byDefault) ? [byDefault] : [])].map((one, rank) => plain(cursor, one, 'value', rank, one === byDefault ? 'default' : 'example'));
+  return [...examples, ...(byDefault !== undefined && /^\d/.test(byDefault) ? [byDefault] : [])].map((one, rank) =>
+    plain(cursor, one, 'value', rank, one === byDefault ? 'default' : 'example'),
+  );
 }
 
 /** The units that the examples use: the likely ones. */
-const commonUnits = (examples: readonly string[]): string[] => examples.flatMap((one) => /^\[?[-+\d.e]+\s*([A-Za-z/]+)/.exec(one)?.[1] ?? []);
+const commonUnits = (examples: readonly string[]): string[] =>
+  examples.flatMap((one) => /^\[?[-+\d.e]+\s*([A-Za-z/]+)/.exec(one)?.[1] ?? []);

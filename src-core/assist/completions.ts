@@ -42,19 +42,37 @@ export interface Surroundings {
  * What may be written at an offset of a text that need not parse.
  * @param analysis of this text or of one before: names come from it
  */
-export async function completionsAt(parsed: ParsedFile, analysis: Analysis | undefined, offset: number, around: Surroundings): Promise<readonly Completion[]> {
+export async function completionsAt(
+  parsed: ParsedFile,
+  analysis: Analysis | undefined,
+  offset: number,
+  around: Surroundings,
+): Promise<readonly Completion[]> {
   const cursor = cursorAt(parsed.text, offset);
   if (!cursor || !['channel', 'parts', 'config'].includes(parsed.kind)) return [];
-  const found = cursor.on === 'value' ? await valuesAt(parsed, analysis, cursor, around) : [...completeKeys(parsed, analysis, cursor), ...(await listValues(parsed, analysis, cursor, around))];
+  const found =
+    cursor.on === 'value'
+      ? await valuesAt(parsed, analysis, cursor, around)
+      : [...completeKeys(parsed, analysis, cursor), ...(await listValues(parsed, analysis, cursor, around))];
   return found.map((one) => (cursor.needsSpace ? { ...one, insert: ` ${one.insert}`, filter: `${one.filter}` } : one));
 }
 
-async function valuesAt(parsed: ParsedFile, analysis: Analysis | undefined, cursor: Cursor, around: Surroundings): Promise<readonly Completion[]> {
+async function valuesAt(
+  parsed: ParsedFile,
+  analysis: Analysis | undefined,
+  cursor: Cursor,
+  around: Surroundings,
+): Promise<readonly Completion[]> {
   const paths = await completePaths(parsed, cursor, around);
   return paths ?? completeValues(parsed, analysis, cursor, around);
 }
 
 /** A plain value of a block list: `includes:` with one name a line. */
-async function listValues(parsed: ParsedFile, analysis: Analysis | undefined, cursor: Cursor, around: Surroundings): Promise<readonly Completion[]> {
+async function listValues(
+  parsed: ParsedFile,
+  analysis: Analysis | undefined,
+  cursor: Cursor,
+  around: Surroundings,
+): Promise<readonly Completion[]> {
   return cursor.on === 'item' && cursor.path.length > 2 ? completeValues(parsed, analysis, cursor, around) : [];
 }

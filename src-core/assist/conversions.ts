@@ -41,24 +41,38 @@ export function conversionsOf(quantity: Quantity, model: Model): readonly Row[] 
       if (model.computable) rows.push(['Of Nyquist', show.percent(value / model.nyquistFrequency)]);
       break;
     case 'bitRate':
-      if (ui) rows.push(['Unit interval', show.time(ui)], ['Nyquist frequency', show.frequency(model.nyquistFrequency)]);
+      if (ui)
+        rows.push(['Unit interval', show.time(ui)], ['Nyquist frequency', show.frequency(model.nyquistFrequency)]);
       break;
     case 'loss':
       rows.push(['What is left of the amplitude', show.percent(10 ** (-Math.abs(value) / 20))]);
       break;
     case 'delayPerLength':
-      rows.push(['Effective dielectric constant', show.ratio((value * SPEED_OF_LIGHT) ** 2)], ['Velocity', show.velocity(1 / value)]);
+      rows.push(
+        ['Effective dielectric constant', show.ratio((value * SPEED_OF_LIGHT) ** 2)],
+        ['Velocity', show.velocity(1 / value)],
+      );
       break;
     case 'velocity':
-      if (value > 0) rows.push(['Delay', show.delayPerLength(1 / value)], ['Effective dielectric constant', show.ratio((SPEED_OF_LIGHT / value) ** 2)]);
+      if (value > 0)
+        rows.push(
+          ['Delay', show.delayPerLength(1 / value)],
+          ['Effective dielectric constant', show.ratio((SPEED_OF_LIGHT / value) ** 2)],
+        );
       break;
     case 'impedance':
-      if (model.computable && value > 0) rows.push(['Reflection against the reference', show.ratio((value - model.referenceOhms) / (value + model.referenceOhms))]);
+      if (model.computable && value > 0)
+        rows.push([
+          'Reflection against the reference',
+          show.ratio((value - model.referenceOhms) / (value + model.referenceOhms)),
+        ]);
       break;
     default:
   }
-  if (quantity.plus > 0 || quantity.minus > 0) rows.push(['From, to', show.rangeOf(value - quantity.minus, value + quantity.plus, dimension)]);
-  if (quantity.at === 'nyquist' && model.computable) rows.push(['Nyquist frequency', show.frequency(model.nyquistFrequency)]);
+  if (quantity.plus > 0 || quantity.minus > 0)
+    rows.push(['From, to', show.rangeOf(value - quantity.minus, value + quantity.plus, dimension)]);
+  if (quantity.at === 'nyquist' && model.computable)
+    rows.push(['Nyquist frequency', show.frequency(model.nyquistFrequency)]);
   return rows;
 }
 

@@ -5,12 +5,24 @@ import { atCursor } from './testing';
 const seen = (marked: string) => {
   const { text, offset } = atCursor(marked);
   const cursor = cursorAt(text, offset);
-  return cursor && { path: cursor.path, on: cursor.on, typed: cursor.typed, keys: [...(cursor.levels.at(-1)?.keys.keys() ?? [])] };
+  return (
+    cursor && {
+      path: cursor.path,
+      on: cursor.on,
+      typed: cursor.typed,
+      keys: [...(cursor.levels.at(-1)?.keys.keys() ?? [])],
+    }
+  );
 };
 
 describe('in blocks', () => {
   test('a key at the top', () => {
-    expect(seen('lanewright: 1\nli‸\npath:\n')).toEqual({ path: [], on: 'key', typed: 'li', keys: ['lanewright', 'path'] });
+    expect(seen('lanewright: 1\nli‸\npath:\n')).toEqual({
+      path: [],
+      on: 'key',
+      typed: 'li',
+      keys: ['lanewright', 'path'],
+    });
   });
   test('an empty line inside an entry, its other keys seen above and below', () => {
     expect(seen('path:\n  - trace: a\n    layer: L1\n    ‸\n    length: 3 mm\n  - via: b\n')).toEqual({
@@ -34,8 +46,18 @@ describe('in blocks', () => {
     expect(seen('path:\n  - trace: ‸')).toEqual({ path: ['path', 0, 'trace'], on: 'value', typed: '', keys: [] });
   });
   test('a nested mapping', () => {
-    expect(seen('path:\n  - via: a\n    backdrill:\n      bo‸')).toEqual({ path: ['path', 0, 'backdrill'], on: 'key', typed: 'bo', keys: [] });
-    expect(seen('transmitter:\n  swing: 1 V\n  ‸')).toEqual({ path: ['transmitter'], on: 'key', typed: '', keys: ['swing'] });
+    expect(seen('path:\n  - via: a\n    backdrill:\n      bo‸')).toEqual({
+      path: ['path', 0, 'backdrill'],
+      on: 'key',
+      typed: 'bo',
+      keys: [],
+    });
+    expect(seen('transmitter:\n  swing: 1 V\n  ‸')).toEqual({
+      path: ['transmitter'],
+      on: 'key',
+      typed: '',
+      keys: ['swing'],
+    });
   });
   test('nothing is offered in a comment', () => {
     expect(seen('path: # al‸')).toBeUndefined();
@@ -45,17 +67,32 @@ describe('in blocks', () => {
 describe('in flow', () => {
   test('keys and values of an entry', () => {
     expect(seen('path:\n  - { via: dive, ‸ }')).toEqual({ path: ['path', 0], on: 'key', typed: '', keys: ['via'] });
-    expect(seen('path:\n  - { via: dive, to: L‸, drill: 1 mm }')).toEqual({ path: ['path', 0, 'to'], on: 'value', typed: 'L', keys: ['via', 'drill'] });
+    expect(seen('path:\n  - { via: dive, to: L‸, drill: 1 mm }')).toEqual({
+      path: ['path', 0, 'to'],
+      on: 'value',
+      typed: 'L',
+      keys: ['via', 'drill'],
+    });
   });
   test('nested, and lists', () => {
-    expect(seen('path:\n  - via: a\n    backdrill: { ‸')).toEqual({ path: ['path', 0, 'backdrill'], on: 'key', typed: '', keys: [] });
+    expect(seen('path:\n  - via: a\n    backdrill: { ‸')).toEqual({
+      path: ['path', 0, 'backdrill'],
+      on: 'key',
+      typed: '',
+      keys: [],
+    });
     expect(seen('limits:\n  - eye: a\n    between: [one, tw‸]')).toEqual({
       path: ['limits', 0, 'between', 1],
       on: 'value',
       typed: 'tw',
       keys: ['eye'],
     });
-    expect(seen('materials:\n  core: { dk: { through: 3, ‸ } }')).toEqual({ path: ['materials', 'core', 'dk'], on: 'key', typed: '', keys: ['through'] });
+    expect(seen('materials:\n  core: { dk: { through: 3, ‸ } }')).toEqual({
+      path: ['materials', 'core', 'dk'],
+      on: 'key',
+      typed: '',
+      keys: ['through'],
+    });
   });
   test('a bracket that was forgotten above does not count', () => {
     expect(seen('transmitter: { swing: 1 V\npath:\n  - trace: a\n    ‸')?.path).toEqual(['path', 0]);
@@ -63,6 +100,15 @@ describe('in flow', () => {
 });
 
 test('rows of a stackup', () => {
-  expect(seen('stackups:\n  main:\n    - { copper: L1, ‸ }')).toEqual({ path: ['stackups', 'main', 0], on: 'key', typed: '', keys: ['copper'] });
-  expect(seen('stackups:\n  main:\n    - { copper: L1, thickness: 1 um }\n    - { ‸')?.path).toEqual(['stackups', 'main', 1]);
+  expect(seen('stackups:\n  main:\n    - { copper: L1, ‸ }')).toEqual({
+    path: ['stackups', 'main', 0],
+    on: 'key',
+    typed: '',
+    keys: ['copper'],
+  });
+  expect(seen('stackups:\n  main:\n    - { copper: L1, thickness: 1 um }\n    - { ‸')?.path).toEqual([
+    'stackups',
+    'main',
+    1,
+  ]);
 });

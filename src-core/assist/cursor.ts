@@ -44,7 +44,8 @@ interface LineParts {
   readonly valueColumn: number;
 }
 
-const KEY = /^((?:"[^"\n]{0,200}"|'[^'\n]{0,200}'|[^\s:#{}[\],&*!|>'"%@`-][^:#{}[\],\n]{0,200}|-[^\s:#{}[\],\n][^:#{}[\],\n]{0,200}))\s*:(?=\s|$)/;
+const KEY =
+  /^((?:"[^"\n]{0,200}"|'[^'\n]{0,200}'|[^\s:#{}[\],&*!|>'"%@`-][^:#{}[\],\n]{0,200}|-[^\s:#{}[\],\n][^:#{}[\],\n]{0,200}))\s*:(?=\s|$)/;
 
 function partsOf(start: number, text: string): LineParts {
   let column = 0;
@@ -60,7 +61,17 @@ function partsOf(start: number, text: string): LineParts {
   const match = blank ? null : KEY.exec(rest);
   if (!match) return { start, text, indent, blank, dashes, column, value: rest, valueColumn: column };
   const colon = column + match[0].length;
-  return { start, text, indent, blank, dashes, column, key: bare(match[1]), value: withoutComment(text.slice(colon)).trim(), valueColumn: colon };
+  return {
+    start,
+    text,
+    indent,
+    blank,
+    dashes,
+    column,
+    key: bare(match[1]),
+    value: withoutComment(text.slice(colon)).trim(),
+    valueColumn: colon,
+  };
 }
 
 const bare = (key: string) => (/^(['"]).*\1$/.test(key) ? key.slice(1, -1) : key).trim();
@@ -106,8 +117,11 @@ interface Bracket {
 function openBrackets(lines: readonly LineParts[], cursorColumn: number): Bracket[] {
   let open: Bracket[] = [];
   lines.forEach((line, number) => {
-    if (open.length > 0 && !line.blank && line.indent <= lines[open[0].line].indent && !/^\s*[}\]]/.test(line.text)) open = [];
-    const visible = withoutComment(outsideQuotes(number === lines.length - 1 ? line.text.slice(0, cursorColumn) : line.text));
+    if (open.length > 0 && !line.blank && line.indent <= lines[open[0].line].indent && !/^\s*[}\]]/.test(line.text))
+      open = [];
+    const visible = withoutComment(
+      outsideQuotes(number === lines.length - 1 ? line.text.slice(0, cursorColumn) : line.text),
+    );
     for (let column = 0; column < visible.length; column++) {
       const sign = visible[column];
       // Inside a plain scalar of a block a bracket is text; it opens only where a value begins.
@@ -174,7 +188,15 @@ function climb(lines: readonly LineParts[], column: number, isDash: boolean): { 
   // The rest of the outermost mapping, and what was collected last.
   for (let i = lines.length - 2; i >= 0; i--) {
     const line = lines[i];
-    if (line.key !== undefined && line.dashes.length === 0 && line.column === 0 && limit === 0 && !dash && !keys.has(line.key)) keys.set(line.key, line.value);
+    if (
+      line.key !== undefined &&
+      line.dashes.length === 0 &&
+      line.column === 0 &&
+      limit === 0 &&
+      !dash &&
+      !keys.has(line.key)
+    )
+      keys.set(line.key, line.value);
   }
   keysByDepth.push(keys);
   keysByDepth.reverse();
@@ -207,7 +229,14 @@ function inBlock(text: string, offset: number, lines: readonly LineParts[], curs
   const line = lines.at(-1)!;
   const lineStop = line.start + line.text.length;
   const value = line.key !== undefined && cursorColumn >= line.valueColumn;
-  const finish = (path: ValuePath, levels: readonly Level[], on: Cursor['on'], token: TextRange, column: number, more: Partial<Cursor> = {}): Cursor => ({
+  const finish = (
+    path: ValuePath,
+    levels: readonly Level[],
+    on: Cursor['on'],
+    token: TextRange,
+    column: number,
+    more: Partial<Cursor> = {},
+  ): Cursor => ({
     path,
     on,
     levels,
@@ -225,9 +254,14 @@ function inBlock(text: string, offset: number, lines: readonly LineParts[], curs
     const keys = new Map(last?.keys);
     keys.delete(line.key!);
     const start = line.start + line.valueColumn + /^\s*/.exec(line.text.slice(line.valueColumn))![0].length;
-    const token = { start: Math.min(start, offset), end: Math.max(offset, Math.min(lineStop, line.start + withoutComment(line.text).trimEnd().length)) };
+    const token = {
+      start: Math.min(start, offset),
+      end: Math.max(offset, Math.min(lineStop, line.start + withoutComment(line.text).trimEnd().length)),
+    };
     const all = [...levels.slice(0, -1), { path, keys }];
-    return finish([...path, line.key!], all, 'value', token, line.column, { needsSpace: line.text[cursorColumn - 1] === ':' });
+    return finish([...path, line.key!], all, 'value', token, line.column, {
+      needsSpace: line.text[cursorColumn - 1] === ':',
+    });
   }
   const lastDash = line.dashes.at(-1);
   if (lastDash !== undefined && cursorColumn > lastDash) {
@@ -247,10 +281,17 @@ function inBlock(text: string, offset: number, lines: readonly LineParts[], curs
   const last = withKeysBelow(text, offset, column, levels.at(-1));
   const keys = new Map(last?.keys);
   if (line.key !== undefined) keys.delete(line.key);
-  return finish(path, [...levels.slice(0, -1), { path, keys }], 'key', token, column, { hasColon: line.key !== undefined });
+  return finish(path, [...levels.slice(0, -1), { path, keys }], 'key', token, column, {
+    hasColon: line.key !== undefined,
+  });
 }
 
-function inFlow(text: string, offset: number, lines: readonly LineParts[], open: readonly Bracket[]): Cursor | undefined {
+function inFlow(
+  text: string,
+  offset: number,
+  lines: readonly LineParts[],
+  open: readonly Bracket[],
+): Cursor | undefined {
   const first = open[0];
   const opener = lines[first.line];
   const upTo = lines.slice(0, first.line + 1);
@@ -293,7 +334,15 @@ function inFlow(text: string, offset: number, lines: readonly LineParts[], open:
   return result;
 }
 
-function flowCursor(text: string, offset: number, path: ValuePath, levels: readonly Level[], on: Cursor['on'], start: number, bracket: Bracket): Cursor {
+function flowCursor(
+  text: string,
+  offset: number,
+  path: ValuePath,
+  levels: readonly Level[],
+  on: Cursor['on'],
+  start: number,
+  bracket: Bracket,
+): Cursor {
   const end = wordEnd(text, offset, on === 'key' ? /[:,}\]\n\r\s]/ : /[,}\]\n\r]/);
   const trimmed = end - (text.slice(offset, end).length - text.slice(offset, end).trimEnd().length);
   const from = Math.min(start, offset);

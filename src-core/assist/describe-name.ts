@@ -51,35 +51,80 @@ function describeLayer(analysis: Analysis, { within, name }: Identity): string |
   if (!layers || !layer) return undefined;
   const above = layers.slice(0, index).reduce((sum, one) => sum + one.thicknessMeters, 0);
   const total = layers.reduce((sum, one) => sum + one.thicknessMeters, 0);
-  const rows: Row[] = [['Thickness', show.length(layer.thicknessMeters)], ...layerRows(layer), ['Depth', `${show.length(above)} of ${show.length(total)}`]];
-  const neighbours = [layers[index - 1], layers[index + 1]].flatMap((one) => (one ? [`${code(one.name)} ${show.length(one.thicknessMeters)}`] : []));
-  return page(`**${plainText(name)}**: ${layerKind(layer)} of ${code(within ?? '')}`, [...rows, ['Between', neighbours.join(' and ')]]);
+  const rows: Row[] = [
+    ['Thickness', show.length(layer.thicknessMeters)],
+    ...layerRows(layer),
+    ['Depth', `${show.length(above)} of ${show.length(total)}`],
+  ];
+  const neighbours = [layers[index - 1], layers[index + 1]].flatMap((one) =>
+    one ? [`${code(one.name)} ${show.length(one.thicknessMeters)}`] : [],
+  );
+  return page(`**${plainText(name)}**: ${layerKind(layer)} of ${code(within ?? '')}`, [
+    ...rows,
+    ['Between', neighbours.join(' and ')],
+  ]);
 }
 
-const layerKind = (layer: StackupLayer) => (layer.type === 'copper' ? (layer.plane ? 'plane' : 'signal layer') : layer.type);
+const layerKind = (layer: StackupLayer) =>
+  layer.type === 'copper' ? (layer.plane ? 'plane' : 'signal layer') : layer.type;
 
 function layerRows(layer: StackupLayer): Row[] {
-  if (layer.type !== 'copper') return [['Dielectric constant', `${show.ratio(layer.material.dkThrough.value)} at ${show.frequency(layer.material.dkThrough.atHz)}`], ['Loss tangent', show.ratio(layer.material.df.value)]];
+  if (layer.type !== 'copper')
+    return [
+      [
+        'Dielectric constant',
+        `${show.ratio(layer.material.dkThrough.value)} at ${show.frequency(layer.material.dkThrough.atHz)}`,
+      ],
+      ['Loss tangent', show.ratio(layer.material.df.value)],
+    ];
   const { roughness, conductivity } = layer.foil;
-  const surface = roughness.kind === 'rms' ? `${show.length(roughness.rmsMeters)} rms` : roughness.kind === 'huray' ? `spheres of ${show.length(roughness.radiusMeters)}, ratio ${show.ratio(roughness.ratio)}` : 'smooth';
-  return [['Conductivity', show.conductivity(conductivity)], ['Roughness', surface]];
+  const surface =
+    roughness.kind === 'rms'
+      ? `${show.length(roughness.rmsMeters)} rms`
+      : roughness.kind === 'huray'
+        ? `spheres of ${show.length(roughness.radiusMeters)}, ratio ${show.ratio(roughness.ratio)}`
+        : 'smooth';
+  return [
+    ['Conductivity', show.conductivity(conductivity)],
+    ['Roughness', surface],
+  ];
 }
 
-function describeShared(analysis: Analysis, role: 'stackup' | 'material' | 'foil' | 'part', { file, name }: Identity): string | undefined {
+function describeShared(
+  analysis: Analysis,
+  role: 'stackup' | 'material' | 'foil' | 'part',
+  { file, name }: Identity,
+): string | undefined {
   const value = sharedValue(analysis.parsed.get(file), role, name);
   if (value === undefined) return undefined;
   const rows: Row[] = [];
   if (role === 'stackup') {
-    const stackup = analysis.model.names.stackups.find((entry) => entry.name === name && entry.stackup?.place.file === file)?.stackup;
+    const stackup = analysis.model.names.stackups.find(
+      (entry) => entry.name === name && entry.stackup?.place.file === file,
+    )?.stackup;
     const copper = stackup?.layers.filter((layer) => layer.type === 'copper') ?? [];
     if (stackup) {
-      rows.push(['Copper layers', String(copper.length)], ['Thickness', show.length(stackup.layers.reduce((sum, layer) => sum + layer.thicknessMeters, 0))]);
-      rows.push(['Signals', copper.filter(({ plane }) => !plane).map((layer) => code(layer.name)).join(' ')]);
+      rows.push(
+        ['Copper layers', String(copper.length)],
+        ['Thickness', show.length(stackup.layers.reduce((sum, layer) => sum + layer.thicknessMeters, 0))],
+      );
+      rows.push([
+        'Signals',
+        copper
+          .filter(({ plane }) => !plane)
+          .map((layer) => code(layer.name))
+          .join(' '),
+      ]);
     }
   } else if (isRecord(value)) {
-    for (const [key, one] of Object.entries(value).slice(0, 7)) if (typeof one === 'string' || typeof one === 'number') rows.push([plainText(key), code(String(one))]);
+    for (const [key, one] of Object.entries(value).slice(0, 7))
+      if (typeof one === 'string' || typeof one === 'number') rows.push([plainText(key), code(String(one))]);
     if (role === 'part') {
-      const users = analysis.model.elements.filter((element) => element.places.part && Object.values(element.places).some((place) => place.file === file && place.path[1] === name));
+      const users = analysis.model.elements.filter(
+        (element) =>
+          element.places.part &&
+          Object.values(element.places).some((place) => place.file === file && place.path[1] === name),
+      );
       if (users.length > 0) rows.push(['Placed as', users.map((element) => code(element.name)).join(', ')]);
     }
   }

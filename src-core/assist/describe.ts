@@ -32,29 +32,48 @@ export function describeAt(analysis: Analysis, file: FilePath, offset: number): 
 
 function describe(analysis: Analysis, file: FilePath, subject: Subject, offset: number): string | undefined {
   const { path, kind, key } = subject;
-  const element = file === analysis.model.file && path[0] === 'path' ? analysis.model.elements.find(({ index }) => index === path[1]) : undefined;
+  const element =
+    file === analysis.model.file && path[0] === 'path'
+      ? analysis.model.elements.find(({ index }) => index === path[1])
+      : undefined;
   if (element && path.length === 3 && path[2] === element.kind) return describeElement(analysis, element);
-  const limit = path[0] === 'limits' && path.length === 3 && path[2] === kind ? describeLimit(analysis, file, Number(path[1])) : undefined;
+  const limit =
+    path[0] === 'limits' && path.length === 3 && path[2] === kind
+      ? describeLimit(analysis, file, Number(path[1]))
+      : undefined;
   if (limit) return limit;
   if (subject.on === 'value') {
-    const quantity = key?.quantity && !key.quantity.band ? readQuantity(subject.text, key.quantity).quantity : undefined;
+    const quantity =
+      key?.quantity && !key.quantity.band ? readQuantity(subject.text, key.quantity).quantity : undefined;
     if (quantity && key) return describeQuantity(analysis, key, quantity, element);
     const name = describeName(analysis, file, offset);
     if (name) return name;
   }
-  return key && describeKey(analysis, key, element, path.length === 1 && path[0] === 'path' && file === analysis.model.file);
+  return (
+    key && describeKey(analysis, key, element, path.length === 1 && path[0] === 'path' && file === analysis.model.file)
+  );
 }
 
 function describeKey(analysis: Analysis, key: KeyInfo, element: AnyElement | undefined, isPath: boolean): string {
   const rows: Row[] = [...keyRows(key)];
   const written = element && (element.values as Record<string, unknown>)[key.key];
-  if (isPath) rows.push(...analysis.figures.slice(0, 6).map(({ title, text }): Row => [title, `${analysis.linkIsStale ? '~ ' : ''}${text}`]));
+  if (isPath)
+    rows.push(
+      ...analysis.figures
+        .slice(0, 6)
+        .map(({ title, text }): Row => [title, `${analysis.linkIsStale ? '~ ' : ''}${text}`]),
+    );
   else if (isQuantity(written)) rows.push(['Here', show.quantity(written)]);
   const growth = element && key.key === 'length' ? (growthOf(analysis, element) ?? '') : '';
   return page(`**${plainText(key.key)}**: ${plainText(key.description)}`, rows, [growth]);
 }
 
-function describeQuantity(analysis: Analysis, key: KeyInfo, quantity: Quantity, element: AnyElement | undefined): string {
+function describeQuantity(
+  analysis: Analysis,
+  key: KeyInfo,
+  quantity: Quantity,
+  element: AnyElement | undefined,
+): string {
   const rows: Row[] = [...conversionsOf(quantity, analysis.model)];
   const row = element && analysis.ledger?.rows.find(({ index }) => index === element.index);
   const figure = (name: string) => row?.figures.find((one) => one.name === name)?.text;
@@ -63,7 +82,8 @@ function describeQuantity(analysis: Analysis, key: KeyInfo, quantity: Quantity, 
     if (loss !== undefined) rows.push(['Loss at Nyquist', loss]);
     if (delay !== undefined) rows.push(['Delay', delay]);
   }
-  if (key.key === 'budget' && row?.budget) rows.push(['Spent', `${row.budget.text}, ${show.percent(row.budget.share)}`]);
+  if (key.key === 'budget' && row?.budget)
+    rows.push(['Spent', `${row.budget.text}, ${show.percent(row.budget.share)}`]);
   const growth = element && key.key === 'length' ? (growthOf(analysis, element) ?? '') : '';
   return page(`**${plainText(key.key)}** ${show.quantity(quantity)}: ${plainText(key.description)}`, rows, [growth]);
 }
@@ -78,7 +98,10 @@ function describeLimit(analysis: Analysis, file: FilePath, index: number): strin
     ['Here', outcome.actual.text],
     ['In hand', show.percent(outcome.marginShare)],
   ];
-  return page(`**${plainText(limit.name)}**: ${limit.kind}, ${outcome.met ? 'met' : 'missed'}`, rows, [plainText(outcome.text)]);
+  return page(`**${plainText(limit.name)}**: ${limit.kind}, ${outcome.met ? 'met' : 'missed'}`, rows, [
+    plainText(outcome.text),
+  ]);
 }
 
-const isQuantity = (value: unknown): value is Quantity => typeof value === 'object' && value !== null && 'dimension' in value && 'value' in value;
+const isQuantity = (value: unknown): value is Quantity =>
+  typeof value === 'object' && value !== null && 'dimension' in value && 'value' in value;

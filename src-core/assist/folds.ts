@@ -19,7 +19,8 @@ export function foldsOf(text: string): readonly Fold[] {
   let lastContent = -1;
   let commentStart = -1;
   const endComment = (line: number) => {
-    if (commentStart >= 0 && line - commentStart > 1) folds.push({ startLine: commentStart, endLine: line - 1, kind: 'comment' });
+    if (commentStart >= 0 && line - commentStart > 1)
+      folds.push({ startLine: commentStart, endLine: line - 1, kind: 'comment' });
     commentStart = -1;
   };
   const close = (indent: number) => {
@@ -32,7 +33,8 @@ export function foldsOf(text: string): readonly Fold[] {
     const trimmed = line.trimStart();
     if (trimmed.startsWith('#')) {
       if (/^#\s*region\b/.test(trimmed)) regions.push(number);
-      else if (/^#\s*endregion\b/.test(trimmed) && regions.length > 0) folds.push({ startLine: regions.pop()!, endLine: number, kind: 'region' });
+      else if (/^#\s*endregion\b/.test(trimmed) && regions.length > 0)
+        folds.push({ startLine: regions.pop()!, endLine: number, kind: 'region' });
       else if (commentStart < 0) commentStart = number;
       return;
     }

@@ -16,9 +16,24 @@ test('text in blocks and quotes is the author’s', () => {
 });
 
 test('a second time changes nothing', () => {
-  const piece = fc.constantFrom('a: 1', '  b: 2 ', '', '', '- x', "'", '"', 'c: |', '    deep  ', '# note  ', '\r', 'path:');
-  fc.assert(fc.property(fc.array(piece), fc.constantFrom('\n', '\r\n'), (lines, end) => {
-    const once = formatText(lines.join(end));
-    expect(formatText(once)).toBe(once);
-  }));
+  const piece = fc.constantFrom(
+    'a: 1',
+    '  b: 2 ',
+    '',
+    '',
+    '- x',
+    "'",
+    '"',
+    'c: |',
+    '    deep  ',
+    '# note  ',
+    '\r',
+    'path:',
+  );
+  fc.assert(
+    fc.property(fc.array(piece), fc.constantFrom('\n', '\r\n'), (lines, end) => {
+      const once = formatText(lines.join(end));
+      expect(formatText(once)).toBe(once);
+    }),
+  );
 });

@@ -8,7 +8,7 @@ export function formatText(text: string): string {
   const kept: string[] = [];
   let blockIndent = -1;
   let quote = '';
-  for (const line of text.split(/\r\n|\n/)) {
+  for (const line of text.split(/\r\n|\n|\r/)) {
     const indent = line.length - line.trimStart().length;
     const isBlank = line.trim() === '';
     if (blockIndent >= 0 && (isBlank || indent > blockIndent)) {

@@ -13,7 +13,8 @@ export function growthOf(analysis: Analysis, element: AnyElement): string | unde
   const network = networks?.elements[element.index];
   const length = network?.prepared?.facts.lengthMeters;
   if (!networks || !network || network.through || !length) return undefined;
-  const lossPerMeter = (frequency: number) => insertionLossAt(network.network.differential, networks.grid, frequency) / length;
+  const lossPerMeter = (frequency: number) =>
+    insertionLossAt(network.network.differential, networks.grid, frequency) / length;
   const rooms: { meters: number; by: string }[] = [];
   const add = (inHandDb: number, frequency: number, by: string) => {
     const slope = lossPerMeter(frequency);
@@ -24,10 +25,15 @@ export function growthOf(analysis: Analysis, element: AnyElement): string | unde
     const limit = model.limits.find(({ name }) => name === outcome.name);
     const [from, to] = limit?.between ?? [0, model.elements.length - 1];
     if (element.index < from || element.index > to) continue;
-    add(outcome.limit.value - outcome.actual.value, outcome.atHz ?? model.nyquistFrequency, `limit ${code(outcome.name)}`);
+    add(
+      outcome.limit.value - outcome.actual.value,
+      outcome.atHz ?? model.nyquistFrequency,
+      `limit ${code(outcome.name)}`,
+    );
   }
   const row = ledger?.rows.find(({ index }) => index === element.index);
-  const at = (frequency: number | 'nyquist' | undefined) => (typeof frequency === 'number' ? frequency : model.nyquistFrequency);
+  const at = (frequency: number | 'nyquist' | undefined) =>
+    typeof frequency === 'number' ? frequency : model.nyquistFrequency;
   if (row?.budget) add(row.budget.allowedDb - row.budget.spentDb, at(element.budget?.at), 'its budget');
   const owner = ledger?.owners.find((one) => one.owner === element.owner);
   if (owner?.allowedDb !== undefined) {
@@ -36,7 +42,8 @@ export function growthOf(analysis: Analysis, element: AnyElement): string | unde
   }
   const least = rooms.sort((a, b) => a.meters - b.meters)[0];
   if (!least) return undefined;
-  if (least.meters >= 0) return `May grow by about ${show.length(least.meters)}, to ${show.length(length + least.meters)}, until ${least.by} is met.`;
+  if (least.meters >= 0)
+    return `May grow by about ${show.length(least.meters)}, to ${show.length(length + least.meters)}, until ${least.by} is met.`;
   if (-least.meters >= length) return `${capital(least.by)} is exceeded, and no length of this element mends that.`;
   return `Must shrink by about ${show.length(-least.meters)}, to ${show.length(length + least.meters)}, for ${least.by}.`;
 }

@@ -1,10 +1,12 @@
 import type { Analysis } from '../analysis';
-import { keySchemaAt } from '../format/index';
 import type { LedgerRow } from '../figures/types';
+import { keySchemaAt } from '../format/index';
 import type { AnyElement } from '../model/types';
+import type { ElementNetwork } from '../networks/types';
 import { show } from '../quantity/show';
 import { rangeOf } from '../text/index';
 import type { FilePath, Place, TextRange } from '../text/types';
+import { isRecord } from './shape';
 
 /** `derived`: what follows from the neighbours; `defaults`: what holds since nothing is written, where that changes a figure. */
 export type HintClass = 'loss' | 'stub' | 'derived' | 'defaults';
@@ -19,7 +21,7 @@ export interface Hint {
   /** Written into the text on a double click. */
   readonly insert?: { readonly range: TextRange; readonly text: string };
   /** The element that it is about; its explanation is made when asked for. */
-  readonly element: string;
+  readonly element?: string;
 }
 
 /**
@@ -38,7 +40,10 @@ export function hintsOf(analysis: Analysis, file: FilePath, range?: TextRange, s
     const row = analysis.ledger?.rows.find(({ index }) => index === element.index);
     hints.push(...hintsOfElement(analysis, element, row, about, (place) => rangeOf(parsed, place), parsed.text));
   }
-  return hints.filter(({ offset }) => !range || (offset >= range.start && offset <= range.end)).sort((a, b) => a.offset - b.offset);
+  hints.push(...defaultsOfChannel(analysis, (place) => rangeOf(parsed, place)));
+  return hints
+    .filter(({ offset }) => !range || (offset >= range.start && offset <= range.end))
+    .sort((a, b) => a.offset - b.offset);
 }
 
 function hintsOfElement(
@@ -57,12 +62,20 @@ function hintsOfElement(
   const network = analysis.networks?.elements[element.index];
   const stubs = network && !network.through ? (network.prepared?.facts.stubs ?? []) : [];
   const loss = figure('own-loss-at-nyquist');
-  if (loss !== undefined && stubs.length === 0) hints.push({ kind: 'loss', offset: nameRange.end, label: `${about} ${loss}`, element: name });
+  if (loss !== undefined && stubs.length === 0)
+    hints.push({ kind: 'loss', offset: nameRange.end, label: `${about} ${loss}`, element: name });
   for (const stub of stubs) {
     if (stub.lengthMeters <= 0) continue;
     const notch = Number.isFinite(stub.notchHz) ? ` → ${show.frequency(stub.notchHz)}` : '';
-    hints.push({ kind: 'stub', offset: nameRange.end, label: `${about} stub ${show.length(stub.lengthMeters)}${notch}`, element: name });
+    hints.push({
+      kind: 'stub',
+      offset: nameRange.end,
+      label: `${about} stub ${show.length(stub.lengthMeters)}${notch}`,
+      element: name,
+    });
   }
+  const geometry = network && !network.through ? geometryHint(network, range) : undefined;
+  if (geometry) hints.push(geometry);
   for (const [key, value] of Object.entries(element.derived)) {
     const info = keySchemaAt('channel', [...place.path, key], kind);
     const isDefault = info?.default !== undefined && info.refers !== 'layer';
@@ -80,6 +93,56 @@ function hintsOfElement(
     });
   }
   return hints;
+}
+
+/** Width and gap that give a declared impedance, beside it. */
+function geometryHint({ element, prepared }: ElementNetwork, range: (place: Place) => TextRange): Hint | undefined {
+  const { widthMeters, gapMeters } = prepared?.facts ?? {};
+  const where = element.places.impedance;
+  const isWritten =
+    Object.hasOwn(element.values, 'width') ||
+    where?.file !== element.place.file ||
+    where.path.length <= element.place.path.length;
+  if (widthMeters === undefined || isWritten) return undefined;
+  const gap = gapMeters === undefined || Object.hasOwn(element.values, 'gap') ? '' : `, gap ${show.length(gapMeters)}`;
+  const { end } = range(where);
+  return { kind: 'derived', offset: end, label: `→ width ${show.length(widthMeters)}${gap}`, element: element.name };
+}
+
+/** What holds for the whole channel since it is not written, and for its two ends. */
+function defaultsOfChannel({ model, parsed }: Analysis, range: (place: Place) => TextRange): Hint[] {
+  if (!model.computable) return [];
+  const { file } = model;
+  const written = (...path: string[]) =>
+    path.reduce<unknown>(
+      (value, key) => (isRecord(value) && Object.hasOwn(value, key) ? value[key] : undefined),
+      parsed.get(file)?.value,
+    ) !== undefined;
+  const hint = (path: string[], on: 'key' | 'value', texts: readonly (string | false)[]): Hint[] => {
+    const label = texts.filter(Boolean).join(' · ');
+    return label === ''
+      ? []
+      : [{ kind: 'defaults', offset: range({ file, path, on }).end + (on === 'key' ? 1 : 0), label }];
+  };
+  const { transmitter, receiver } = model;
+  return [
+    ...hint(['line-rate'], 'value', [
+      !written('modulation') && model.modulation,
+      !written('target-ber') && `BER ${show.probability(model.targetBer)}`,
+      !written('reference-impedance') && show.impedance(model.referenceOhms),
+      !written('conditions', 'temperature') && show.temperature(model.temperatureCelsius),
+    ]),
+    ...(transmitter && written('transmitter')
+      ? hint(['transmitter'], 'key', [
+          !written('transmitter', 'rise-time') && `rise-time: ${show.time(transmitter.riseTimeSeconds)}`,
+        ])
+      : []),
+    ...(receiver && written('receiver')
+      ? hint(['receiver'], 'key', [
+          !written('receiver', 'bandwidth') && `bandwidth: ${show.frequency(receiver.bandwidthHz)}`,
+        ])
+      : []),
+  ];
 }
 
 function layerPlace({ stackup }: AnyElement, layer: string): Place | undefined {

@@ -1,6 +1,6 @@
 import type { FilePath, TextRange } from '../text/types';
-import { type Library, occurrencesIn } from './occurrences';
 import { rangeOfOccurrence } from './names';
+import { type Library, occurrencesIn } from './occurrences';
 
 export interface Link {
   readonly range: TextRange;
@@ -11,7 +11,10 @@ export interface Link {
 export function linksOf(library: Library, file: FilePath): readonly Link[] {
   return occurrencesIn(library, file).flatMap((occurrence) => {
     const { identity } = occurrence;
-    const range = (identity.role === 'file' || identity.role === 'touchstone') && identity.file !== '' ? rangeOfOccurrence(library, occurrence) : undefined;
+    const range =
+      (identity.role === 'file' || identity.role === 'touchstone') && identity.file !== ''
+        ? rangeOfOccurrence(library, occurrence)
+        : undefined;
     return range ? [{ range, target: identity.file }] : [];
   });
 }

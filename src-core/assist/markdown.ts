@@ -1,14 +1,18 @@
 /** Most lines of a hover: more hides the text that one reads. */
 const MOST_LINES = 12;
 
-/** Text from a file, for Markdown: no sign of it means anything, and it stays on one line. */
+/** Text from a file, for Markdown: no sign of it means anything, no address becomes a link, and it stays on one line. */
 export const plainText = (text: string): string =>
   text
     .replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029\u202a-\u202e\u2066-\u2069]+/g, ' ')
-    .replace(/[\\`*_{}[\]()<>#+!|~&@-]/g, (sign) => (sign === '<' ? '&lt;' : sign === '>' ? '&gt;' : sign === '&' ? '&amp;' : `\\${sign}`));
+    .replace(/[\\`*_{}[\]()#|~]|:(?=\/\/)/g, '\\$&')
+    .replace(/&/g, '&amp;')
+    .replace(/</g, '&lt;')
+    .replace(/>/g, '&gt;');
 
 /** A name or value from a file, as code. */
-export const code = (text: string): string => `\`${text.replace(/[`\u0000-\u001f\u007f-\u009f\u2028\u2029\u202a-\u202e\u2066-\u2069|]+/g, ' ').slice(0, 120)}\``;
+export const code = (text: string): string =>
+  `\`${text.replace(/[`\u0000-\u001f\u007f-\u009f\u2028\u2029\u202a-\u202e\u2066-\u2069|]+/g, ' ').slice(0, 120)}\``;
 
 export type Row = readonly [name: string, value: string];
 
@@ -19,7 +23,12 @@ export function page(heading: string, rows: readonly Row[], remarks: readonly st
   const left = MOST_LINES - 1 - notes.length * 2;
   if (rows.length > 0 && left >= 4) {
     const shown = rows.slice(0, left - 3);
-    lines.push('', `| ${shown[0][0]} | ${shown[0][1]} |`, '| :-- | :-- |', ...shown.slice(1).map(([name, value]) => `| ${name} | ${value} |`));
+    lines.push(
+      '',
+      `| ${shown[0][0]} | ${shown[0][1]} |`,
+      '| :-- | :-- |',
+      ...shown.slice(1).map(([name, value]) => `| ${name} | ${value} |`),
+    );
   }
   for (const note of notes) if (lines.length + 2 <= MOST_LINES) lines.push('', note);
   return lines.join('\n');

@@ -23,7 +23,11 @@ const FILE_ROLES = new Set(['file', 'touchstone']);
 const FIXED_ROLES = new Set(['rule', 'file', 'touchstone']);
 
 /** The name at an offset: the innermost piece that holds it. */
-export function occurrenceAt(library: Library, file: FilePath, offset: number): { occurrence: Occurrence; range: TextRange } | undefined {
+export function occurrenceAt(
+  library: Library,
+  file: FilePath,
+  offset: number,
+): { occurrence: Occurrence; range: TextRange } | undefined {
   for (const occurrence of occurrencesIn(library, file)) {
     const range = rangeOfOccurrence(library, occurrence);
     if (range && range.start <= offset && offset <= range.end) return { occurrence, range };
@@ -39,8 +43,14 @@ export function rangeOfOccurrence(library: Library, { place, part, identity }: O
   const quoted = /^['"]/.test(parsed.text.slice(whole.start, whole.start + 1));
   const inner = quoted ? { start: whole.start + 1, end: whole.end - 1 } : whole;
   const written = parsed.text.slice(inner.start, inner.end);
-  if (part === 'prefix') return written.startsWith(`${identity.name}.`) ? { start: inner.start, end: inner.start + identity.name.length } : undefined;
-  if (part === 'name') return written.endsWith(`.${identity.name}`) ? { start: inner.end - identity.name.length, end: inner.end } : undefined;
+  if (part === 'prefix')
+    return written.startsWith(`${identity.name}.`)
+      ? { start: inner.start, end: inner.start + identity.name.length }
+      : undefined;
+  if (part === 'name')
+    return written.endsWith(`.${identity.name}`)
+      ? { start: inner.end - identity.name.length, end: inner.end }
+      : undefined;
   return written === identity.name ? inner : undefined;
 }
 
@@ -60,17 +70,29 @@ export function definitionAt(library: Library, file: FilePath, offset: number): 
       const range = rangeOfOccurrence(library, other);
       const parsed = library.get(other.place.file);
       if (!range || !parsed) return [];
-      const entry = other.place.on === 'key' ? { ...other.place, on: 'entry' as const } : { file: other.place.file, path: other.place.path.slice(0, -1), on: 'value' as const };
+      const entry =
+        other.place.on === 'key'
+          ? { ...other.place, on: 'entry' as const }
+          : { file: other.place.file, path: other.place.path.slice(0, -1), on: 'value' as const };
       const whole = rangeOf(parsed, entry);
-      return [{ file: other.place.file, range, whole: whole.start <= range.start && range.end <= whole.end ? whole : range }];
+      return [
+        { file: other.place.file, range, whole: whole.start <= range.start && range.end <= whole.end ? whole : range },
+      ];
     });
   return targets.length > 0 ? { origin: found.range, targets } : undefined;
 }
 
 /** Every place in the library that names what stands at the offset. */
-export function referencesOf(library: Library, file: FilePath, offset: number, withDeclaration = true): readonly Reference[] {
+export function referencesOf(
+  library: Library,
+  file: FilePath,
+  offset: number,
+  withDeclaration = true,
+): readonly Reference[] {
   const found = occurrenceAt(library, file, offset);
-  return found ? placesOf(library, found.occurrence.identity).filter(({ declares }) => withDeclaration || !declares) : [];
+  return found
+    ? placesOf(library, found.occurrence.identity).filter(({ declares }) => withDeclaration || !declares)
+    : [];
 }
 
 /** The same within one file: the declaration is written, uses are read. */
@@ -80,7 +102,14 @@ export const highlightsAt = (library: Library, file: FilePath, offset: number): 
 function placesOf(library: Library, identity: Identity): readonly Reference[] {
   const found: Reference[] = [];
   for (const file of library.keys()) {
-    if ((identity.role === 'element' || identity.role === 'limit' || identity.role === 'use' || identity.role === 'owner') && file !== identity.file) continue;
+    if (
+      (identity.role === 'element' ||
+        identity.role === 'limit' ||
+        identity.role === 'use' ||
+        identity.role === 'owner') &&
+      file !== identity.file
+    )
+      continue;
     for (const other of occurrencesIn(library, file)) {
       if (!sameIdentity(other.identity, identity)) continue;
       const range = rangeOfOccurrence(library, other);
@@ -98,8 +127,10 @@ export function prepareRename(library: Library, file: FilePath, offset: number):
   if (!found) return { problem: 'There is no name here that could be renamed.' };
   const { identity } = found.occurrence;
   if (identity.role === 'rule') return { problem: 'The names of rules are fixed.' };
-  if (FIXED_ROLES.has(identity.role)) return { problem: 'This is a path: rename the file itself, and the paths that name it follow.' };
-  if (!placesOf(library, identity).some(({ declares }) => declares)) return { problem: `\`${identity.name}\` is declared nowhere; declare it first.` };
+  if (FIXED_ROLES.has(identity.role))
+    return { problem: 'This is a path: rename the file itself, and the paths that name it follow.' };
+  if (!placesOf(library, identity).some(({ declares }) => declares))
+    return { problem: `\`${identity.name}\` is declared nowhere; declare it first.` };
   return { range: found.range, name: identity.name };
 }
 
@@ -107,7 +138,12 @@ const NAME = /^(?!(?:true|false|null|yes|no|on|off)$)[a-z][a-z0-9-]*$/;
 const LAYER = /^[A-Za-z0-9][A-Za-z0-9_.-]*$/;
 
 /** All edits of a rename, in every file of the library; a problem where the name is taken or breaks the pattern of names. */
-export function renameAt(library: Library, file: FilePath, offset: number, newName: string): { readonly edits: readonly TextEdit[] } | { readonly problem: string } {
+export function renameAt(
+  library: Library,
+  file: FilePath,
+  offset: number,
+  newName: string,
+): { readonly edits: readonly TextEdit[] } | { readonly problem: string } {
   const prepared = prepareRename(library, file, offset);
   if ('problem' in prepared) return prepared;
   const identity = occurrenceAt(library, file, offset)!.occurrence.identity;
@@ -125,22 +161,32 @@ export function renameAt(library: Library, file: FilePath, offset: number, newNa
 
 function problemOfName(library: Library, identity: Identity, newName: string): string | undefined {
   if (identity.role === 'owner') {
-    if (!/^[^\s:#'"{}[\],&*!|>%@`-][^:#'"{}[\],\n]*$/.test(newName) || newName !== newName.trim()) return `\`${newName}\` would need quotes as a key; choose plain words.`;
+    if (!/^[^\s:#'"{}[\],&*!|>%@`-][^:#'"{}[\],\n]*$/.test(newName) || newName !== newName.trim())
+      return `\`${newName}\` would need quotes as a key; choose plain words.`;
   } else if (identity.role === 'layer') {
-    if (!LAYER.test(newName)) return `A layer's name begins with a letter or digit and goes on with letters, digits, \`_\`, \`.\` and \`-\`; \`${newName}\` does not.`;
+    if (!LAYER.test(newName))
+      return `A layer's name begins with a letter or digit and goes on with letters, digits, \`_\`, \`.\` and \`-\`; \`${newName}\` does not.`;
   } else if (!NAME.test(newName)) {
     return `A name begins with a small letter and goes on with small letters, digits and \`-\`, and is not \`true\`, \`yes\` or the like; \`${newName}\` is not one.`;
   }
   // Elements and limits share one name space.
   const rivals = identity.role === 'element' || identity.role === 'limit' ? ['element', 'limit'] : [identity.role];
   const taken = occurrencesIn(library, identity.file).some(
-    ({ declares, identity: other }) => declares && rivals.includes(other.role) && other.within === identity.within && other.name === newName && newName !== identity.name,
+    ({ declares, identity: other }) =>
+      declares &&
+      rivals.includes(other.role) &&
+      other.within === identity.within &&
+      other.name === newName &&
+      newName !== identity.name,
   );
   return taken ? `\`${newName}\` is the name of another one already; choose a different name.` : undefined;
 }
 
 /** Paths in `use` and `touchstone` that follow files or folders which are about to be renamed. Pairs of old and new path. */
-export function fileRenameEdits(library: Library, renames: readonly { readonly from: FilePath; readonly to: FilePath }[]): readonly TextEdit[] {
+export function fileRenameEdits(
+  library: Library,
+  renames: readonly { readonly from: FilePath; readonly to: FilePath }[],
+): readonly TextEdit[] {
   const moved = (file: FilePath): FilePath => {
     for (const { from, to } of renames) {
       if (file === from) return to;

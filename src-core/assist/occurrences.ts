@@ -1,9 +1,9 @@
 import type { NameRole } from '../../schemas/format/types';
 import { entryLists } from '../../schemas/generated/format';
 import { joinPath } from '../inputs';
-import { isRecord } from './shape';
 import type { ParsedFile } from '../text/parsed';
 import type { FilePath, Place, ValuePath } from '../text/types';
+import { isRecord } from './shape';
 
 /** What a name stands for, wherever it is written: one key for declaration and uses. */
 export interface Identity {
@@ -38,7 +38,8 @@ const REFERRING_KEYS: Readonly<Record<string, NameRole>> = {
   includes: 'element',
 };
 
-export const sameIdentity = (a: Identity, b: Identity) => a.role === b.role && a.file === b.file && a.within === b.within && a.name === b.name;
+export const sameIdentity = (a: Identity, b: Identity) =>
+  a.role === b.role && a.file === b.file && a.within === b.within && a.name === b.name;
 
 /** The `use` entries of a file: prefix to file. */
 export function usesOf(parsed: ParsedFile): ReadonlyMap<string, FilePath> {
@@ -72,7 +73,9 @@ export function resolveShared(library: Library, file: FilePath, role: SharedRole
   const uses = parsed ? usesOf(parsed) : new Map<string, FilePath>();
   if (dot >= 0) return { role, file: uses.get(written.slice(0, dot)) ?? file, name: written.slice(dot + 1) };
   if (sharedValue(parsed, role, written) !== undefined) return { role, file, name: written };
-  const holders = [...new Set(uses.values())].filter((used) => sharedValue(library.get(used), role, written) !== undefined);
+  const holders = [...new Set(uses.values())].filter(
+    (used) => sharedValue(library.get(used), role, written) !== undefined,
+  );
   return { role, file: holders.length === 1 ? holders[0] : file, name: written };
 }
 
@@ -83,8 +86,17 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
   const found: Occurrence[] = [];
   const value = parsed.value;
   const own = (role: NameRole, name: string): Identity => ({ role, file, name });
-  const add = (identity: Identity, path: ValuePath, options: { declares?: boolean; on?: Place['on']; part?: Occurrence['part'] } = {}) =>
-    found.push({ identity, place: { file, path, on: options.on ?? 'value' }, declares: options.declares ?? false, part: options.part ?? 'whole' });
+  const add = (
+    identity: Identity,
+    path: ValuePath,
+    options: { declares?: boolean; on?: Place['on']; part?: Occurrence['part'] } = {},
+  ) =>
+    found.push({
+      identity,
+      place: { file, path, on: options.on ?? 'value' },
+      declares: options.declares ?? false,
+      part: options.part ?? 'whole',
+    });
 
   const shared = (role: SharedRole, written: unknown, path: ValuePath) => {
     if (typeof written !== 'string' || written === '') return undefined;
@@ -99,7 +111,8 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
       written.forEach((one, index) => void refer(role, one, [...path, index], layersOf));
     } else if (typeof written === 'string') {
       if (isShared(role)) shared(role, written, path);
-      else if (role === 'layer') layersOf && add({ role, file: layersOf.file, within: layersOf.name, name: written }, path);
+      else if (role === 'layer')
+        layersOf && add({ role, file: layersOf.file, within: layersOf.name, name: written }, path);
       else add(own(role, written), path);
     }
   };
@@ -109,12 +122,16 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
     if (typeof keys.part === 'string') {
       const part = resolveShared(library, file, 'part', keys.part);
       const partValue = sharedValue(library.get(part.file), 'part', part.name);
-      if (isRecord(partValue) && typeof partValue.stackup === 'string') return resolveShared(library, part.file, 'stackup', partValue.stackup);
+      if (isRecord(partValue) && typeof partValue.stackup === 'string')
+        return resolveShared(library, part.file, 'stackup', partValue.stackup);
     }
-    const all = isRecord(value.stackups) ? Object.keys(value.stackups).map((name) => ({ role: 'stackup' as const, file, name })) : [];
+    const all = isRecord(value.stackups)
+      ? Object.keys(value.stackups).map((name) => ({ role: 'stackup' as const, file, name }))
+      : [];
     for (const used of new Set(usesOf(parsed).values())) {
       const stackups = library.get(used)?.value;
-      if (isRecord(stackups) && isRecord(stackups.stackups)) all.push(...Object.keys(stackups.stackups).map((name) => ({ role: 'stackup' as const, file: used, name })));
+      if (isRecord(stackups) && isRecord(stackups.stackups))
+        all.push(...Object.keys(stackups.stackups).map((name) => ({ role: 'stackup' as const, file: used, name })));
     }
     return all.length === 1 ? all[0] : undefined;
   };
@@ -136,7 +153,8 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
   };
 
   for (const [prefix, path] of keysDeclare('use', 'use')) {
-    if (typeof path === 'string') add({ role: 'file', file: joinPath(file, path).file ?? '', name: path }, ['use', prefix]);
+    if (typeof path === 'string')
+      add({ role: 'file', file: joinPath(file, path).file ?? '', name: path }, ['use', prefix]);
   }
   keysDeclare('owner', 'owners');
   keysDeclare('material', 'materials');
@@ -147,7 +165,8 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
       if (!isRecord(row)) return;
       const path = ['stackups', name, index];
       for (const kind of entryLists['stackup-rows'].kinds) {
-        if (kind !== 'mask' && typeof row[kind] === 'string') add({ role: 'layer', file, within: name, name: row[kind] }, [...path, kind], { declares: true });
+        if (kind !== 'mask' && typeof row[kind] === 'string')
+          add({ role: 'layer', file, within: name, name: row[kind] }, [...path, kind], { declares: true });
       }
       shared('material', row.material, [...path, 'material']);
       shared('foil', row.foil, [...path, 'foil']);
@@ -158,7 +177,8 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
   list(value.path).forEach((entry, index) => {
     if (!isRecord(entry)) return;
     const kind = entryLists.elements.kinds.find((name) => Object.hasOwn(entry, name));
-    if (kind && typeof entry[kind] === 'string') add(own('element', entry[kind]), ['path', index, kind], { declares: true });
+    if (kind && typeof entry[kind] === 'string')
+      add(own('element', entry[kind]), ['path', index, kind], { declares: true });
     element(entry, ['path', index]);
   });
   const limitNames = new Set<string>();
@@ -174,10 +194,12 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
   list(value.waivers).forEach((entry, index) => {
     if (!isRecord(entry)) return;
     if (typeof entry.rule === 'string') add({ role: 'rule', file: '', name: entry.rule }, ['waivers', index, 'rule']);
-    if (typeof entry.at === 'string') add(own(limitNames.has(entry.at) ? 'limit' : 'element', entry.at), ['waivers', index, 'at']);
+    if (typeof entry.at === 'string')
+      add(own(limitNames.has(entry.at) ? 'limit' : 'element', entry.at), ['waivers', index, 'at']);
   });
   if (parsed.kind === 'config' && isRecord(value.rules)) {
-    for (const rule of Object.keys(value.rules)) add({ role: 'rule', file: '', name: rule }, ['rules', rule], { on: 'key' });
+    for (const rule of Object.keys(value.rules))
+      add({ role: 'rule', file: '', name: rule }, ['rules', rule], { on: 'key' });
   }
   return found;
 }

@@ -16,24 +16,70 @@ export interface OutlineItem {
   readonly children: readonly OutlineItem[];
 }
 
-const KINDS_OF_SECTIONS: Readonly<Record<string, OutlineKind>> = { path: 'element', limits: 'limit', waivers: 'waiver', rules: 'rule' };
+const KINDS_OF_SECTIONS: Readonly<Record<string, OutlineKind>> = {
+  path: 'element',
+  limits: 'limit',
+  waivers: 'waiver',
+  rules: 'rule',
+};
 
 /** The file as a tree, two or three levels; details are figures where there are some, else what is written. */
 export function outlineOf(parsed: ParsedFile, analysis?: Analysis): readonly OutlineItem[] {
   if (!isRecord(parsed.value)) return [];
   const own = analysis?.model.file === parsed.file ? analysis : undefined;
   return Object.entries(parsed.value).map(([key, value]) => {
-    const item = (path: ValuePath, name: string, kind: OutlineKind, detail: string, children: readonly OutlineItem[] = []) =>
-      itemOf(parsed, path, name, kind, detail, children);
-    if (key === 'path') return item([key], key, 'section', own?.verdict.text ?? '', asList(value).map((entry, index) => elementItem(parsed, entry, index, own)));
-    if (key === 'limits') return item([key], key, 'section', '', asList(value).map((entry, index) => limitItem(parsed, entry, index, own)));
-    if (key === 'waivers') return item([key], key, 'section', '', asList(value).map((entry, index) => waiverItem(parsed, entry, index)));
+    const item = (
+      path: ValuePath,
+      name: string,
+      kind: OutlineKind,
+      detail: string,
+      children: readonly OutlineItem[] = [],
+    ) => itemOf(parsed, path, name, kind, detail, children);
+    if (key === 'path')
+      return item(
+        [key],
+        key,
+        'section',
+        own?.verdict.text ?? '',
+        asList(value).map((entry, index) => elementItem(parsed, entry, index, own)),
+      );
+    if (key === 'limits')
+      return item(
+        [key],
+        key,
+        'section',
+        '',
+        asList(value).map((entry, index) => limitItem(parsed, entry, index, own)),
+      );
+    if (key === 'waivers')
+      return item(
+        [key],
+        key,
+        'section',
+        '',
+        asList(value).map((entry, index) => waiverItem(parsed, entry, index)),
+      );
     if (key === 'stackups' && isRecord(value)) {
-      return item([key], key, 'section', '', Object.entries(value).map(([name, rows]) =>
-        item([key, name], name, 'name', `${asList(rows).length} rows`, asList(rows).map((row, index) => rowItem(parsed, name, row, index)))));
+      return item(
+        [key],
+        key,
+        'section',
+        '',
+        Object.entries(value).map(([name, rows]) =>
+          item(
+            [key, name],
+            name,
+            'name',
+            `${asList(rows).length} rows`,
+            asList(rows).map((row, index) => rowItem(parsed, name, row, index)),
+          ),
+        ),
+      );
     }
     const children = isRecord(value)
-      ? Object.entries(value).map(([name, one]) => item([key, name], name, KINDS_OF_SECTIONS[key] ?? 'name', detailOf(one)))
+      ? Object.entries(value).map(([name, one]) =>
+          item([key, name], name, KINDS_OF_SECTIONS[key] ?? 'name', detailOf(one)),
+        )
       : [];
     return item([key], key, isRecord(value) ? 'section' : 'key', isRecord(value) ? '' : detailOf(value), children);
   });
@@ -49,7 +95,14 @@ export function elementAt(analysis: Analysis, offset: number): string | undefine
   })?.name;
 }
 
-function itemOf(parsed: ParsedFile, path: ValuePath, name: string, kind: OutlineKind, detail: string, children: readonly OutlineItem[]): OutlineItem {
+function itemOf(
+  parsed: ParsedFile,
+  path: ValuePath,
+  name: string,
+  kind: OutlineKind,
+  detail: string,
+  children: readonly OutlineItem[],
+): OutlineItem {
   const isEntry = typeof path.at(-1) === 'number';
   const range = rangeOf(parsed, { file: parsed.file, path, on: 'entry' });
   const selection = rangeOf(parsed, { file: parsed.file, path, on: isEntry ? 'value' : 'key' });
@@ -60,8 +113,17 @@ function itemOf(parsed: ParsedFile, path: ValuePath, name: string, kind: Outline
 function elementItem(parsed: ParsedFile, entry: unknown, index: number, analysis: Analysis | undefined): OutlineItem {
   const [kind, written] = isRecord(entry) ? (Object.entries(entry)[0] ?? ['entry', '']) : ['entry', entry];
   const row = analysis?.ledger?.rows.find((one) => one.index === index);
-  const figures = row?.figures.filter(({ name }) => name === 'own-loss-at-nyquist' || name === 'impedance').map(({ text }) => text) ?? [];
-  return itemOf(parsed, ['path', index], nameOf(written, `${kind} ${index + 1}`), 'element', [kind, ...figures].join(' · '), []);
+  const figures =
+    row?.figures.filter(({ name }) => name === 'own-loss-at-nyquist' || name === 'impedance').map(({ text }) => text) ??
+    [];
+  return itemOf(
+    parsed,
+    ['path', index],
+    nameOf(written, `${kind} ${index + 1}`),
+    'element',
+    [kind, ...figures].join(' · '),
+    [],
+  );
 }
 
 function limitItem(parsed: ParsedFile, entry: unknown, index: number, analysis: Analysis | undefined): OutlineItem {
@@ -73,20 +135,36 @@ function limitItem(parsed: ParsedFile, entry: unknown, index: number, analysis: 
 
 function waiverItem(parsed: ParsedFile, entry: unknown, index: number): OutlineItem {
   const { rule, at, until } = isRecord(entry) ? entry : {};
-  return itemOf(parsed, ['waivers', index], nameOf(rule, `waiver ${index + 1}`), 'waiver', [at, until].filter((one) => typeof one === 'string').join(' until '), []);
+  return itemOf(
+    parsed,
+    ['waivers', index],
+    nameOf(rule, `waiver ${index + 1}`),
+    'waiver',
+    [at, until].filter((one) => typeof one === 'string').join(' until '),
+    [],
+  );
 }
 
 function rowItem(parsed: ParsedFile, stackup: string, row: unknown, index: number): OutlineItem {
   const [kind, written] = isRecord(row) ? (Object.entries(row)[0] ?? ['row', '']) : ['row', row];
   const thickness = isRecord(row) && typeof row.thickness === 'string' ? ` · ${row.thickness}` : '';
-  return itemOf(parsed, ['stackups', stackup, index], nameOf(written, `row ${index + 1}`), 'layer', `${kind}${thickness}`, []);
+  return itemOf(
+    parsed,
+    ['stackups', stackup, index],
+    nameOf(written, `row ${index + 1}`),
+    'layer',
+    `${kind}${thickness}`,
+    [],
+  );
 }
 
-const nameOf = (written: unknown, otherwise: string) => (typeof written === 'string' && written !== '' ? written : otherwise);
+const nameOf = (written: unknown, otherwise: string) =>
+  typeof written === 'string' && written !== '' ? written : otherwise;
 
 /** What is written, on one line and short. */
 function detailOf(value: unknown): string {
-  if (typeof value === 'string' || typeof value === 'number' || typeof value === 'boolean') return String(value).slice(0, 60);
+  if (typeof value === 'string' || typeof value === 'number' || typeof value === 'boolean')
+    return String(value).slice(0, 60);
   if (isRecord(value) && typeof value.kind === 'string') return value.kind;
   return '';
 }

@@ -9,7 +9,8 @@ export function selectionAt(parsed: ParsedFile, offset: number): readonly TextRa
   const subject = subjectAt(parsed, offset);
   const wanted: TextRange[] = [];
   if (subject) wanted.push(subject.range);
-  for (let depth = subject?.path.length ?? 0; depth > 0; depth--) wanted.push(rangeOf(parsed, { file, path: subject!.path.slice(0, depth), on: 'entry' }));
+  for (let depth = subject?.path.length ?? 0; depth > 0; depth--)
+    wanted.push(rangeOf(parsed, { file, path: subject!.path.slice(0, depth), on: 'entry' }));
   wanted.push({ start: 0, end: text.length });
   const ranges: TextRange[] = [];
   for (const range of wanted) {

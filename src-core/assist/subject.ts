@@ -43,8 +43,17 @@ export function subjectAt(parsed: ParsedFile, offset: number): Subject | undefin
   const path = onKey ? [...cursor.path, written] : cursor.path;
   const levels = withOwnKey(cursor, path, onKey);
   const kind = kindOfEntry(levels);
-  const key = keySchemaAt(parsed.kind, path, kind) ?? (typeof path.at(-1) === 'number' ? keySchemaAt(parsed.kind, path.slice(0, -1), kind) : undefined);
-  return { path, on: onKey ? 'key' : 'value', range: token, text: written, ...(key && { key }), ...(kind !== undefined && { kind }) };
+  const key =
+    keySchemaAt(parsed.kind, path, kind) ??
+    (typeof path.at(-1) === 'number' ? keySchemaAt(parsed.kind, path.slice(0, -1), kind) : undefined);
+  return {
+    path,
+    on: onKey ? 'key' : 'value',
+    range: token,
+    text: written,
+    ...(key && { key }),
+    ...(kind !== undefined && { kind }),
+  };
 }
 
 /** The cursor left out the pair it stands in; the kind may be that very pair. */
@@ -54,7 +63,11 @@ function withOwnKey({ levels }: Cursor, path: ValuePath, onKey: boolean): readon
   const depth = path.lastIndexOf(name);
   const holder = path.slice(0, depth);
   void onKey;
-  return levels.map((level) => (level.path.length === holder.length ? { path: level.path, keys: new Map([...level.keys, [String(name), level.keys.get(String(name)) ?? '']]) } : level));
+  return levels.map((level) =>
+    level.path.length === holder.length
+      ? { path: level.path, keys: new Map([...level.keys, [String(name), level.keys.get(String(name)) ?? '']]) }
+      : level,
+  );
 }
 
 /** The value with quotes and neighbours cut off: in a flow list one item, in a block all of the line. */

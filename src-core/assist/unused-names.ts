@@ -8,7 +8,13 @@ import { usesOf } from './occurrences';
 import { asList, isRecord } from './shape';
 
 /** Stackups or parts of parts files that this file does not use yet; taking one adds the `use` entry too. */
-export async function unusedNames(parsed: ParsedFile, cursor: Cursor, role: 'part' | 'stackup', { library }: Surroundings, kind: string | undefined): Promise<Completion[]> {
+export async function unusedNames(
+  parsed: ParsedFile,
+  cursor: Cursor,
+  role: 'part' | 'stackup',
+  { library }: Surroundings,
+  kind: string | undefined,
+): Promise<Completion[]> {
   if (!library) return [];
   const used = new Set(usesOf(parsed).values());
   const found: Completion[] = [];
@@ -21,7 +27,17 @@ export async function unusedNames(parsed: ParsedFile, cursor: Cursor, role: 'par
       if (role === 'part' && kind && isRecord(value) && value.kind !== kind) continue;
       if (role === 'stackup' && asList(value).length === 0) continue;
       const text = `${prefix}.${name}`;
-      found.push({ label: text, kind: 'name', detail: `adds use: ${relativePath(parsed.file, file)}`, insert: text, isSnippet: false, range: cursor.token, filter: text, rank: 500, also: [useEdit(parsed, prefix, file)] });
+      found.push({
+        label: text,
+        kind: 'name',
+        detail: `adds use: ${relativePath(parsed.file, file)}`,
+        insert: text,
+        isSnippet: false,
+        range: cursor.token,
+        filter: text,
+        rank: 500,
+        also: [useEdit(parsed, prefix, file)],
+      });
     }
   }
   return found;
@@ -30,7 +46,12 @@ export async function unusedNames(parsed: ParsedFile, cursor: Cursor, role: 'par
 /** The file's own name as prefix, with a number where it is taken. */
 function prefixFor(parsed: ParsedFile, file: FilePath): string {
   const taken = new Set(usesOf(parsed).keys());
-  const base = (file.split('/').at(-1) ?? '').replace(/\.parts\.yaml$/, '').toLowerCase().replace(/[^a-z0-9-]+/g, '-').replace(/^[^a-z]+/, '') || 'parts';
+  const base =
+    (file.split('/').at(-1) ?? '')
+      .replace(/\.parts\.yaml$/, '')
+      .toLowerCase()
+      .replace(/[^a-z0-9-]+/g, '-')
+      .replace(/^[^a-z]+/, '') || 'parts';
   for (let n = 1; ; n++) {
     const prefix = n === 1 ? base : `${base}-${n}`;
     if (!taken.has(prefix)) return prefix;
@@ -47,7 +68,11 @@ function useEdit(parsed: ParsedFile, prefix: string, file: FilePath): TextEdit {
     const after = text.indexOf('\n', use.index);
     const at = after === -1 ? text.length : after + 1;
     const indent = /^( +)\S/.exec(text.slice(at))?.[1] ?? '  ';
-    return { file: parsed.file, range: { start: at, end: at }, text: `${after === -1 ? lineEnd : ''}${indent}${line}${lineEnd}` };
+    return {
+      file: parsed.file,
+      range: { start: at, end: at },
+      text: `${after === -1 ? lineEnd : ''}${indent}${line}${lineEnd}`,
+    };
   }
   const heading = /^(path|transmitter|receiver|limits|stackups|parts|materials|foils):/m.exec(text);
   const at = heading?.index ?? text.length;
