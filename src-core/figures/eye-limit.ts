@@ -29,12 +29,15 @@ export function eyeOutcome(limit: Limit<'eye'>, { model, link, linkIsStale }: Co
   // A width may be written as a time.
   const widthUi = width && (width.dimension === 'time' ? width.value / model.unitInterval : width.value);
   if (!link || (height === undefined && widthUi === undefined)) return undefined;
-  const shares = [
+  const sizes = [
     ...(height ? [{ of: 'height', share: link.eyeHeightVolts / height }] : []),
     ...(widthUi ? [{ of: 'width', share: link.eyeWidthUi / widthUi }] : []),
-    ...(height && widthUi ? [{ of: 'rhombus', share: rhombusScale(link.density, height, widthUi) }] : []),
   ];
-  const worst = shares.reduce((a, b) => (b.share < a.share ? b : a), { of: 'height', share: Number.POSITIVE_INFINITY });
+  const least = sizes.reduce((a, b) => (b.share < a.share ? b : a), { of: 'height', share: Number.POSITIVE_INFINITY });
+  // A rhombus of half the eye's size fits into anything that is called an eye; the contour is computed when it is read.
+  const isNear = height && widthUi && least.share >= 1 - 1e-9 && least.share < 2;
+  const rhombus = isNear ? { of: 'rhombus', share: rhombusScale(link.density, height, widthUi) } : least;
+  const worst = rhombus.share < least.share ? rhombus : least;
   const share = Number.isFinite(worst.share) ? worst.share : 1;
   const byWidth = worst.of === 'width' || height === undefined;
   const mark = linkIsStale ? '~' : '';

@@ -42,9 +42,13 @@ function limitsText(judged: Judged): string {
   return `${limits.length > 0 ? 'meets its limits' : 'no limits declared'}${figures ? `: ${figures}` : ''}`;
 }
 
+/** Keys that are known and not used in this version, each told by a finding. */
+const keysNotUsed = (findings: readonly Finding[]) =>
+  findings.filter(({ rule }) => rule === 'reserved-key').map(({ at }) => String(at.path.at(-1)));
+
 /** What the verdict's figures leave out: elements that are not complete, keys that are not used yet. */
-export const leftOut = ({ networks, link }: Computed): readonly string[] => [
-  ...new Set([...(networks?.without ?? []), ...(link?.without ?? [])]),
+export const leftOut = ({ networks, link, findings }: Computed & Pick<Judged, 'findings'>): readonly string[] => [
+  ...new Set([...(networks?.without ?? []), ...(link?.without ?? []), ...keysNotUsed(findings)]),
 ];
 
 /** The state of a channel in one line. Accepted findings count for nothing. */

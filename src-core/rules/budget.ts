@@ -61,7 +61,7 @@ export const budget: Rule = {
   doc: `An element loses more by itself, in the reference impedance, than its \`budget\`; or the elements that name an owner lose more
 together than that owner's. What elements lose by reflecting at each other is nobody's and not counted here: see the ledger's last row.
 Nominal values.`,
-  bad: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm, budget: 0.5 dB @ nyquist }]',
+  bad: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm, budget: 0.1 dB @ nyquist }]',
   good: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm, budget: 5 dB @ nyquist }]',
   *check(judged) {
     yield* elementsOver(judged);

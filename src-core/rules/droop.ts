@@ -7,13 +7,13 @@ import { changed, modelWith } from './what-if';
 
 type Capacitor = Element<'capacitor'>;
 
-const valueOf = (element: AnyElement) => (element as Capacitor).values.value;
+const capacitance = (element: AnyElement) => (element as Capacitor).values.value;
 
 /** The channel with each capacitor at one end of its tolerance. */
 const atEnd = (model: Model, end: (value: NonNullable<Capacitor['values']['value']>) => number): Model => ({
   ...model,
   elements: model.elements.map((element) => {
-    const value = element.kind === 'capacitor' ? valueOf(element) : undefined;
+    const value = element.kind === 'capacitor' ? capacitance(element) : undefined;
     return value ? changed(element, { value: { ...value, value: end(value) } }) : element;
   }),
 });
@@ -23,12 +23,14 @@ const highest = (model: Model) => droopOf(atEnd(model, ({ value, plus }) => valu
 
 /** The next larger value of the E3 series with which the droop is allowed. */
 function larger(model: Model, capacitor: AnyElement, share: number): { value: number; share: number } | undefined {
-  const { minus, value: nominal } = valueOf(capacitor)!;
+  const { minus, value: nominal } = capacitance(capacitor)!;
   for (let decade = Math.floor(Math.log10(nominal)); decade < 0; decade++) {
     for (const digits of [1, 2.2, 4.7]) {
       const value = Number(`${digits}e${decade}`);
       if (value <= nominal) continue;
-      const larger = changed(capacitor, { value: { ...valueOf(capacitor)!, value, minus: (minus / nominal) * value } });
+      const larger = changed(capacitor, {
+        value: { ...capacitance(capacitor)!, value, minus: (minus / nominal) * value },
+      });
       const after = lowest(modelWith(model, larger))!.share;
       if (after <= share) return { value, share: after };
     }
@@ -39,7 +41,7 @@ function larger(model: Model, capacitor: AnyElement, share: number): { value: nu
 function fixesFor(model: Model, capacitor: AnyElement, share: number): readonly Fix[] {
   const fits = larger(model, capacitor, share);
   if (!fits) return [];
-  const tolerance = /\s*(?:±|\+).*$/.exec(valueOf(capacitor)!.text)?.[0] ?? '';
+  const tolerance = /\s*(?:±|\+).*$/.exec(capacitance(capacitor)!.text)?.[0] ?? '';
   // An absolute tolerance belongs to the value that it was written for.
   const text = show.capacitance(fits.value) + (tolerance.includes('%') ? tolerance : '');
   const title = `Use ${show.capacitance(fits.value)}: ${show.percent(fits.share)} of droop`;
@@ -62,7 +64,7 @@ common practice.`,
     if (!worst || worst.share <= percent / 100) return;
     const best = highest(model)!.share;
     const capacitors = model.elements.filter(({ name }) => worst.capacitors.includes(name));
-    const smallest = capacitors.reduce((a, b) => (valueOf(b)!.value < valueOf(a)!.value ? b : a));
+    const smallest = capacitors.reduce((a, b) => (capacitance(b)!.value < capacitance(a)!.value ? b : a));
     const also =
       best < worst.share ? ` at the lower end of its tolerance (${show.percent(best)} at the upper one)` : '';
     yield {

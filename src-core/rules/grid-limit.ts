@@ -1,19 +1,19 @@
 import { show } from '../quantity/show';
 import type { Rule } from './types';
 
-export const gridLimit: Rule = {
+export const gridLimit: Rule<{ percent: number }> = {
   name: 'grid-limit',
   severity: 'warning',
   reads: 'networks',
-  options: {},
+  options: { percent: 0.2 },
   doc: `The response rings for so long that 16,384 points of frequency do not hold it: what is left at the end of the time window folds
-back onto its beginning. The finding tells the share of the main cursor that may be wrong. Mostly a very long path with almost no loss
+back onto its beginning. The finding tells, where it is more than \`percent\`, the share of the main cursor that may be wrong. Mostly a very long path with almost no loss
 and a strong reflection at both ends; a file with resonances that hardly decay does it too.`,
-  bad: 'path: [{ trace: run, length: 30 m, impedance: 100 ohm, delay: 6.6 ps/mm, loss: 0.001 dB/m @ 5 GHz }]',
-  good: 'path: [{ trace: run, length: 100 mm, impedance: 100 ohm, delay: 6.6 ps/mm, loss: 0.001 dB/mm @ 5 GHz }]',
-  *check({ model, networks }) {
+  bad: 'path: [{ cable: tail, length: 90 m, impedance: 100 ohm, delay: 6 ns/m, loss: 0.01 dB/m @ 5 GHz }]',
+  good: 'path: [{ cable: tail, length: 0.3 m, impedance: 100 ohm, delay: 4 ns/m, loss: 1 dB/m @ 5 GHz }]',
+  *check({ model, networks }, { percent }) {
     const error = networks!.grid.remainingError;
-    if (error === undefined) return;
+    if (error === undefined || error <= percent / 100) return;
     yield {
       at: { file: model.file, path: ['path'], on: 'key' },
       message: `The response does not decay within the ${show.count(networks!.grid.points, 'point')} of the grid: cursors may be wrong by ${show.percent(error)} of the main one.`,

@@ -22,8 +22,8 @@ export const impedanceStep: Rule<{ percent: number }> = {
   doc: `Two neighbours with length (package, trace, cable, connector; vias, capacitors and stubs between them are passed over) differ in
 impedance by more than \`percent\` of the lower one, at the worst ends of their tolerances. A step of 25 % reflects a ninth of the wave,
 19 dB of return loss from this joint alone. Both ends are shown. Bring the widths nearer, or tighten the tolerance. Common practice.`,
-  bad: 'path: [{ package: chip, length: 10 mm, impedance: 78 ohm, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }]',
-  good: 'path: [{ package: chip, length: 10 mm, impedance: 82 ohm, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }]',
+  bad: 'path: [{ package: chip, length: 2 mm, impedance: 78 ohm, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }]',
+  good: 'path: [{ package: chip, length: 2 mm, impedance: 82 ohm, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }]',
   *check({ networks }, { percent }) {
     let before: { one: ElementNetwork; range: readonly [number, number] } | undefined;
     for (const one of networks!.elements) {

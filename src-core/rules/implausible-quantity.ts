@@ -8,7 +8,7 @@ export const implausibleQuantity: Rule = {
   options: {},
   doc: `A value that is possible and hardly meant: 42 m of trace, a dielectric constant of 15, a drill of 4 mm. Mostly a slip of the unit's prefix or
 case. The bounds are wide and stand in the format's reference.`,
-  bad: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm, skew: 200 ps }]',
-  good: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm, skew: 2 ps }]',
+  bad: 'conditions: { temperature: 200 degC }',
+  good: 'conditions: { temperature: 60 degC }',
   check: reportedByStages,
 };

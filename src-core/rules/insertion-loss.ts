@@ -14,7 +14,7 @@ export const insertionLoss: Rule = {
 straight in dB over frequency and judged between its ends. The finding tells the point with the least in hand and, as related place,
 the element that spends the most over its fair share: its budget where it has one, else the part of the allowed loss that its share of
 the delay gives it. Nominal values. Shorten that element, use a laminate or foil with less loss, or mend its reflections.`,
-  bad: 'limits: [{ insertion-loss: whole, max: 3 dB @ nyquist }]',
+  bad: 'limits: [{ insertion-loss: whole, max: 1 dB @ nyquist }]',
   good: 'limits: [{ insertion-loss: whole, max: 12 dB @ nyquist }]',
   *check(judged) {
     for (const outcome of limitOutcomes(judged)) {

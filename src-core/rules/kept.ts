@@ -19,8 +19,14 @@ function stagesOf(rule: AnyRule, judged: Judged): readonly unknown[] {
 /** By the model, which goes when its analysis does: nothing here outlives it. */
 const kept = new WeakMap<object, Map<string, Kept>>();
 
+const latest = new WeakMap<object, Judged>();
+
+/** The newest analysis of a model: what a kept fix computes its gain from, since the link comes after the rules that offer it. */
+export const latestOf = (judged: Judged): Judged => latest.get(judged.model) ?? judged;
+
 /** A rule's reports, from before where none of what it reads has changed. */
 export function keptReports(rule: AnyRule, judged: Judged, options: Record<string, unknown>): Reports {
+  latest.set(judged.model, judged);
   const stages = stagesOf(rule, judged);
   const optionsText = JSON.stringify(options);
   const byRule = kept.get(judged.model) ?? new Map<string, Kept>();

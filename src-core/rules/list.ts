@@ -1,7 +1,6 @@
 import { ambiguousName } from './ambiguous-name';
 import { budget } from './budget';
 import { causality } from './causality';
-import { commaDecimal } from './comma-decimal';
 import { configuration } from './configuration';
 import { countedTwice } from './counted-twice';
 import { dataRange } from './data-range';
@@ -59,7 +58,6 @@ export const rules: readonly AnyRule[] = [
   // what the text says
   schema,
   quantity,
-  commaDecimal,
   implausibleQuantity,
   reservedKey,
   unusedKey,

@@ -29,7 +29,7 @@ export const missingEnd: Rule = {
   doc: `A limit asks for the eye, and the channel does not say what drives the path (\`transmitter\` with its \`swing\`) or what it ends in
 (\`receiver\`): the eye cannot be judged. Without a limit on the eye neither is needed.`,
   bad: 'receiver: null',
-  good: 'receiver: null\nlimits: [{ eye: main, note: null }]',
+  good: 'receiver: { noise: 2 mV }',
   *check(judged) {
     const { model } = judged;
     const limit = model.limits.find(({ kind }) => kind === 'eye');

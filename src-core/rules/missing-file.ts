@@ -7,7 +7,7 @@ export const missingFile: Rule = {
   reads: 'model',
   options: {},
   doc: `A parts file or Touchstone file that is not there. Paths are relative to the file that names them.`,
-  bad: 'use: { board: board.parts.yaml, far: far.parts.yaml }',
-  good: 'use: { board: board.parts.yaml }',
+  bad: 'use: { board: board.parts.yaml, other: other.parts.yaml, far: far.parts.yaml }',
+  good: 'use: { board: board.parts.yaml, other: other.parts.yaml }',
   check: reportedByStages,
 };

@@ -8,7 +8,7 @@ export const quantity: Rule = {
   options: {},
   doc: `A quantity that cannot be read: a number without its unit, a unit of another dimension, a decimal comma, a tolerance or a frequency
 where none can stand. A number without a unit is never guessed: the fixes offer each unit that fits.`,
-  bad: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100, impedance: 100 ohm }]',
-  good: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm }]',
+  bad: 'conditions: { temperature: 40 }',
+  good: 'conditions: { temperature: 40 degC }',
   check: reportedByStages,
 };

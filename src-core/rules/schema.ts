@@ -8,7 +8,7 @@ export const schema: Rule = {
   options: {},
   doc: `A key that its mapping does not have, a key that is missing, a value of the wrong shape. The kind of an element or limit, its first
 key, chooses what is wanted of it; where a name is near, the fix writes it. Keys that begin with \`x-\` are kept and ignored.`,
-  bad: 'path: [{ trace: run, stackup: board.main, layer: L3, lenght: 100 mm, length: 100 mm, impedance: 100 ohm }]',
-  good: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm }]',
+  bad: 'path: [{ capacitor: coupling, value: 100 nF, refdess: C1 }]',
+  good: 'path: [{ capacitor: coupling, value: 100 nF, refdes: C1 }]',
   check: reportedByStages,
 };

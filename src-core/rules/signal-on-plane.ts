@@ -7,7 +7,7 @@ export const signalOnPlane: Rule = {
   reads: 'model',
   options: {},
   doc: `A trace on a copper layer that is declared \`plane: true\`. A plane carries no signal: it is what the traces above and below it refer to.`,
-  bad: 'path: [{ via: dive, part: board.hole, to: L2 }, { trace: run, stackup: board.main, layer: L2, length: 100 mm, impedance: 100 ohm }]',
-  good: 'path: [{ via: dive, part: board.hole, to: L3 }]',
+  bad: 'path: [{ trace: tail, stackup: board.main, layer: L2, length: 5 mm, impedance: 100 ohm }]',
+  good: 'path: [{ trace: tail, stackup: board.main, layer: L1, length: 5 mm, impedance: 100 ohm }]',
   check: reportedByStages,
 };

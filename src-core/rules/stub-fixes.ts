@@ -46,35 +46,51 @@ function backdrillText(element: Element<'via'>, sides: readonly Side[], text: st
 }
 
 /**
- * The backdrill that lifts the notch of the computed response to `wantedHz`, pads included, at the upper end of the drill's
- * tolerance. Of the remainders that do, the longest: it keeps the drill farthest from the layer that it must not cut.
- * @returns undefined without drill rules, or where they leave no depth that helps
+ * Backdrills that lift the notch of the computed response to `wantedHz`, pads included, at the upper end of the drill's tolerance.
+ * First the longest remainder that does: it keeps the drill farthest from the layer that it must not cut. Then the shortest that the
+ * fabricator leaves, where that is another: it gains the most.
+ * @returns none without drill rules, or where they leave no depth that helps
  */
-export function backdrillFix(
+export function backdrillFixes(
   judged: Judged,
   element: AnyElement,
   stubs: readonly StubFact[],
   wantedHz: number,
-): Fix | undefined {
+): readonly Fix[] {
   const via = element as Element<'via'>;
   const { backdrillMinimumMeters: minimum, backdrillToleranceMeters: tolerance = 0 } = via.stackup?.drillRules ?? {};
   const sides = stubs.flatMap(({ side }) => (side === 'branch' ? [] : [side]));
-  if (minimum === undefined || sides.length === 0) return undefined;
+  if (minimum === undefined || sides.length === 0) return [];
   const longest = Math.max(...stubs.map(({ lengthMeters }) => lengthMeters));
-  for (const remainder of downwards(longest, minimum + tolerance)) {
-    const text = `${millimetres(remainder)}${tolerance > 0 ? ` ± ${millimetres(tolerance)}` : ''}`;
-    const candidate = drilled(via, sides, lengthQuantity(remainder, tolerance, text));
-    const after = prepareChanged(judged, candidate)?.facts.stubs;
-    if (!after || lowestNotch(after) < wantedHz) continue;
-    const title = `Backdrill \`${via.name}\` to ${text}: notch from ${show.frequency(lowestNotch(stubs))} to ${notchAfter(after)}`;
-    const value = backdrillText(via, sides, text);
-    return withGain(judged, candidate, {
-      title,
-      preferred: true,
-      edits: [{ op: 'set', at: via.place, key: 'backdrill', text: value }],
-    });
-  }
-  return undefined;
+  const helping = [...downwards(longest, minimum + tolerance)].filter((remainder) => {
+    const after = prepareChanged(judged, drilled(via, sides, lengthQuantity(remainder, tolerance, '')))?.facts.stubs;
+    return after !== undefined && lowestNotch(after) >= wantedHz;
+  });
+  const chosen = helping.length > 1 ? [helping[0], helping[helping.length - 1]] : helping;
+  return chosen.map((remainder, i) =>
+    drillFix(judged, via, { sides, stubs, remainder, tolerance, preferred: i === 0 }),
+  );
+}
+
+interface Drilling {
+  readonly sides: readonly Side[];
+  readonly stubs: readonly StubFact[];
+  readonly remainder: number;
+  readonly tolerance: number;
+  readonly preferred: boolean;
+}
+
+function drillFix(
+  judged: Judged,
+  via: Element<'via'>,
+  { sides, stubs, remainder, tolerance, preferred }: Drilling,
+): Fix {
+  const text = `${millimetres(remainder)}${tolerance > 0 ? ` ± ${millimetres(tolerance)}` : ''}`;
+  const candidate = drilled(via, sides, lengthQuantity(remainder, tolerance, text));
+  const after = prepareChanged(judged, candidate)?.facts.stubs ?? [];
+  const title = `Backdrill \`${via.name}\` to ${text}: notch from ${show.frequency(lowestNotch(stubs))} to ${notchAfter(after)}`;
+  const edits = [{ op: 'set', at: via.place, key: 'backdrill', text: backdrillText(via, sides, text) }] as const;
+  return withGain(judged, candidate, { title, ...(preferred && { preferred }), edits });
 }
 
 const notchAfter = (stubs: readonly StubFact[]) => {
@@ -83,18 +99,18 @@ const notchAfter = (stubs: readonly StubFact[]) => {
 };
 
 /** A declared stub cut short enough. A stub of a part is the part's. */
-export function shortenFix(judged: Judged, element: AnyElement, stub: StubFact, wantedHz: number): Fix | undefined {
+export function shortenFixes(judged: Judged, element: AnyElement, stub: StubFact, wantedHz: number): readonly Fix[] {
   const written = (element as Element<'stub'>).values.length;
-  if (element.kind !== 'stub' || !written || element.places.length?.file !== element.place.file) return undefined;
+  if (element.kind !== 'stub' || !written || element.places.length?.file !== element.place.file) return [];
   for (const length of downwards(stub.lengthMeters, STEP_METERS)) {
     const text = `${millimetres(length)}${tolerancePart(written.text)}`;
     const candidate = changed(element, { length: { ...written, value: length, text, unit: 'mm' } });
     const after = prepareChanged(judged, candidate)?.facts.stubs;
     if (!after || lowestNotch(after) < wantedHz) continue;
     const title = `Shorten \`${element.name}\` to ${millimetres(length)}: notch from ${show.frequency(stub.lowestNotchHz)} to ${notchAfter(after)}`;
-    return withGain(judged, candidate, { title, edits: [{ op: 'value', at: element.places.length, text }] });
+    return [withGain(judged, candidate, { title, edits: [{ op: 'value', at: element.places.length, text }] })];
   }
-  return undefined;
+  return [];
 }
 
 /** ` ± 0.1 mm` as it was written, where it is not relative to the length. */

@@ -2,7 +2,7 @@ import type { AnyElement } from '../model/types';
 import type { StubFact } from '../networks/types';
 import { show } from '../quantity/show';
 import { keyOf } from './places';
-import { backdrillFix, shortenFix } from './stub-fixes';
+import { backdrillFixes, shortenFixes } from './stub-fixes';
 import type { Rule } from './types';
 
 /** Both ends where a tolerance is declared, since the worst one is judged. */
@@ -29,11 +29,12 @@ export const stubResonance: Rule<{ multiple: number }> = {
   options: { multiple: 3 },
   doc: `A stub is a quarter-wave resonator: where it is a quarter of a wavelength long it shorts the line, cuts a notch into the
 loss and takes from the signal well below it. Warns when the notch of the stub with its pads, at the worst end of its tolerance, lies
-below \`multiple\` × Nyquist. The fix drills a via's barrel back to the most that may be left: short enough at the drill's upper
-tolerance, and by its lower one no shorter than the fabricator's \`backdrill-minimum\`; without \`drill-rules\` none is offered. The
+below \`multiple\` × Nyquist. The fixes drill a via's barrel back: to the most that may be left, short enough at the
+drill's upper tolerance, and to the least, no shorter at the lower one than the fabricator's \`backdrill-minimum\`; without
+\`drill-rules\` none is offered. The
 multiple is common practice.`,
-  bad: 'path: [{ via: dive, part: board.thick-hole, to: L3 }, { trace: run, stackup: board.thick, layer: L3, length: 100 mm, impedance: 100 ohm }]',
-  good: 'path: [{ via: dive, part: board.thick-hole, to: L3, backdrill: { bottom: 0.3 mm } }]',
+  bad: 'path: [{ via: dive, part: board.long-hole }]',
+  good: 'path: [{ via: dive, part: board.long-hole, backdrill: { bottom: 0.3 mm } }]',
   *check(judged, { multiple }) {
     const { model, networks } = judged;
     const wanted = multiple * model.nyquistFrequency;
@@ -41,10 +42,10 @@ multiple is common practice.`,
       const stubs = prepared?.facts.stubs.filter(({ lowestNotchHz }) => lowestNotchHz < wanted) ?? [];
       if (stubs.length === 0) continue;
       const worst = worstStub(stubs);
-      const fix =
+      const fixes =
         element.kind === 'via'
-          ? backdrillFix(judged, element, stubs, wanted)
-          : shortenFix(judged, element, worst, wanted);
+          ? backdrillFixes(judged, element, stubs, wanted)
+          : shortenFixes(judged, element, worst, wanted);
       yield {
         at: placeOf(element),
         subject: element.name,
@@ -52,7 +53,7 @@ multiple is common practice.`,
         value: worst.lowestNotchHz,
         worse: 'lower',
         valueText: show.frequency(worst.lowestNotchHz),
-        fixes: fix ? [fix] : [],
+        fixes,
       };
     }
   },

@@ -9,7 +9,7 @@ export const CONFIG = 'lanewright.config.yaml';
 const channel = `lanewright: 1
 title: Rule example
 line-rate: 10 Gb/s
-use: { board: board.parts.yaml }
+use: { board: board.parts.yaml, other: other.parts.yaml }
 transmitter: { swing: 800 mV, rise-time: 20 ps }
 receiver: { noise: 1 mV }
 path:
@@ -21,43 +21,41 @@ path:
   - { trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm }
   - { via: rise, part: board.hole, to: L1 }
   - { connector: mate, delay: 50 ps, impedance: 100 ohm, loss: 0.3 dB @ 5 GHz }
+  - { package: landing, part: other.landing }
 limits:
   - { insertion-loss: whole, max: 12 dB @ nyquist }
-  - { return-loss: match, band: 50 MHz to 5 GHz, min: 8 dB }
+  - { return-loss: match, band: 50 MHz to 5 GHz, min: 5 dB }
   - { eye: main, height: 40 mV, width: 0.3 UI }
 `;
 
-const rows = (core: string) => `    - { copper: L1, thickness: 35 um }
+/** A board of 4 mm with a hole that is drilled back, and one that is not. */
+const board = `lanewright: 1
+materials:
+  core: { dk: 3.4 @ 10 GHz, df: 0.003 @ 10 GHz }
+stackups:
+  main:
+    - { copper: L1, thickness: 35 um }
     - { dielectric: d1, material: core, thickness: 100 um }
     - { copper: L2, thickness: 17 um, plane: true }
     - { dielectric: d2, material: core, thickness: 150 um }
     - { copper: L3, thickness: 17 um }
     - { dielectric: d3, material: core, thickness: 150 um }
     - { copper: L4, thickness: 17 um, plane: true }
-    - { dielectric: d4, material: core, thickness: ${core} }
+    - { dielectric: d4, material: core, thickness: 3.3 mm }
     - { copper: L5, thickness: 17 um, plane: true }
     - { dielectric: d5, material: core, thickness: 100 um }
     - { copper: L6, thickness: 35 um }
-`;
-
-/** One board of 1 mm and one of 3 mm, with a through hole each. */
-const board = `lanewright: 1
-materials:
-  core: { dk: 3.4 @ 10 GHz, df: 0.003 @ 10 GHz }
-stackups:
-  main:
-${rows('360 um')}  thick:
-${rows('2.4 mm')}drill-rules: { backdrill-minimum: 0.15 mm, backdrill-tolerance: 0.1 mm }
+drill-rules: { backdrill-minimum: 0.15 mm, backdrill-tolerance: 0.1 mm }
 parts:
-  hole: { kind: via, stackup: main, drill: 0.2 mm, antipad: 0.7 mm, pitch: 0.8 mm }
-  thick-hole: { kind: via, stackup: thick, drill: 0.2 mm, antipad: 0.7 mm, pitch: 0.8 mm }
+  hole: { kind: via, stackup: main, drill: 0.2 mm, antipad: 0.7 mm, pitch: 0.8 mm, backdrill: { bottom: 0.3 mm ± 0.1 mm } }
+  long-hole: { kind: via, stackup: main, drill: 0.2 mm, antipad: 0.7 mm, pitch: 0.8 mm }
+  mate: { kind: connector, delay: 40 ps, impedance: 95 ohm, loss: 0.2 dB @ 5 GHz }
 `;
 
 const other = `lanewright: 1
-materials:
-  core: { dk: 4 @ 10 GHz, df: 0.02 @ 10 GHz }
 parts:
-  hole: { kind: via, drill: 0.3 mm, antipad: 0.9 mm, pitch: 1 mm }
+  mate: { kind: connector, delay: 50 ps, impedance: 100 ohm, loss: 0.3 dB @ 5 GHz }
+  landing: { kind: package, length: 3 mm, impedance: 100 ohm, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }
 `;
 
 interface Sweep {

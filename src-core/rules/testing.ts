@@ -30,13 +30,24 @@ export function filesWith(example: string): {
   return { files: new Map([...files, [file, { kind: 'text', text: laid.text }]]), moved: laid.moved };
 }
 
-export function analyseFiles(all: ReadonlyMap<FilePath, FileContent>, file: FilePath = CHANNEL): Analysis {
-  return analyse({ file, files: all, configFile: CONFIG, today: TODAY }, undefined, { until: 'link' });
+export function analyseFiles(
+  all: ReadonlyMap<FilePath, FileContent>,
+  { file = CHANNEL, until = 'link' }: { file?: FilePath; until?: 'time' | 'link' } = {},
+): Analysis {
+  return analyse({ file, files: all, configFile: CONFIG, today: TODAY }, undefined, { until });
 }
 
-/** The analysis of an example, of its configuration where it is about that. */
-export const analyseExample = (example: string): Analysis =>
-  analyseFiles(filesWith(example).files, example.startsWith(`# ${CONFIG}`) ? CONFIG : CHANNEL);
+const analysed = new Map<string, Analysis>();
+
+/** The analysis of an example, of its configuration where it is about that. Computed once. */
+export function analyseExample(example: string): Analysis {
+  const known = analysed.get(example);
+  if (known) return known;
+  const file = example.startsWith(`# ${CONFIG}`) ? CONFIG : CHANNEL;
+  const analysis = analyseFiles(filesWith(example).files, { file });
+  analysed.set(example, analysis);
+  return analysis;
+}
 
 interface Marked {
   readonly start: number;

@@ -60,6 +60,8 @@ export interface Rule<Options extends Record<string, unknown> = Record<string, n
   readonly doc: string;
   /** YAML laid over the complete base channel of `rules/testing.ts`: gives just this finding. */
   readonly bad: string;
+  /** Rules whose findings come with it of necessity in `bad`: a limit that fails has its reason, too. */
+  readonly alsoGives?: readonly string[];
   /** The same, just met: no finding at all. */
   readonly good: string;
   check(analysis: Judged, options: Options): Iterable<Report & { subject?: string }>;

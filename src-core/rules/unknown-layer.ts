@@ -8,7 +8,7 @@ export const unknownLayer: Rule = {
   options: {},
   doc: `A layer that the stackup of this element does not have, or an end of a via that cannot be told from its neighbours. The layers that there
 are stand in the message.`,
-  bad: 'path: [{ trace: run, stackup: board.main, layer: L9, length: 100 mm, impedance: 100 ohm }]',
-  good: 'path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm }]',
+  bad: 'path: [{ trace: tail, stackup: board.main, layer: L9, length: 5 mm, impedance: 100 ohm }]',
+  good: 'path: [{ trace: tail, stackup: board.main, layer: L1, length: 5 mm, impedance: 100 ohm }]',
   check: reportedByStages,
 };

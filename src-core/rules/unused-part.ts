@@ -1,3 +1,4 @@
+import { joinPath } from '../inputs';
 import type { ParsedFile } from '../text/parsed';
 import type { Judged, Report, Rule } from './types';
 
@@ -61,10 +62,17 @@ function* unusedNames({ model, parsed }: Judged, own: ParsedFile) {
   );
   for (const [prefix, path] of Object.entries(record(root.use))) {
     const used = [...texts].some((text) => text.startsWith(`${prefix}.`)) || takesBareName(model, prefix, texts);
-    if (!used && typeof path === 'string' && parsed.size > 1) yield unused(own.file, 'use', 'parts file', prefix, '');
+    if (!used && typeof path === 'string' && isRead(own.file, path, parsed))
+      yield unused(own.file, 'use', 'parts file', prefix, '');
   }
   for (const name of Object.keys(record(root.owners)))
     if (!texts.has(name)) yield unused(own.file, 'owners', 'owner', name, ' by any element');
+}
+
+/** A file that is missing has its own finding. */
+function isRead(from: string, path: string, parsed: Judged['parsed']): boolean {
+  const { file } = joinPath(from, path);
+  return file !== undefined && parsed.has(file);
 }
 
 /** Prefixes may be left out while a name is unambiguous. */

@@ -7,7 +7,8 @@ export const waiverOutgrown: Rule = {
   reads: 'model',
   options: {},
   doc: `The finding has grown beyond the value that its waiver accepts. It counts again; whoever accepted it must look anew.`,
-  bad: 'limits: [{ insertion-loss: whole, max: 3 dB @ nyquist }]\nwaivers: [{ rule: insertion-loss, at: whole, up-to: 3.1 dB, until: 2026-12-31, by: me, reason: an old board }]',
-  good: 'limits: [{ insertion-loss: whole, max: 3 dB @ nyquist }]\nwaivers: [{ rule: insertion-loss, at: whole, up-to: 12 dB, until: 2026-12-31, by: me, reason: an old board }]',
+  bad: 'limits: [{ insertion-loss: whole, max: 1 dB @ nyquist }]\nwaivers: [{ rule: insertion-loss, at: whole, up-to: 1.01 dB, until: 2026-12-31, by: me, reason: an old board }]',
+  alsoGives: ['insertion-loss'],
+  good: 'limits: [{ insertion-loss: whole, max: 1 dB @ nyquist }]\nwaivers: [{ rule: insertion-loss, at: whole, up-to: 12 dB, until: 2026-12-31, by: me, reason: an old board }]',
   check: reportedByStages,
 };

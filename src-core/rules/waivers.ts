@@ -18,11 +18,9 @@ function partsOf(valueText = '') {
   return shown ? { digits: Number(shown[1]), decimals: shown[2]?.length ?? 0, unit: shown[3] } : undefined;
 }
 
-/** A waiver of another dimension than the finding's compares with nothing. */
-function isComparable({ upTo }: Waiver, { valueText }: Finding): boolean {
-  const unit = unitNamed(partsOf(valueText)?.unit ?? '');
-  return !upTo || !unit || unit.dimension === upTo.dimension;
-}
+/** A waiver of another dimension than the finding's compares with nothing. Shares and bare numbers are ratios. */
+const isComparable = ({ upTo }: Waiver, { valueText }: Finding) =>
+  !upTo || (unitNamed(partsOf(valueText)?.unit ?? '')?.dimension ?? 'ratio') === upTo.dimension;
 
 /** True where a finding is no worse than what the waiver accepts. A waiver without `up-to` accepts any value. */
 function covers(waiver: Waiver, finding: Finding): boolean {
