@@ -82,8 +82,8 @@ function readData(reading: Reading, ports: number): TouchstoneData | undefined {
           `${perPoint} numbers make a frequency of ${ports} ports, and the next begins a new line; here stands one too many, or one is missing before.`,
         );
       }
-      if (value <= last && ports === 2) break; // noise data begin where the frequency falls (F-08)
       if (value < 0) return fail('A frequency below 0 has no meaning.');
+      if (value <= last && ports === 2) break; // noise data begin where the frequency falls (F-08)
       if (value <= last) return fail('The frequencies have to rise; this one does not.');
       if (count / perPoint >= touchstoneLimits.points)
         return fail(
