@@ -90,6 +90,7 @@ const termination = (end: string) => ({
   'common-impedance': Type.Optional(
     quantity('impedance', {
       description: `Common-mode termination of the ${end}.`,
+      examples: ['25 ohm'],
       valid: [1e-3, 1e6],
       plausible: [5, 125],
       default: 'a quarter of the differential one',

@@ -5,7 +5,7 @@
  * - `readValues(schema, raw, options)` checks a mapping against its schema and reads its quantities. Keys that are bad are left
  *   out of `values` and have a problem, the others are kept. (`validateEntry` is its first half: the schema alone.)
  * - `missingKeys(kind, values, singleEnded)`, after a part was merged in: what the kind's model needs and is not there.
- *   Of an entry whose own name is missing say that alone. `pairKeyProblems(raw)` for a single-ended channel.
+ *   Of an entry whose own name is missing say that alone.
  * - `reportOf(problem, { file, path })` turns a problem, whose paths are relative to the entry, into a `Report` at a place.
  * - `keysAt`, `keySchemaAt`, `keysOf`: descriptions for hover and completion.
  *
@@ -15,7 +15,6 @@ export { type EntryKind, entryKind, schemaOfKind } from './entry-kind';
 export { freeName } from './free-name';
 export { type KeyInfo, keySchemaAt, keysAt, keysOf } from './keys';
 export { type MissingKey, missingKeyProblems, missingKeys } from './missing';
-export { pairKeyProblems } from './pair-keys';
 export { type FormatFix, type FormatProblem, type FormatRule, type RelativeEdit, reportOf } from './problem';
 export { type ReadOptions, readValues } from './read';
 export { validateEntry } from './validate';

@@ -35,6 +35,7 @@ export function kindOfValue(value: unknown): string {
   if (value === null || value === undefined) return 'empty';
   if (Array.isArray(value)) return 'a list';
   if (typeof value === 'object') return 'a mapping';
+  if (typeof value === 'number' && !Number.isFinite(value)) return 'no finite number';
   return quote(String(value));
 }
 

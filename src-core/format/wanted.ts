@@ -64,7 +64,7 @@ function empty({ path, node, subject }: Wrong): Said {
 
 function wanted(wrong: Wrong): Said {
   const { node, actual } = wrong;
-  const spec = node['x-quantity'];
+  const spec = node['x-quantity'] ?? node.anyOf?.find((branch) => branch['x-quantity'])?.['x-quantity'];
   if (spec) return typeof actual === 'number' ? numberForQuantity(wrong, actual, spec) : notAQuantity(wrong, spec);
   const choices = choicesOf(node);
   return choices.length > 0 ? notAmong(wrong, choices) : otherType(wrong);

@@ -43,9 +43,13 @@ const LONGEST = 40;
 const unshown = (letter: string) =>
   letter < ' ' || letter === '`' || letter === '\u007f' || letter === '\u2028' || letter === '\u2029';
 
+/** Without the half of a letter that a cut through a surrogate pair leaves. */
+const wholeLetters = (text: string) =>
+  text.charCodeAt(text.length - 1) >>> 10 === 0xd800 >>> 10 ? text.slice(0, -1) : text;
+
 /** A piece of text in backquotes, on one line, cut where it is long. */
 export function quoted(text: string): string {
-  const cut = text.length > LONGEST ? `${text.slice(0, LONGEST - 1)}…` : text;
+  const cut = text.length > LONGEST ? `${wholeLetters(text.slice(0, LONGEST - 1))}…` : text;
   return `\`${[...cut].map((letter) => (unshown(letter) ? ' ' : letter)).join('')}\``;
 }
 

@@ -1,12 +1,13 @@
 import type { Band, QuantitySpec } from '../../schemas/format/types';
 import { commaProblem, decimalComma } from './comma';
 import { problem, type QuantityProblem, quoted } from './problem';
-import { readQuantity } from './read';
+import { LONGEST, readQuantity } from './read';
 import { type Cursor, isAtEnd, scanNumber, skipSpace } from './scan';
 
 /** `50 MHz to 12 GHz`; the first unit may be left out where it is that of the second. */
 export function readBand(text: string | number, spec: QuantitySpec): { band?: Band; problem?: QuantityProblem } {
   const written = String(text);
+  if (written.length > LONGEST) return problem('band', 'This text is too long for a band.', 0, written.length);
   const comma = decimalComma(written);
   if (comma >= 0) return commaProblem(written, comma);
   const separator = separatorOf(written);

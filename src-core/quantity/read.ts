@@ -20,8 +20,11 @@ export interface QuantityReading {
   readonly problem?: QuantityProblem;
 }
 
+/** No quantity is longer; what is beyond is not looked at. */
+export const LONGEST = 500;
+
 /**
- * Reads `100 ohm ± 8% (3 sigma) @ 12.9 GHz` as the key's specification wants it. Time grows with the text's length.
+ * Reads `100 ohm ± 8% (3 sigma) @ 12.9 GHz` as the key's specification wants it. One pass; a long text is refused unread.
  * @param text as YAML gave it: a number where the text is one
  * @returns the quantity in SI units, or what is wrong, in words, its range in the text, and fixes that each give the whole
  *   text; an implausible size gives quantity and problem. Never throws; no number that is not finite passes.
@@ -33,6 +36,8 @@ export function readQuantity(
   context: QuantityContext = {},
 ): QuantityReading {
   const written = String(text);
+  if (written.length > LONGEST)
+    return problem('not-a-quantity', 'This text is too long for a quantity.', 0, written.length);
   const comma = decimalComma(written);
   if (comma >= 0) return commaProblem(written, comma);
   const cursor: Cursor = { text: written, at: 0 };
