@@ -5,6 +5,8 @@ import type { Resonance } from './types';
 
 /** Dips of two elements that lie this near are alike: both make what is seen. */
 const alike = 0.02;
+/** No real part is sharper; a stub without any loss would be infinitely so. */
+const mostQuality = 1e4;
 /** What the elements add to the channel's loss there for it to be called theirs, dB. */
 const leastDepthDb = 1;
 /** Where a dip is looked at: its own frequency and, to either side, these shares of it, closer and closer. */
@@ -25,7 +27,7 @@ export const keepDips = (): KeptDips => ({ own: new WeakMap(), around: new WeakM
  * so a lossy line is blamed for nothing, and a stub's dip that others drown is not listed. Dips of two elements within 2 % are named as one, with both.
  * A dip that two mismatches make between them is no element's and is not listed.
  * Q is the dip's frequency over the width in which those elements add more than 3 dB less than at its bottom, or more than half of it
- * where that is less than 6 dB.
+ * where that is less than 6 dB; at most 10,000.
  */
 export function resonancesOf(networks: Networks, kept: KeptDips = keepDips()): readonly Resonance[] {
   const dips = networks.elements.flatMap((element, index) =>
@@ -103,7 +105,7 @@ function bottomNear(added: Float64Array, middle: number): number {
   return bottom;
 }
 
-/** Width in which the addition is less than 3 dB (or half) below its bottom; straight in dB between the points. At least the spacing of those. */
+/** Width in which the addition is less than 3 dB (or half) below its bottom; straight in dB between the points. */
 function widthOf(frequencies: Float64Array, added: Float64Array, bottom: number): number {
   const edge = added[bottom] - Math.min(3, added[bottom] / 2);
   const reach = (step: 1 | -1): number => {
@@ -114,5 +116,5 @@ function widthOf(frequencies: Float64Array, added: Float64Array, bottom: number)
     }
     return Math.abs(frequencies[step > 0 ? frequencies.length - 1 : 0] - frequencies[bottom]);
   };
-  return Math.max(reach(-1) + reach(1), 1e-6 * frequencies[bottom]);
+  return Math.max(reach(-1) + reach(1), frequencies[bottom] / mostQuality);
 }

@@ -9,37 +9,27 @@ const decayed = 1e-3;
 /** A round trip without loss would ring for ever; more trips than this are counted as a grid that does not suffice. */
 const mostTrips = 1000;
 
-/** Of one element, at the frequencies of `probeFrequencies`. */
+/** Of one element, at each of `probeFrequencies`. */
 export interface Probe {
-  /** Largest |s11| or |s22|. */
-  readonly reflection: number;
-  /** Largest |s21|. */
-  readonly transmission: number;
+  /** The larger of |s11| and |s22|. */
+  readonly reflections: readonly number[];
+  /** |s21|, at most 1. */
+  readonly transmissions: readonly number[];
   readonly delaySeconds: number;
-  /** Losses at Nyquist / 4 and at Nyquist, nepers. */
-  readonly lossQuarter: number;
-  readonly lossNyquist: number;
 }
 
 /** Where elements are probed: an eighth, a quarter, a half and the whole of Nyquist. */
 export const probeFrequencies = (nyquist: number) => Float64Array.of(nyquist / 8, nyquist / 4, nyquist / 2, nyquist);
+const [quarter, whole] = [1, 3];
 
 export function probeOf({ differential: s }: Network, facts: ElementFacts | undefined, nyquist: number): Probe {
-  let reflection = 0;
-  let transmission = 0;
-  for (let at = 0; at < s.length; at += 8) {
-    reflection = Math.max(reflection, Math.hypot(s[at], s[at + 1]), Math.hypot(s[at + 6], s[at + 7]));
-    transmission = Math.max(transmission, Math.hypot(s[at + 4], s[at + 5]));
-  }
-  const loss = (point: number) =>
-    -Math.log(Math.min(1, Math.max(1e-6, Math.hypot(s[8 * point + 4], s[8 * point + 5]))));
+  const at = (i: number) => Math.min(1, Math.hypot(s[i], s[i + 1]));
+  const points = [0, 1, 2, 3].map((point) => 8 * point);
   const phase = -Math.atan2(s[5], s[4]);
   return {
-    reflection: Math.min(1, reflection),
-    transmission: Math.min(1, transmission),
+    reflections: points.map((i) => Math.max(at(i), at(i + 6))),
+    transmissions: points.map((i) => at(i + 4)),
     delaySeconds: facts?.delaySeconds ?? Math.max(0, phase) / (2 * Math.PI * (nyquist / 8)),
-    lossQuarter: loss(1),
-    lossNyquist: loss(3),
   };
 }
 
@@ -50,7 +40,7 @@ export function probeOf({ differential: s }: Network, facts: ElementFacts | unde
  */
 export function estimatedDecay(model: Model, probes: readonly Probe[]): Decay {
   const delaySeconds = probes.reduce((sum, probe) => sum + probe.delaySeconds, 0);
-  const settle = Math.max(skinTail(model, probes), echoes([...endsOf(model, probes)]));
+  const settle = Math.max(skinTail(model, probes), echoes(betweenEnds(model, probes)));
   return { delaySeconds, decaySeconds: delaySeconds + 3 * model.unitInterval + settle };
 }
 
@@ -59,43 +49,50 @@ export function estimatedDecay(model: Model, probes: readonly Probe[]): Decay {
  * is a unit interval of it. Source: Wigington and Nahman, Proc. IRE 45, 1957, 166-174.
  */
 function skinTail({ nyquistFrequency, unitInterval }: Model, probes: readonly Probe[]): number {
-  let quarter = 0;
-  let whole = 0;
-  for (const probe of probes) {
-    quarter += probe.lossQuarter;
-    whole += probe.lossNyquist;
-  }
-  const skin = Math.max(0, Math.min(whole, 4 * quarter - whole)); // the a of a√x + bx through x = 1/4 and 1
-  const main = Math.min(0.8, Math.max(0.02, Math.exp(-(quarter + whole) / 2)));
+  const lossAt = (point: number) =>
+    probes.reduce((sum, { transmissions }) => sum - Math.log(Math.max(1e-6, transmissions[point])), 0);
+  const [low, high] = [lossAt(quarter), lossAt(whole)];
+  const skin = Math.max(0, Math.min(high, 4 * low - high)); // the a of a√x + bx through x = 1/4 and 1
+  const main = Math.min(0.8, Math.max(0.02, Math.exp(-(low + high) / 2)));
   const k = skin / Math.sqrt(Math.PI * nyquistFrequency);
   return ((k * unitInterval) / (2 * Math.sqrt(Math.PI) * decayed * main)) ** (2 / 3);
 }
 
-/** The elements between what the two ends reflect at Nyquist. */
-function endsOf(model: Model, probes: readonly Probe[]): Probe[] {
-  const end = (termination: Termination | undefined): Probe => {
-    const { re, im } = terminationReflection(termination, model, model.nyquistFrequency);
-    return { reflection: Math.hypot(re, im), transmission: 1, delaySeconds: 0, lossQuarter: 0, lossNyquist: 0 };
-  };
+/** The elements between what the two ends reflect. */
+function betweenEnds(model: Model, probes: readonly Probe[]): Probe[] {
+  const frequencies = probeFrequencies(model.nyquistFrequency);
+  const end = (termination: Termination | undefined): Probe => ({
+    reflections: Array.from(frequencies, (f) => {
+      const { re, im } = terminationReflection(termination, model, f);
+      return Math.hypot(re, im);
+    }),
+    transmissions: [1, 1, 1, 1],
+    delaySeconds: 0,
+  });
   return [end(model.transmitter), ...probes, end(model.receiver)];
 }
 
-/** Longest time that an echo between two elements takes to fall by 60 dB below the pulse. */
+/** Longest time that an echo takes to fall by 60 dB below the pulse: between two elements, from the middle of each, or inside one. */
 function echoes(probes: readonly Probe[]): number {
   let longest = 0;
-  for (let i = 0; i < probes.length; i++) {
-    let between = 1;
-    let delay = probes[i].delaySeconds;
-    for (let j = i + 1; j < probes.length; j++) {
-      delay += probes[j].delaySeconds;
-      const trip = probes[i].reflection * probes[j].reflection * between;
-      if (trip > decayed)
-        longest = Math.max(
-          longest,
-          2 * delay * Math.min(mostTrips, Math.log(decayed) / Math.log(Math.min(trip, 0.9999))),
-        );
-      between *= probes[j].transmission ** 2;
-      if (between < decayed) break;
+  const hear = (trip: number, seconds: number) => {
+    if (trip <= decayed) return;
+    const trips = Math.min(mostTrips, Math.log(decayed) / Math.log(Math.min(trip, 0.9999)));
+    longest = Math.max(longest, 2 * seconds * trips);
+  };
+  for (let point = 0; point < 4; point++) {
+    for (let i = 0; i < probes.length; i++) {
+      const own = probes[i];
+      // A mismatched segment shows up to the sum of its two ends.
+      hear(((own.reflections[point] / 2) * own.transmissions[point]) ** 2, own.delaySeconds);
+      let between = own.reflections[point];
+      let delay = own.delaySeconds / 2;
+      for (let j = i + 1; j < probes.length && between > decayed; j++) {
+        const { reflections, transmissions, delaySeconds } = probes[j];
+        hear(between * reflections[point], delay + delaySeconds / 2);
+        between *= transmissions[point] ** 2;
+        delay += delaySeconds;
+      }
     }
   }
   return longest;
