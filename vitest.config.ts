@@ -9,6 +9,7 @@ export default defineConfig({
       'client/**/*.test.ts',
       'test/unit/**/*.test.ts',
       'test/preview/**/*.test.ts',
+      'test/protocol/**/*.test.ts',
     ],
     globalSetup: ['test/global-setup.ts'],
   },

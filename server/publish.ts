@@ -16,16 +16,15 @@ export function publishRenewed(connection: Connection, services: Services, ids: 
   const rounds = new Map<string, number>();
   const placedIn = new Map<string, readonly Located[]>();
   const wanted = new Set<'diagnostics' | 'hints' | 'lenses'>();
-  let timer: ReturnType<typeof setTimeout> | undefined;
 
   const ask = (what: 'diagnostics' | 'hints' | 'lenses') => {
+    if (wanted.size === 0) setTimeout(askNow, REFRESH_PAUSE);
     wanted.add(what);
-    timer ??= setTimeout(() => {
-      timer = undefined;
-      const now = [...wanted];
-      wanted.clear();
-      for (const one of now) void refresh(one).catch(() => undefined);
-    }, REFRESH_PAUSE);
+  };
+  const askNow = () => {
+    const now = [...wanted];
+    wanted.clear();
+    for (const one of now) void refresh(one).catch(() => undefined);
   };
   const refresh = async (what: 'diagnostics' | 'hints' | 'lenses') => {
     if (what === 'diagnostics' && services.client.refreshDiagnostics) await connection.languages.diagnostics.refresh();

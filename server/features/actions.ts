@@ -1,5 +1,6 @@
 import { type CodeAction, CodeActionKind, type CodeActionParams, type Diagnostic } from 'vscode-languageserver';
 import { type Action, actionsAt, editsOfFix, fixAllOf, placeKey } from '../../src-core/assist/actions';
+import { acceptedText } from '../../src-core/rules/waivers';
 import { fromRange } from '../convert';
 import { toDiagnostic } from '../diagnostics';
 import { type Analysed, type Handler, located } from '../handler';
@@ -53,13 +54,14 @@ function toCodeAction(
     const data: ActionData = { uri, rule: finding.rule, title, at: placeKey(finding) };
     return { title, kind: CodeActionKind.QuickFix, diagnostics, data, ...(action.preferred && { isPreferred: true }) };
   }
-  const { rule, subject, valueText, message } = finding;
+  const { rule, subject, message } = finding;
+  const value = acceptedText(finding);
   const argument: AcceptFinding = {
     uri,
     rule,
     at: subject ?? '',
     message,
-    ...(valueText !== undefined && { value: valueText }),
+    ...(value !== undefined && { value }),
   };
   return {
     title,

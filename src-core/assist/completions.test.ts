@@ -138,7 +138,12 @@ describe('paths', () => {
   });
   test('nothing above the root is looked at', async () => {
     const asked: string[] = [];
-    await offered('lanewright: 1\nuse:\n  b: ../../‸\n', { list: async (folder) => (asked.push(folder), []) });
+    await offered('lanewright: 1\nuse:\n  b: ../../‸\n', {
+      list: async (folder) => {
+        asked.push(folder);
+        return [];
+      },
+    });
     expect(asked).toEqual([]);
   });
 });

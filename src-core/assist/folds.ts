@@ -1,5 +1,3 @@
-import type { TextRange } from '../text/types';
-
 /** Lines that fold into the first, counted from 0. */
 export interface Fold {
   readonly startLine: number;

@@ -4,7 +4,7 @@ const MOST_LINES = 12;
 /** Text from a file, for Markdown: no sign of it means anything, no address becomes a link, and it stays on one line. */
 export const plainText = (text: string): string =>
   text
-    .replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029\u202a-\u202e\u2066-\u2069]+/g, ' ')
+    .replace(/[\p{Cc}\p{Cf}\u2028\u2029]+/gu, ' ')
     .replace(/[\\`*_{}[\]()#|~]|:(?=\/\/)/g, '\\$&')
     .replace(/&/g, '&amp;')
     .replace(/</g, '&lt;')
@@ -12,7 +12,7 @@ export const plainText = (text: string): string =>
 
 /** A name or value from a file, as code. */
 export const code = (text: string): string =>
-  `\`${text.replace(/[`\u0000-\u001f\u007f-\u009f\u2028\u2029\u202a-\u202e\u2066-\u2069|]+/g, ' ').slice(0, 120)}\``;
+  `\`${text.replace(/[`|\p{Cc}\p{Cf}\u2028\u2029]+/gu, ' ').slice(0, 120)}\``;
 
 export type Row = readonly [name: string, value: string];
 

@@ -79,19 +79,10 @@ describe('actions', () => {
     expect(fixed).toBe(TEXT.replace('lenght', 'length'));
   });
   test('what a rule judged can be accepted, what is misspelt cannot', async () => {
-    const lossy =
-      TEXT.replace('lenght: 20 mm', 'length: 900 mm') + 'limits:\n  - insertion-loss: whole\n    max: 3 dB @ nyquist\n';
-    const analysis = await analysed(lossy);
-    const kinds = (text: string, source: typeof analysis) => {
-      const at = source.parsed.get(LANE)!.text.indexOf(text);
-      return actionsAt(source, LANE, { start: at, end: at + text.length }).map(({ kind }) => kind);
-    };
-    expect(analysis.findings.some(({ rule }) => rule === 'insertion-loss')).toBe(true);
-    expect(analysis.findings.flatMap((finding) => kinds(lossy.slice(0), analysis) && [finding.rule])).toContain(
-      'insertion-loss',
-    );
-    const everywhere = actionsAt(analysis, LANE, { start: 0, end: lossy.length });
-    expect(everywhere.some(({ kind, finding }) => kind === 'accept' && finding.rule === 'insertion-loss')).toBe(true);
+    const limits = 'limits:\n  - insertion-loss: whole\n    max: 3 dB @ nyquist\n';
+    const lossy = `${TEXT.replace('lenght: 20 mm', 'length: 900 mm')}${limits}`;
+    const accepted = actionsAt(await analysed(lossy), LANE, { start: 0, end: lossy.length });
+    expect(accepted.some(({ kind, finding }) => kind === 'accept' && finding.rule === 'insertion-loss')).toBe(true);
     const misspelt = await analysed(TEXT);
     expect(
       actionsAt(misspelt, LANE, { start: 0, end: TEXT.length }).some(

@@ -114,7 +114,7 @@ function judgeLocality(mutation: Mutation, base: AnalysisLike, broken: AnalysisL
     const grown = parsed.text.length - (base.parsed.get(base.inputs.file)?.text.length ?? 0);
     if (start >= entry.start && start <= entry.end + Math.max(0, grown)) local.firstFindingInside++;
   }
-  const names = (analysis: AnalysisLike) => new Set(hintsOf(analysis, analysis.inputs.file).map((hint) => lineHead(analysis, hint.at)));
+  const names = (analysis: AnalysisLike) => new Set(hintsOf(analysis, analysis.inputs.file).map((hint) => lineHead(analysis, hint.offset)));
   const before = names(base);
   const after = names(broken);
   const lost = [...before].filter((line) => !after.has(line) && !line.includes(entry.name));
