@@ -32,6 +32,9 @@ export function allowedAt(mask: readonly { atHz: number; lossDb: number }[], fre
   return a.lossDb + ((frequencyHz - a.atHz) / (b.atHz - a.atHz)) * (b.lossDb - a.lossDb);
 }
 
+/** A loss is the logarithm of a computed number: its last digits fail no limit. */
+export const ROUNDING_DB = 1e-9;
+
 function* judgedFrequencies(mask: readonly { atHz: number }[], grid: Parameters<typeof frequenciesWithin>[0]) {
   for (const { atHz } of mask) yield atHz;
   if (mask.length > 1) yield* frequenciesWithin(grid, mask[0].atHz, mask[mask.length - 1].atHz);
@@ -66,7 +69,7 @@ export function insertionLossOutcome(limit: Limit<'insertion-loss'>, computed: C
   return {
     name: limit.name,
     kind: limit.kind,
-    met: lossDb <= allowedDb,
+    met: lossDb <= allowedDb + ROUNDING_DB,
     limit: figure('limit', 'Most insertion loss', allowedDb),
     actual: figure('insertion-loss', 'Insertion loss', lossDb),
     marginShare: allowedDb > 0 ? (allowedDb - lossDb) / allowedDb : lossDb > 0 ? -1 : 0,

@@ -1,7 +1,7 @@
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
 import type { Computed } from './computed';
-import { networkWithin } from './insertion-loss-limit';
+import { networkWithin, ROUNDING_DB } from './insertion-loss-limit';
 import { type End, frequenciesWithin, returnLossAt } from './measures';
 import type { LimitOutcome } from './types';
 
@@ -29,7 +29,7 @@ export function returnLossOutcome(limit: Limit<'return-loss'>, computed: Compute
   return {
     name: limit.name,
     kind: limit.kind,
-    met: lossDb >= min.value,
+    met: lossDb >= min.value - ROUNDING_DB,
     limit: figure('limit', 'Least return loss', min.value),
     actual: figure('return-loss', 'Return loss', lossDb, where),
     marginShare: min.value > 0 ? (lossDb - min.value) / min.value : 0,

@@ -5,6 +5,9 @@ import { show } from '../quantity/show';
 import { keyOf, nameOf } from './places';
 import type { Judged, Report, Rule } from './types';
 
+/** What is spent is a logarithm of a computed number: its last digits are no finding. */
+const ROUNDING_DB = 1e-9;
+
 const frequencyOf = ({ at }: Quantity, { nyquistFrequency }: Model) =>
   at === undefined || at === 'nyquist' ? nyquistFrequency : at;
 
@@ -26,7 +29,7 @@ function* elementsOver(judged: Judged) {
     if (!budget || one.through) continue;
     const atHz = frequencyOf(budget, judged.model);
     const spentDb = spentAt([one], judged, atHz);
-    if (spentDb <= budget.value) continue;
+    if (spentDb <= budget.value + ROUNDING_DB) continue;
     yield {
       at: keyOf(one.element, 'budget'),
       subject: name,
@@ -40,7 +43,7 @@ function* ownersOver(judged: Judged) {
     const own = judged.networks!.elements.filter(({ element }) => element.owner === name);
     const atHz = frequencyOf(budget, judged.model);
     const spentDb = spentAt(own, judged, atHz);
-    if (spentDb <= budget.value) continue;
+    if (spentDb <= budget.value + ROUNDING_DB) continue;
     const related = own
       .map(({ element }, i) => ({ element, db: spentAt([own[i]], judged, atHz) }))
       .sort((a, b) => b.db - a.db)

@@ -11,8 +11,7 @@ const rangeOf = ({ prepared }: ElementNetwork): readonly [number, number] | unde
   return nominal === undefined ? undefined : (prepared!.facts.impedanceRangeOhms ?? [nominal, nominal]);
 };
 
-const rangeText = ([low, high]: readonly [number, number]) =>
-  high > low ? `${show.impedance(low)} to ${show.impedance(high)}` : show.impedance(low);
+const rangeText = ([low, high]: readonly [number, number]) => show.rangeOf(low, high, 'impedance');
 
 export const impedanceStep: Rule<{ percent: number }> = {
   name: 'impedance-step',

@@ -8,6 +8,8 @@ import { changed, prepareChanged } from './what-if';
 
 /** Fabricators quote remainders in steps of this size. */
 const STEP_METERS = 0.05e-3;
+/** The most that the format finds plausible for a remainder; leaving more is hardly worth the drill. */
+const LONGEST_METERS = 2e-3;
 
 const millimetres = (meters: number) => `${Number((meters * 1e3).toFixed(3))} mm`;
 
@@ -61,7 +63,7 @@ export function backdrillFixes(
   const { backdrillMinimumMeters: minimum, backdrillToleranceMeters: tolerance = 0 } = via.stackup?.drillRules ?? {};
   const sides = stubs.flatMap(({ side }) => (side === 'branch' ? [] : [side]));
   if (minimum === undefined || sides.length === 0) return [];
-  const longest = Math.max(...stubs.map(({ lengthMeters }) => lengthMeters));
+  const longest = Math.min(LONGEST_METERS, ...stubs.map(({ lengthMeters }) => lengthMeters));
   const helping = [...downwards(longest, minimum + tolerance)].filter((remainder) => {
     const after = prepareChanged(judged, drilled(via, sides, lengthQuantity(remainder, tolerance, '')))?.facts.stubs;
     return after !== undefined && lowestNotch(after) >= wantedHz;

@@ -7,7 +7,7 @@ import type { Rule } from './types';
 
 /** Both ends where a tolerance is declared, since the worst one is judged. */
 function lengthText({ lengthMeters, lengthRangeMeters: [shortest, longest] }: StubFact): string {
-  const range = longest > shortest ? ` (${show.length(shortest)} to ${show.length(longest)})` : '';
+  const range = longest > shortest ? ` (${show.rangeOf(shortest, longest, 'length')})` : '';
   return `${show.length(lengthMeters)}${range}`;
 }
 

@@ -2,31 +2,28 @@ import { joinPath } from '../inputs';
 import type { ParsedFile } from '../text/parsed';
 import type { Judged, Report, Rule } from './types';
 
-/** What a file declares under names: each list of names, and the word for one. */
+/** What a file declares under names: each list of names, and the key under which one is used. */
 const DECLARED = [
   ['materials', 'material'],
   ['foils', 'foil'],
   ['stackups', 'stackup'],
   ['parts', 'part'],
 ] as const;
+const ROLES: ReadonlySet<string> = new Set([...DECLARED.map(([, role]) => role), 'owner']);
 
 const record = (value: unknown): Record<string, unknown> =>
   typeof value === 'object' && value !== null && !Array.isArray(value) ? (value as Record<string, unknown>) : {};
 
-/** Every text in a value. A name is used where it stands as a text: bare, or behind the prefix of a `use` entry. */
+/** Names as they are used, by the key that takes them: `material main.core`, and `material core` without its prefix. */
 function collect(value: unknown, into: Set<string>): Set<string> {
-  if (typeof value === 'string') into.add(value.slice(value.lastIndexOf('.') + 1)).add(value);
-  else if (Array.isArray(value)) for (const one of value) collect(one, into);
-  else if (typeof value === 'object' && value !== null) for (const one of Object.values(value)) collect(one, into);
+  if (Array.isArray(value)) for (const one of value) collect(one, into);
+  else
+    for (const [key, one] of Object.entries(record(value))) {
+      if (typeof one !== 'string') collect(one, into);
+      else if (ROLES.has(key)) into.add(`${key} ${one}`).add(`${key} ${one.slice(one.lastIndexOf('.') + 1)}`);
+    }
   return into;
 }
-
-/** A name does not use itself, so the list that declares it counts only by its values. */
-const textsOf = (files: Iterable<ParsedFile>) => {
-  const texts = new Set<string>();
-  for (const { value } of files) collect(value, texts);
-  return texts;
-};
 
 const unused = (
   file: string,
@@ -44,11 +41,11 @@ const unused = (
 /** In a parts file: what neither it nor any file that uses it names. Without knowledge of those files nothing can be said. */
 function* unusedDeclarations({ inputs, parsed }: Judged, own: ParsedFile) {
   if (!inputs.dependents) return;
-  const users = inputs.dependents.flatMap((file) => parsed.get(file) ?? []);
-  const texts = textsOf([own, ...users]);
-  for (const [list, what] of DECLARED) {
+  const used = new Set<string>();
+  for (const file of [own.file, ...inputs.dependents]) collect(parsed.get(file)?.value, used);
+  for (const [list, role] of DECLARED) {
     for (const name of Object.keys(record(record(own.value)[list]))) {
-      if (!texts.has(name)) yield unused(own.file, list, what, name, ' by any file at hand');
+      if (!used.has(`${role} ${name}`)) yield unused(own.file, list, role, name, ' by any file at hand');
     }
   }
 }
@@ -56,17 +53,14 @@ function* unusedDeclarations({ inputs, parsed }: Judged, own: ParsedFile) {
 /** In any file: a `use` entry of which no name is taken, an owner whom no element names. */
 function* unusedNames({ model, parsed }: Judged, own: ParsedFile) {
   const root = record(own.value);
-  const texts = collect(
-    Object.fromEntries(Object.entries(root).filter(([key]) => key !== 'use' && key !== 'owners')),
-    new Set<string>(),
-  );
+  const used = collect(root, new Set<string>());
   for (const [prefix, path] of Object.entries(record(root.use))) {
-    const used = [...texts].some((text) => text.startsWith(`${prefix}.`)) || takesBareName(model, prefix, texts);
-    if (!used && typeof path === 'string' && isRead(own.file, path, parsed))
-      yield unused(own.file, 'use', 'parts file', prefix, '');
+    if (typeof path !== 'string' || !isRead(own.file, path, parsed) || takesName(model, prefix, used)) continue;
+    yield unused(own.file, 'use', 'parts file', prefix, '');
   }
-  for (const name of Object.keys(record(root.owners)))
-    if (!texts.has(name)) yield unused(own.file, 'owners', 'owner', name, ' by any element');
+  for (const name of Object.keys(record(root.owners))) {
+    if (!used.has(`owner ${name}`)) yield unused(own.file, 'owners', 'owner', name, ' by any element');
+  }
 }
 
 /** A file that is missing has its own finding. */
@@ -75,14 +69,18 @@ function isRead(from: string, path: string, parsed: Judged['parsed']): boolean {
   return file !== undefined && parsed.has(file);
 }
 
-/** Prefixes may be left out while a name is unambiguous. */
-const takesBareName = ({ names }: Judged['model'], prefix: string, texts: ReadonlySet<string>) =>
-  [names.parts, names.stackups, names.materials, names.foils]
-    .flat()
-    .some(
-      ({ writtenAs }) =>
-        writtenAs.some((text) => text.startsWith(`${prefix}.`)) && writtenAs.some((text) => texts.has(text)),
-    );
+/** With its prefix, or without where the name is unambiguous. */
+function takesName({ names }: Judged['model'], prefix: string, used: ReadonlySet<string>): boolean {
+  const begins = `${prefix}.`;
+  return DECLARED.some(
+    ([list, role]) =>
+      [...used].some((use) => use.startsWith(`${role} ${begins}`)) ||
+      names[list].some(
+        ({ writtenAs }) =>
+          writtenAs.some((text) => text.startsWith(begins)) && writtenAs.some((text) => used.has(`${role} ${text}`)),
+      ),
+  );
+}
 
 export const unusedPart: Rule = {
   name: 'unused-part',

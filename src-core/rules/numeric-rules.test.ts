@@ -1,0 +1,98 @@
+import { describe, expect, test } from 'vitest';
+import { analyseFiles, expectFindings, filesWith } from './testing';
+
+/** How many findings of a rule an example has. */
+const count = (rule: string, example: string, until: 'time' | 'link' = 'time') =>
+  analyseFiles(filesWith(example).files, { until }).findings.filter((finding) => finding.rule === rule).length;
+
+const run = (more: string) =>
+  `path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm${more} }]`;
+const chip = (ohms: string) =>
+  `path: [{ package: chip, length: 2 mm, impedance: ${ohms}, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }]`;
+
+describe.each([
+  ['impedance-step', chip('80 ohm'), chip('79.99 ohm'), '100 over 80 is 1.25'],
+  ['impedance-step', chip('82 ohm +2/-2 ohm'), chip('82 ohm ± 2.1 ohm'), 'the lower end of the tolerance is judged'],
+  ['skew', run(', skew: 20 ps'), run(', skew: 20.01 ps'), 'a fifth of 100 ps'],
+  ['skew', run(', skew: -20 ps'), run(', skew: -20.01 ps'), 'the other leg later'],
+  // run 4 ns, 100 ohm: t/(R C) = -ln(0.99) at 3.97997 nF
+  [
+    'droop',
+    'path: [{ capacitor: coupling, value: 3.981 nF }]',
+    'path: [{ capacitor: coupling, value: 3.979 nF }]',
+    '40 bits of 100 ps',
+  ],
+  [
+    'droop',
+    'path: [{ capacitor: coupling, value: 4.4 nF ± 9% }]',
+    'path: [{ capacitor: coupling, value: 4.4 nF ± 10% }]',
+    'the lower end is judged',
+  ],
+  [
+    'tap-sum',
+    'transmitter: { swing: 800 mV, ffe: { pre: [-0.1], main: 0.7, post: [-0.2] } }',
+    'transmitter: { swing: 800 mV, ffe: { pre: [-0.1], main: 0.7001, post: [-0.2] } }',
+    'sum of magnitudes',
+  ],
+  [
+    'budget',
+    chip('100 ohm').replace(' }', ', budget: 0.1 dB @ nyquist }'),
+    chip('100 ohm').replace(' }', ', budget: 0.0999 dB @ nyquist }'),
+    '2 mm of 0.05 dB/mm',
+  ],
+  [
+    'budget',
+    `owners: { us: 0.45 dB @ nyquist }\n${chip('100 ohm').replace(' }', ', owner: us }, { connector: mate, delay: 50 ps, impedance: 100 ohm, loss: 0.35 dB @ 5 GHz, owner: us }')}`,
+    `owners: { us: 0.4499 dB @ nyquist }\n${chip('100 ohm').replace(' }', ', owner: us }, { connector: mate, delay: 50 ps, impedance: 100 ohm, loss: 0.35 dB @ 5 GHz, owner: us }')}`,
+    'both together',
+  ],
+])('%s', (rule, met, missed, why) => {
+  test(`just met: ${why}`, () => expect(count(rule, met)).toBe(0));
+  test(`just missed: ${why}`, () => expect(count(rule, missed)).toBe(1));
+});
+
+/** A figure of the base, and limits a hair to either side of it. */
+const base = analyseFiles(filesWith('').files);
+const outcome = (kind: string) => base.limits.find((limit) => limit.kind === kind)!;
+
+describe('limits on what was computed', () => {
+  test.each([
+    ['return-loss', -1e-6, 0],
+    ['return-loss', 1e-6, 1],
+  ] as const)('%s wanted at %d dB from what there is: %d findings', (rule, above, findings) => {
+    const wanted = (outcome(rule).actual.value + above).toFixed(9);
+    expect(count(rule, `limits: [{ return-loss: match, band: 50 MHz to 5 GHz, min: ${wanted} dB }]`)).toBe(findings);
+  });
+  test.each([
+    ['height', -1e-6, 0],
+    ['height', 1e-6, 1],
+    ['width', -1e-6, 0],
+    ['width', 1e-6, 1],
+  ] as const)('eye %s wanted at %d from what there is: %d findings', (side, above, findings) => {
+    const { eyeHeightVolts, eyeWidthUi } = base.link!;
+    const wanted =
+      side === 'height'
+        ? `height: ${(1e3 * (eyeHeightVolts + above)).toFixed(9)} mV`
+        : `width: ${(eyeWidthUi + above).toFixed(9)} UI`;
+    expect(count('eye', `limits: [{ eye: main, ${wanted} }]`, 'link')).toBe(findings);
+  });
+});
+
+test('an impedance step shows both ends of the tolerance and names the neighbour', () => {
+  expectFindings(`
+    path:
+      - { package: chip, length: 2 mm, impedance: 85 ohm, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }
+      - { trace: breakout, stackup: board.main, layer: L1, length: 10 mm, impedance: 100 ohm ± 8% }
+      #                                                                              ^^^^^^^^^^^^ warning impedance-step: \`breakout\` (92 to 108 ohm) differs from \`chip\` (85 ohm) by up to 27.1 %, more than 25 %.
+  `);
+});
+test('the eye that fails is marked at the size that fails it', () => {
+  expectFindings(
+    `
+    limits:
+      - { eye: main, height: 40 mV, width: 0.99 UI }
+      #                                    ^^^^^^^ error eye: 0.99 UI is wanted
+  `,
+    'link',
+  );
+});
