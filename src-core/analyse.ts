@@ -5,6 +5,7 @@ import { fileKind, parseCached } from './inputs';
 import { computeLink } from './link/compute-link';
 import type { Link } from './link/types';
 import { buildModel } from './model/build';
+import type { Model } from './model/types';
 import { judge } from './rules/judge';
 import type { Judged } from './rules/types';
 import { sameValue } from './same-value';
@@ -40,8 +41,7 @@ export function analyse(inputs: Inputs, previous: Analysis | undefined, options:
   const kept = previous?.kept as Kept | undefined;
   const run = startRun(options);
   const parsed = parseFiles(inputs, previous, run);
-  const built = run.attempt('model', () => buildModel(inputs, parsed)) ?? emptyModel(inputs);
-  const model = previous && sameValue(built, previous.model) ? previous.model : built;
+  const model = modelOf(inputs, parsed, previous, run);
   run.count('model', model === previous?.model ? 0 : 1);
 
   const touchstones = keepTouchstones(inputs, kept?.touchstones);
@@ -85,7 +85,10 @@ export function analyse(inputs: Inputs, previous: Analysis | undefined, options:
   return {
     ...judged,
     findings,
-    verdict: run.attempt('verdict', () => verdictOf({ ...judged, findings })) ?? { state: 'not-computed', text: 'not computed' },
+    verdict: run.attempt('verdict', () => verdictOf({ ...judged, findings })) ?? {
+      state: 'not-computed',
+      text: 'not computed',
+    },
     kept: {
       touchstones: touchstones.kept,
       chain: chain ?? kept?.chain,
@@ -95,6 +98,8 @@ export function analyse(inputs: Inputs, previous: Analysis | undefined, options:
     computed: run.computed,
   };
 }
+
+type Run = ReturnType<typeof startRun>;
 
 /** Counts, faults and the clock of one analysis. */
 function startRun({ outOfTime }: AnalyseOptions) {
@@ -142,11 +147,7 @@ const sameInputs = (a: unknown, b: readonly unknown[]): boolean => {
 };
 
 /** Texts as parsed; one whose text is the same is the same object. */
-function parseFiles(
-  { files }: Inputs,
-  previous: Analysis | undefined,
-  run: ReturnType<typeof startRun>,
-): ReadonlyMap<FilePath, ParsedFile> {
+function parseFiles({ files }: Inputs, previous: Analysis | undefined, run: Run): ReadonlyMap<FilePath, ParsedFile> {
   const parsed = new Map<FilePath, ParsedFile>();
   for (const [file, content] of files) {
     const kind = fileKind(file);
@@ -161,6 +162,20 @@ function parseFiles(
     parsed.set(file, read ?? { file, kind, text: content.text, value: null, reports: [], syntax: undefined });
   }
   return parsed;
+}
+
+/** The model before, where nothing that it is made of changed, or where what changed says the same. */
+function modelOf(inputs: Inputs, parsed: Analysis['parsed'], previous: Analysis | undefined, run: Run): Model {
+  if (previous && sameFiles(inputs, previous.inputs)) return previous.model;
+  const model = run.attempt('model', () => buildModel(inputs, parsed)) ?? emptyModel(inputs);
+  return previous && sameValue(model, previous.model) ? previous.model : model;
+}
+
+function sameFiles(a: Inputs, b: Inputs): boolean {
+  if (a === b) return true;
+  const others = ({ files, ...rest }: Inputs) => rest;
+  if (a.files.size !== b.files.size || !sameValue(others(a), others(b))) return false;
+  return [...a.files].every(([file, content]) => b.files.get(file) === content);
 }
 
 type Stages = Omit<Judged, 'ledger' | 'figures' | 'limits' | 'timedOut'>;

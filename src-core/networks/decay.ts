@@ -1,7 +1,7 @@
 import type { Model } from '../model/types';
 import type { Decay } from './grid';
 import { inverseTransform } from './inverse-transform';
-import { pulseSpectrum } from './pulse-spectrum';
+import { endFilters } from './pulse-spectrum';
 import type { ElementFacts, Grid, Network } from './types';
 
 /** The decay that the estimate looks for: 60 dB, an amplitude of 1/1000. */
@@ -116,7 +116,7 @@ function terminationReflection(termination: Termination | undefined, model: Mode
  * What lies in the last eighth of the window is taken as before time 0. A response that fills the window is at least that long.
  */
 export function measuredDecay(model: Model, { differential: s }: Network, grid: Grid): Decay {
-  const weight = pulseSpectrum(model);
+  const filters = endFilters(model);
   const spectrum = new Float64Array(2 * grid.points);
   for (let i = 0; i < grid.points; i++) {
     const f = grid.frequencies[i];
@@ -134,7 +134,7 @@ export function measuredDecay(model: Model, { differential: s }: Network, grid: 
     const ti = s[at + 2] * s[at + 5] + s[at + 3] * s[at + 4];
     const dr = pr * qr - pi * qi - (tr * gr - ti * gi);
     const di = pr * qi + pi * qr - (tr * gi + ti * gr);
-    const scale = weight(f) / Math.max(dr * dr + di * di, 1e-12);
+    const scale = (sinc(f / model.symbolRate) * filters(f)) / Math.max(dr * dr + di * di, 1e-12);
     spectrum[2 * i] = (s[at + 4] * dr + s[at + 5] * di) * scale;
     spectrum[2 * i + 1] = (s[at + 5] * dr - s[at + 4] * di) * scale;
   }
@@ -146,3 +146,5 @@ export function measuredDecay(model: Model, { differential: s }: Network, grid: 
   while (last > peak && Math.abs(pulse[last]) < decayed * Math.abs(pulse[peak])) last--;
   return { delaySeconds: peak * sampleSeconds, decaySeconds: last * sampleSeconds };
 }
+
+const sinc = (x: number) => (x === 0 ? 1 : Math.sin(Math.PI * x) / (Math.PI * x));

@@ -1,19 +1,22 @@
 import type { Model } from '../model/types';
 
 /**
- * Upper bound of the magnitude of what one symbol holds at a frequency, 1 at 0 Hz: the symbol's rectangle, the transmitter's edge
- * and the receiver's filter, each by its envelope. Weighs what a channel does at frequencies where it matters little.
- * The rectangle |sinc(f/fs)| ≤ fs/(πf); the edge two poles at 0.2365/rise time (check value S-20); the filter a 4th-order Butterworth.
+ * Magnitude of the transmitter's edge and the receiver's filter together, 1 at 0 Hz: the edge as two poles at 0.2365/rise time (check value
+ * S-20), the filter a 4th-order Butterworth.
  */
-export function pulseSpectrum({ symbolRate, transmitter, receiver }: Model): (frequencyHz: number) => number {
+export function endFilters({ symbolRate, transmitter, receiver }: Model): (frequencyHz: number) => number {
   const edgeHz = 0.2365 / (transmitter?.riseTimeSeconds ?? 0.25 / symbolRate);
   const filterHz = receiver?.bandwidthHz ?? 0.75 * symbolRate;
-  return (f) => {
-    const rectangle = Math.min(1, symbolRate / (Math.PI * f));
-    const edge = 1 / Math.sqrt(1 + (f / edgeHz) ** 4);
-    const filter = 1 / Math.sqrt(1 + (f / filterHz) ** 8);
-    return rectangle * edge * filter;
-  };
+  return (f) => 1 / Math.sqrt((1 + (f / edgeHz) ** 4) * (1 + (f / filterHz) ** 8));
+}
+
+/**
+ * Upper bound of the magnitude of what one symbol holds at a frequency, 1 at 0 Hz: the symbol's rectangle by its envelope
+ * |sinc(f/fs)| ≤ fs/(πf), and the filters of both ends. Weighs what a channel does at frequencies where it matters little.
+ */
+export function pulseSpectrum(model: Model): (frequencyHz: number) => number {
+  const filters = endFilters(model);
+  return (f) => Math.min(1, model.symbolRate / (Math.PI * f)) * filters(f);
 }
 
 /** Share of the pulse spectrum's area that lies between two frequencies: a bound of what a cursor takes from there, by the main one. */
