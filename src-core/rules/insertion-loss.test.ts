@@ -50,6 +50,15 @@ test('a stub that takes the signal away is named', () => {
     blamed('{ capacitor: coupling, value: 100 nF }, { stub: probe, length: 7.5 mm, impedance: 50 ohm, dk: 3.6 }'),
   ).toContain('`probe` spends the most');
 });
+test('an element of an owner is held against its part of the owner’s budget', () => {
+  const chip =
+    '{ package: chip, length: 40 mm, impedance: 100 ohm, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz, owner: us }';
+  const { findings } = analyse(
+    `owners: { us: 1 dB @ nyquist }\npath: [${chip}]\nlimits: [{ insertion-loss: whole, max: 3 dB @ nyquist }]`,
+  );
+  const related = findings.find(({ rule }) => rule === 'insertion-loss')?.related?.[0];
+  expect(related?.message).toBe('`chip` spends the most over its share: 2 dB, 1 dB over the budget of us.');
+});
 test('an element with a budget is held against that', () => {
   const run =
     '{ trace: run, stackup: board.main, layer: L3, length: 300 mm, impedance: 100 ohm, budget: 4 dB @ nyquist }';

@@ -12,8 +12,8 @@ export const insertionLoss: Rule = {
   options: {},
   doc: `The path, or the part that \`between\` cuts out, loses more than its limit allows, at a frequency or against a mask that is
 straight in dB over frequency and judged between its ends. The finding tells the point with the least in hand and, as related place,
-the element that spends the most over its fair share: its budget where it has one, else the part of the allowed loss that its share of
-the delay gives it. Nominal values. Shorten that element, use a laminate or foil with less loss, or mend its reflections.`,
+the element that spends the most over its fair share: its budget, else its part by delay of its
+owner's budget, else its part by delay of the allowed loss. Nominal values. Shorten that element, use a laminate or foil with less loss, or mend its reflections.`,
   bad: 'limits: [{ insertion-loss: whole, max: 1 dB @ nyquist }]',
   good: 'limits: [{ insertion-loss: whole, max: 12 dB @ nyquist }]',
   *check(judged) {

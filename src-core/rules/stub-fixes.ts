@@ -49,8 +49,8 @@ function backdrillText(element: Element<'via'>, sides: readonly Side[], text: st
 
 /**
  * Backdrills that lift the notch of the computed response to `wantedHz`, pads included, at the upper end of the drill's tolerance.
- * First the longest remainder that does: it keeps the drill farthest from the layer that it must not cut. Then the shortest that the
- * fabricator leaves, where that is another: it gains the most.
+ * First the shortest remainder that the fabricator leaves: it gains the most, and the drill rules keep it from the layer that it must not
+ * cut. Then the longest that does, where that is another: it keeps the drill farthest from that layer.
  * @returns none without drill rules, or where they leave no depth that helps
  */
 export function backdrillFixes(
@@ -68,7 +68,7 @@ export function backdrillFixes(
     const after = prepareChanged(judged, drilled(via, sides, lengthQuantity(remainder, tolerance, '')))?.facts.stubs;
     return after !== undefined && lowestNotch(after) >= wantedHz;
   });
-  const chosen = helping.length > 1 ? [helping[0], helping[helping.length - 1]] : helping;
+  const chosen = helping.length > 1 ? [helping[helping.length - 1], helping[0]] : helping;
   return chosen.map((remainder, i) =>
     drillFix(judged, via, { sides, stubs, remainder, tolerance, preferred: i === 0 }),
   );

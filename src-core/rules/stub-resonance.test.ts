@@ -23,19 +23,19 @@ test('a remainder without tolerance takes that of the drill rules', () => {
   expect(found(via(', backdrill: { bottom: 2.05 mm ± 0.01 mm }'))).toHaveLength(0);
   expect(found(via(', backdrill: { bottom: 2.05 mm }'))).toHaveLength(1);
 });
-test('the first fix leaves the most with which the rule is met at the upper end of the tolerance', () => {
+test('the first fix leaves the least that the drill rules allow at the lower end of the tolerance', () => {
   expectFix(
     '{ via: ‸dive, part: board.long-hole }',
-    '{ via: dive, part: board.long-hole, backdrill: { bottom: 2 mm ± 0.1 mm } }',
+    '{ via: dive, part: board.long-hole, backdrill: { bottom: 0.25 mm ± 0.1 mm } }',
   );
 });
 test('2 mm just meets the rule, the next step just misses it', () => {
   expect(found(via(', backdrill: { bottom: 2 mm ± 0.1 mm }'))).toHaveLength(0);
   expect(found(via(', backdrill: { bottom: 2.05 mm ± 0.1 mm }'))).toHaveLength(1);
 });
-test('the second fix leaves the least that the drill rules allow at the lower end of the tolerance', () => {
-  const [, deepest] = found(via())[0].fixes!;
-  expect(deepest.edits).toMatchObject([{ text: '{ bottom: 0.25 mm ± 0.1 mm }' }]);
+test('the second fix leaves the most with which the rule is met at the upper end of the tolerance', () => {
+  const [, longest] = found(via())[0].fixes!;
+  expect(longest.edits).toMatchObject([{ text: '{ bottom: 2 mm ± 0.1 mm }' }]);
 });
 test('without drill rules no depth is proposed', () => {
   const { files } = filesWith(via());
@@ -59,7 +59,7 @@ describe('what the title says', () => {
     const after = analyseFiles(applyFix(fix, analysis));
     const figure = ({ figures }: typeof analysis, name: string) => figures.find((one) => one.name === name)!;
     const title = fix.resolve!().title;
-    expect(title).toContain('notch from 8.36 GHz to 15.1 GHz');
+    expect(title).toContain('notch from 8.36 GHz to 90.7 GHz');
     for (const [name, words] of [
       ['insertion-loss-at-nyquist', 'loss at Nyquist'],
       ['eye-height', 'eye height'],

@@ -29,10 +29,9 @@ export const stubResonance: Rule<{ multiple: number }> = {
   options: { multiple: 3 },
   doc: `A stub is a quarter-wave resonator: where it is a quarter of a wavelength long it shorts the line, cuts a notch into the
 loss and takes from the signal well below it. Warns when the notch of the stub with its pads, at the worst end of its tolerance, lies
-below \`multiple\` × Nyquist. The fixes drill a via's barrel back: to the most that may be left, short enough at the
-drill's upper tolerance, and to the least, no shorter at the lower one than the fabricator's \`backdrill-minimum\`; without
-\`drill-rules\` none is offered. The
-multiple is common practice.`,
+below \`multiple\` × Nyquist. The fixes drill a via's barrel back: to the least that may be left, no shorter at
+the lower end of the drill's tolerance than the fabricator's \`backdrill-minimum\`, and to the most, short enough at its upper end;
+without \`drill-rules\` none is offered. The multiple is common practice.`,
   bad: 'path: [{ via: dive, part: board.long-hole }]',
   good: 'path: [{ via: dive, part: board.long-hole, backdrill: { bottom: 0.3 mm } }]',
   *check(judged, { multiple }) {
