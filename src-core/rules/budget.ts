@@ -1,9 +1,10 @@
 import type { Quantity } from '../../schemas/format/types';
 import { spentAt } from '../figures/ledger';
 import type { Model } from '../model/types';
+import type { ElementNetwork } from '../networks/types';
 import { show } from '../quantity/show';
 import { keyOf, nameOf } from './places';
-import type { Judged, Report, Rule } from './types';
+import type { Judged, Related, Report, Rule } from './types';
 
 /** What is spent is a logarithm of a computed number: its last digits are no finding. */
 const ROUNDING_DB = 1e-9;
@@ -38,20 +39,29 @@ function* elementsOver(judged: Judged) {
   }
 }
 
+/** The largest spenders that together make four fifths of it: what is left is not worth a look. */
+function mostOf(own: readonly ElementNetwork[], judged: Judged, atHz: number, wholeDb: number): readonly Related[] {
+  const spenders = own
+    .map((one) => ({ element: one.element, db: spentAt([one], judged, atHz) }))
+    .sort((a, b) => b.db - a.db);
+  let sum = 0;
+  const told = spenders.filter(({ db }) => {
+    const isTold = sum < 0.8 * wholeDb;
+    sum += db;
+    return isTold;
+  });
+  return told
+    .slice(0, 3)
+    .map(({ element, db }) => ({ at: nameOf(element), message: `\`${element.name}\` spends ${show.loss(db)} of it.` }));
+}
+
 function* ownersOver(judged: Judged) {
   for (const { name, budget, place } of judged.model.owners) {
     const own = judged.networks!.elements.filter(({ element }) => element.owner === name);
     const atHz = frequencyOf(budget, judged.model);
     const spentDb = spentAt(own, judged, atHz);
     if (spentDb <= budget.value + ROUNDING_DB) continue;
-    const related = own
-      .map(({ element }, i) => ({ element, db: spentAt([own[i]], judged, atHz) }))
-      .sort((a, b) => b.db - a.db)
-      .slice(0, 3)
-      .map(({ element, db }) => ({
-        at: nameOf(element),
-        message: `\`${element.name}\` spends ${show.loss(db)} of it.`,
-      }));
+    const related = mostOf(own, judged, atHz, spentDb);
     yield { at: place, subject: name, related, ...overspent(`The elements of ${name} spend`, spentDb, budget, atHz) };
   }
 }
