@@ -9,7 +9,7 @@ const rank = (stage: Until | undefined) => (stage ? STAGES.indexOf(stage) : -1);
 
 /** Milliseconds. A burst of key strokes is one analysis; the eye waits until typing rests. */
 const EDIT_PAUSE = 5;
-const REST_BEFORE_LINK = 30;
+const REST_BEFORE_LINK = 15;
 const TIME_FOR_ONE_FILE = 5000;
 
 /** What the server hands in: the core's functions, files, a clock. Tests hand in their own. */
@@ -119,7 +119,11 @@ export function keepAnalyses(parts: AnalysesParts): Analyses {
     const isLaterStage = entry.doneGeneration === generation;
     const end = parts.now() + TIME_FOR_ONE_FILE;
     try {
-      entry.analysis = parts.analyse(inputs, entry.analysis, { until: stage, outOfTime: () => parts.now() > end });
+      entry.analysis = parts.analyse(inputs, entry.analysis, {
+        until: stage,
+        keepGrid: stage === 'time',
+        outOfTime: () => parts.now() > end,
+      });
       entry.failure = undefined;
       for (const [name, times] of Object.entries(entry.analysis.computed))
         computed[name] = (computed[name] ?? 0) + times;

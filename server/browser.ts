@@ -10,4 +10,5 @@ const { uriOf } = keepRoots();
 startServer(connection, {
   files: (root) => clientFiles(connection, root, (file) => uriOf({ root, file })),
   now: () => performance.now(),
+  pause: () => new Promise((resolve) => setTimeout(resolve, 0)),
 });

@@ -55,6 +55,9 @@ export function keepRoots(): Roots {
       const root = roots.find((candidate) => key.startsWith(`${candidate.key}/`));
       if (root) return { root, file: key.slice(root.key.length + 1) };
       const slash = key.lastIndexOf('/');
+      // `untitled:Untitled-1` lies in no folder at all.
+      if (slash === -1)
+        return { root: rootOf(key.slice(0, key.indexOf(':') + 1)), file: key.slice(key.indexOf(':') + 1) };
       return { root: rootOf(uri.slice(0, uri.lastIndexOf('/'))), file: key.slice(slash + 1) };
     },
     uriOf: ({ root, file }) => `${root.uri}/${file.split('/').map(encodeURIComponent).join('/')}`,

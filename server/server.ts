@@ -58,13 +58,13 @@ export interface Host {
   /** Where rules are explained, unless the client says so. */
   readonly rulesReference?: string;
   readonly heapMegabytes?: () => number;
+  /** Lets waiting messages in. */
+  readonly pause: () => Promise<void>;
 }
-
-const pause = () => new Promise<void>((resolve) => setTimeout(resolve, 0));
 
 /** The composition root: the only place that knows all parts. */
 export function startServer(connection: Connection, host: Host): void {
-  const { now } = host;
+  const { now, pause } = host;
   let options: InitializationOptions = {};
   let client = NO_ABILITIES;
   const roots = keepRoots();

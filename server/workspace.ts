@@ -2,7 +2,7 @@ import type { CancellationToken } from 'vscode-languageserver';
 import { fileKind } from '../src-core/inputs';
 import { parseFile } from '../src-core/text/index';
 import type { ParsedFile } from '../src-core/text/parsed';
-import type { FilePath } from '../src-core/text/types';
+import type { FileKind, FilePath } from '../src-core/text/types';
 import type { RootFiles } from './files';
 import type { Root } from './roots';
 
@@ -10,12 +10,14 @@ import type { Root } from './roots';
 const SKIPPED_FOLDERS = /^(\..*|node_modules|dist|out|build)$/;
 const MOST_FILES = 5000;
 const DEEPEST = 12;
+/** Trees of texts kept between two questions. */
+const MOST_PARSED = 300;
 
 /** The channels, parts files and configurations below a root, closed ones too; looked up when first asked. */
 export interface Workspace {
   files(root: Root, token?: CancellationToken): Promise<readonly FilePath[]>;
-  /** Parsed texts of all of them, open ones as the editor shows them. */
-  library(root: Root, token?: CancellationToken): Promise<ReadonlyMap<FilePath, ParsedFile>>;
+  /** Parsed texts of all of them, or of one kind, open ones as the editor shows them. */
+  library(root: Root, token?: CancellationToken, kind?: FileKind): Promise<ReadonlyMap<FilePath, ParsedFile>>;
   /** A file came, changed or went. */
   changed(root: Root, file: FilePath): void;
 }
@@ -43,16 +45,20 @@ export function keepWorkspace(filesOf: (root: Root) => RootFiles): Workspace {
       }
       return kept.files;
     },
-    async library(root, token) {
+    async library(root, token, kind) {
       const { parsed } = keptOf(root);
       const library = new Map<FilePath, ParsedFile>();
       const files = filesOf(root);
       for (const file of await this.files(root, token)) {
         if (token?.isCancellationRequested) break;
+        if (kind !== undefined && fileKind(file) !== kind) continue;
         const content = await files.read(file);
         if (content.kind !== 'text') continue;
         let one = parsed.get(file);
-        if (one?.text !== content.text) parsed.set(file, (one = parseFile(file, content.text)));
+        if (one?.text !== content.text) {
+          one = parseFile(file, content.text);
+          if (parsed.size < MOST_PARSED || parsed.has(file)) parsed.set(file, one);
+        }
         library.set(file, one);
       }
       return library;

@@ -5,6 +5,7 @@ import { fromRange } from '../convert';
 import { toDiagnostic } from '../diagnostics';
 import { type Analysed, type Handler, located } from '../handler';
 import { type AcceptFinding, acceptFindingCommand } from '../protocol';
+import { idOf } from '../roots';
 import type { Services } from '../services';
 import { workspaceEdit } from './rename';
 
@@ -21,6 +22,17 @@ interface ActionData {
 export const codeActions: Handler<CodeActionParams, CodeAction[] | null> =
   (services) =>
   async ({ textDocument, range, context }, token) => {
+    const document = services.documents.get(textDocument.uri);
+    if (document && services.skipped.has(idOf(document.located))) {
+      const title = 'Analyse this file again';
+      return [
+        {
+          title,
+          kind: CodeActionKind.QuickFix,
+          command: { title, command: 'lanewright.analyseAgain', arguments: [textDocument.uri] },
+        },
+      ];
+    }
     const at = await located(services, textDocument.uri, token);
     if (!at) return null;
     const wanted = (kind: string) =>

@@ -40,7 +40,7 @@ export const completion: Handler<CompletionParams, CompletionList | null> =
     const analysis = services.analyses.last(located) ?? (await services.analyses.current(located, token, 'model'));
     const items = await completionsAt(parsed, analysis, offsetAt(text, position), {
       list: (folder) => services.filesOf(root).list(folder),
-      library: () => services.workspace.library(root, token),
+      library: () => services.workspace.library(root, token, 'parts'),
     });
     return {
       isIncomplete: items.some(({ kind }) => kind === 'unit'),

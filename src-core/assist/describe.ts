@@ -1,5 +1,6 @@
 import type { Quantity } from '../../schemas/format/types';
 import type { Analysis } from '../analysis';
+import { figureKinds } from '../figures/list';
 import type { KeyInfo } from '../format/index';
 import type { AnyElement } from '../model/types';
 import { readQuantity } from '../quantity/read';
@@ -61,7 +62,7 @@ function describeKey(analysis: Analysis, key: KeyInfo, element: AnyElement | und
     rows.push(
       ...analysis.figures
         .slice(0, 6)
-        .map(({ title, text }): Row => [title, `${analysis.linkIsStale ? '~ ' : ''}${text}`]),
+        .map(({ name, title, text }): Row => [title, isOld(analysis, name) ? `~ ${text}` : text]),
     );
   else if (isQuantity(written)) rows.push(['Here', show.quantity(written)]);
   const growth = element && key.key === 'length' ? (growthOf(analysis, element) ?? '') : '';
@@ -95,13 +96,17 @@ function describeLimit(analysis: Analysis, file: FilePath, index: number): strin
   if (!outcome) return page(`**${plainText(limit.name)}**: ${limit.kind}`, [], ['Not judged yet.']);
   const rows: Row[] = [
     ['Allowed', outcome.limit.text],
-    ['Here', outcome.actual.text],
+    ['Here', outcome.kind === 'eye' && analysis.linkIsStale ? `~ ${outcome.actual.text}` : outcome.actual.text],
     ['In hand', show.percent(outcome.marginShare)],
   ];
   return page(`**${plainText(limit.name)}**: ${limit.kind}, ${outcome.met ? 'met' : 'missed'}`, rows, [
     plainText(outcome.text),
   ]);
 }
+
+/** Of the eye, while that belongs to an older text. */
+const isOld = ({ linkIsStale }: Analysis, figure: string) =>
+  linkIsStale && figureKinds.some(({ name, ofLink }) => name === figure && ofLink);
 
 const isQuantity = (value: unknown): value is Quantity =>
   typeof value === 'object' && value !== null && 'dimension' in value && 'value' in value;

@@ -145,11 +145,16 @@ export async function startClient({
     for (const wake of waiting) wake();
   };
   child.stdin.on('error', () => undefined);
-  connection.onNotification((method, params) => {
+  // Everything the server says, whatever its name.
+  const everything = connection as unknown as {
+    onNotification(handler: (method: string, params: unknown) => void): void;
+    onRequest(handler: (method: string, params: unknown) => unknown): void;
+  };
+  everything.onNotification((method, params) => {
     if (method === 'textDocument/publishDiagnostics') pushed.push(params as never);
     note(method, params);
   });
-  connection.onRequest((method, params) => {
+  everything.onRequest((method, params) => {
     note(method, params);
     if (method === 'workspace/configuration') return (params as { items: unknown[] }).items.map(() => client.settings);
     return null;

@@ -246,7 +246,10 @@ test('memory stays flat over edits, and comes back when files are closed', async
   const client = await start({ folders: [folder.uri()], execArgv: ['--expose-gc'] });
   const uri = folder.uri('a.channel.yaml');
   await client.open(uri, LANE);
-  const heap = async () => (await client.request<{ heapMegabytes: number }>('lanewright/status', {})).heapMegabytes;
+  const status = () => client.request<{ heapMegabytes: number }>('lanewright/status', {});
+  // What lies outside the heap is only freed by the collection after the one that found it dead.
+  const heap = async () =>
+    Math.min((await status()).heapMegabytes, (await status()).heapMegabytes, (await status()).heapMegabytes);
   const edit = async (count: number) => {
     for (let i = 0; i < count; i++) {
       await client.change(uri, LANE.replace('60 mm', `${60 + (i % 7)}.${i % 100} mm`));
@@ -256,8 +259,8 @@ test('memory stays flat over edits, and comes back when files are closed', async
   await edit(200);
   const before = await heap();
   await edit(400);
-  // The state of one analysis differs a little from text to text; one that was kept for each edit would be some 100 MB.
-  expect((await heap()) - before).toBeLessThan(3);
+  // The state of one analysis, some MB, differs from text to text; one that was kept for each edit would be hundreds.
+  expect((await heap()) - before).toBeLessThan(5);
   const others = Array.from({ length: 20 }, (_, i) => folder.uri(`lanes/${i}.channel.yaml`));
   for (const other of others) {
     await client.open(other, LANE.replace('boards/', '../boards/'));
@@ -266,6 +269,6 @@ test('memory stays flat over edits, and comes back when files are closed', async
   const open = await heap();
   for (const other of others) await client.close(other);
   await client.findings(uri);
-  expect(open - before).toBeGreaterThan(3);
-  expect((await heap()) - before).toBeLessThan(3);
+  expect(open - before).toBeGreaterThan(10);
+  expect((await heap()) - before).toBeLessThan(5);
 }, 60000);

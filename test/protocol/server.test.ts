@@ -91,7 +91,7 @@ describe('findings', () => {
     typed(LANE.replace('length: 60 mm', 'lenght: 60 mm'), async () => {
       const report = await client.pull(lane);
       if (report.kind !== 'full') throw new Error('full report wanted');
-      const finding = report.items.find(({ message }) => message.includes('lenght'))!;
+      const finding = report.items.find(({ message }) => String(message).includes('lenght'))!;
       expect(finding).toMatchObject({ code: 'schema', source: 'lanewright', severity: 1 });
       expect(finding.range.start).toEqual(positionOf(LANE, 'length: 60 mm'));
       expect(await client.pull(lane, report.resultId)).toMatchObject({ kind: 'unchanged', resultId: report.resultId });
@@ -316,7 +316,7 @@ test('an unsaved edit of a parts file renews the lanes that use it', async () =>
   expect(after.data.verdict.text).not.toBe(before.data.verdict.text);
   await client.change(parts, PARTS.replace('{ copper: L3,', '{ copper: X3,'));
   const report = await client.pull(lane);
-  expect(report.kind === 'full' && report.items.some(({ message }) => message.includes('L3'))).toBe(true);
+  expect(report.kind === 'full' && report.items.some(({ message }) => String(message).includes('L3'))).toBe(true);
   await client.close(parts);
   expect(await client.findings(lane)).toEqual([]);
 });
