@@ -1,4 +1,4 @@
-import type { ElementNetwork, Network, Networks } from '../networks/types';
+import type { ElementNetwork, Network, NetworkContext, Networks } from '../networks/types';
 import { lossDb, type OwnDip, ownDips } from './own-dips';
 import { chain } from './product';
 import type { Resonance } from './types';
@@ -9,6 +9,7 @@ const alike = 0.02;
 const mostQuality = 1e4;
 /** What the elements add to the channel's loss there for it to be called theirs, dB. */
 const leastDepthDb = 1;
+const mostDipsKept = 16;
 /** Where a dip is looked at: its own frequency and, to either side, these shares of it, closer and closer. */
 const offsets = Array.from({ length: 25 }, (_, i) => 0.5 * 10 ** (-i / 4));
 
@@ -62,14 +63,9 @@ function resonanceOf(networks: Networks, dips: readonly Dip[], { around }: KeptD
     (share) => share * centre,
   );
   const makers = new Set(dips.map(({ index }) => index));
-  const near = networks.elements.map((element) => {
-    if (element.through) return undefined;
-    let byCentre = around.get(element.network);
-    if (!byCentre) around.set(element.network, (byCentre = new Map()));
-    let network = byCentre.get(centre);
-    if (!network) byCentre.set(centre, (network = element.evaluate({ ...networks.context, frequencies })));
-    return network;
-  });
+  const near = networks.elements.map((element) =>
+    element.through ? undefined : keptAround(element, centre, { ...networks.context, frequencies }, around),
+  );
   const whole = lossesOf(near, frequencies);
   const without = lossesOf(
     near.map((network, i) => (makers.has(i) ? undefined : network)),
@@ -86,6 +82,24 @@ function resonanceOf(networks: Networks, dips: readonly Dip[], { around }: KeptD
     quality: frequencies[bottom] / widthOf(frequencies, added, bottom),
     elements: names,
   };
+}
+
+/** An element's values around a dip, which an edit of another element leaves as they are. The last few dips alone are held. */
+function keptAround(
+  { network, evaluate }: ElementNetwork,
+  centre: number,
+  context: NetworkContext,
+  kept: KeptDips['around'],
+): Network {
+  let byCentre = kept.get(network);
+  if (!byCentre) kept.set(network, (byCentre = new Map()));
+  let found = byCentre.get(centre);
+  if (!found) {
+    found = evaluate(context);
+    if (byCentre.size >= mostDipsKept) byCentre.delete(byCentre.keys().next().value as number);
+    byCentre.set(centre, found);
+  }
+  return found;
 }
 
 /** Losses of a chain, straight throughs left out, at a few frequencies. */

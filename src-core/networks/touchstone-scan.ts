@@ -8,10 +8,11 @@ export interface Scanner {
   /** Line, from 1. */
   readonly line: number;
   readonly firstOfLine: boolean;
-  /** Start of the words left on this line, without comment; moves past them. */
+  /** The words left on this line, without comment, and where they end; moves past the line. No more than 64 are given: no line has a use for them. */
   restOfLine(): { readonly words: readonly string[]; readonly end: number };
 }
 
+const mostWords = 64;
 const newline = 10;
 const carriageReturn = 13;
 const exclamation = 33;
@@ -53,10 +54,11 @@ export function scanTouchstone(text: string): Scanner {
     },
     restOfLine() {
       const words: string[] = [];
-      while (skip(false)) {
+      while (words.length < mostWords && skip(false)) {
         take();
         words.push(text.slice(scanner.start, scanner.end));
       }
+      position = lineEnd(text, position);
       return { words, end: scanner.end };
     },
   });
