@@ -1,5 +1,6 @@
 import { measuresOf } from '../figures/element-measures';
 import { insertionLossAt } from '../figures/measures';
+import { quoted } from '../model/reports';
 import type { AnyElement, Limit } from '../model/types';
 import type { ElementNetwork } from '../networks/types';
 import { show } from '../quantity/show';
@@ -32,7 +33,8 @@ function shareOf({ element }: ElementNetwork, { model }: Judged, delays: Delays,
   const part = whole > 0 ? own / whole : 1 / owners.length;
   return {
     allowedDb: owner.budget.value * part,
-    words: owners.length > 1 ? `its share of the budget of ${owner.name}` : `the budget of ${owner.name}`,
+    words:
+      owners.length > 1 ? `its share of the budget of ${quoted(owner.name)}` : `the budget of ${quoted(owner.name)}`,
   };
 }
 
@@ -69,6 +71,6 @@ export function spendsMost(judged: Judged, limit: Pick<Limit, 'between'>, allowe
   const { element, spentDb, overDb, words } = most;
   return {
     element,
-    message: `\`${element.name}\` spends the most over its share: ${show.loss(spentDb)}, ${show.loss(overDb)} over ${words}.`,
+    message: `${quoted(element.name)} spends the most over its share: ${show.loss(spentDb)}, ${show.loss(overDb)} over ${words}.`,
   };
 }

@@ -1,5 +1,6 @@
 import type { Quantity } from '../../schemas/format/types';
 import { spentAt } from '../figures/ledger';
+import { quoted } from '../model/reports';
 import type { Model } from '../model/types';
 import type { ElementNetwork } from '../networks/types';
 import { show } from '../quantity/show';
@@ -34,7 +35,7 @@ function* elementsOver(judged: Judged) {
     yield {
       at: keyOf(one.element, 'budget'),
       subject: name,
-      ...overspent(`\`${name}\` spends`, spentDb, budget, atHz),
+      ...overspent(`${quoted(name)} spends`, spentDb, budget, atHz),
     };
   }
 }
@@ -50,9 +51,10 @@ function mostOf(own: readonly ElementNetwork[], judged: Judged, atHz: number, wh
     sum += db;
     return isTold;
   });
-  return told
-    .slice(0, 3)
-    .map(({ element, db }) => ({ at: nameOf(element), message: `\`${element.name}\` spends ${show.loss(db)} of it.` }));
+  return told.slice(0, 3).map(({ element, db }) => ({
+    at: nameOf(element),
+    message: `${quoted(element.name)} spends ${show.loss(db)} of it.`,
+  }));
 }
 
 function* ownersOver(judged: Judged) {
@@ -62,7 +64,12 @@ function* ownersOver(judged: Judged) {
     const spentDb = spentAt(own, judged, atHz);
     if (spentDb <= budget.value + ROUNDING_DB) continue;
     const related = mostOf(own, judged, atHz, spentDb);
-    yield { at: place, subject: name, related, ...overspent(`The elements of ${name} spend`, spentDb, budget, atHz) };
+    yield {
+      at: place,
+      subject: name,
+      related,
+      ...overspent(`The elements of ${quoted(name)} spend`, spentDb, budget, atHz),
+    };
   }
 }
 

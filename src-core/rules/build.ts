@@ -1,7 +1,8 @@
+import { quoted } from '../model/reports';
 import { rules } from './list';
 import type { AnyRule } from './types';
 
-const anchor = ({ name }: AnyRule) => `[\`${name}\`](#${name})`;
+const anchor = ({ name }: AnyRule) => `[${quoted(name)}](#${name})`;
 
 const optionsText = ({ options }: AnyRule) =>
   Object.entries(options)

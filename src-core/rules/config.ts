@@ -1,4 +1,5 @@
 import type { SeveritySetting } from '../../schemas/format/types';
+import { quoted } from '../model/reports';
 import { nearest } from '../quantity/nearest';
 import type { ParsedFile } from '../text/parsed';
 import type { Place } from '../text/types';
@@ -27,7 +28,7 @@ function suggestion(written: string, names: readonly string[], edit: (name: stri
 
 function unknownKey(at: Place, written: string, what: string, names: readonly string[]): Report {
   const { words, fixes } = suggestion(written, names, (name) => ({ op: 'key', at, name }));
-  return { at: { ...at, on: 'key' }, message: `\`${written}\` is not ${what}${words}`, fixes };
+  return { at: { ...at, on: 'key' }, message: `${quoted(written)} is not ${what}${words}`, fixes };
 }
 
 function wrongSeverity(at: Place, written: unknown): Report {

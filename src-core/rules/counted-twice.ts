@@ -1,3 +1,4 @@
+import { quoted } from '../model/reports';
 import type { AnyElement } from '../model/types';
 import { nameOf } from './places';
 import type { Fix, Rule } from './types';
@@ -33,12 +34,12 @@ count; \`includes: []\` says that the file holds no neighbour. Only the one who 
         (one) => one?.kind === 'via' && one.includedIn === undefined,
       );
       if (vias.length === 0) continue;
-      const names = vias.map(({ name }) => `\`${name}\``).join(' and ');
+      const names = vias.map(({ name }) => `${quoted(name)}`).join(' and ');
       yield {
         at: nameOf(holder),
         subject: holder.name,
-        message: `Is ${names} counted twice? The file of \`${holder.name}\` may hold ${vias.length > 1 ? 'them' : 'it'} already; \`includes\` says so.`,
-        related: vias.map((via) => ({ at: nameOf(via), message: `\`${via.name}\` is computed here.` })),
+        message: `Is ${names} counted twice? The file of ${quoted(holder.name)} may hold ${vias.length > 1 ? 'them' : 'it'} already; \`includes\` says so.`,
+        related: vias.map((via) => ({ at: nameOf(via), message: `${quoted(via.name)} is computed here.` })),
         fixes: fixesFor(holder, vias),
       };
     }

@@ -1,4 +1,5 @@
 import { droopOf } from '../link/droop';
+import { quoted } from '../model/reports';
 import type { AnyElement, Element, Model } from '../model/types';
 import { show } from '../quantity/show';
 import { keyOf } from './places';
@@ -70,7 +71,7 @@ common practice.`,
     yield {
       at: keyOf(smallest, 'value'),
       subject: smallest.name,
-      message: `\`${smallest.name}\` lets ${model.longestRun} equal bits sag by ${show.percent(worst.share)}${also}, more than ${show.percent(percent / 100)}.`,
+      message: `${quoted(smallest.name)} lets ${model.longestRun} equal bits sag by ${show.percent(worst.share)}${also}, more than ${show.percent(percent / 100)}.`,
       value: worst.share,
       worse: 'higher',
       valueText: show.percent(worst.share),

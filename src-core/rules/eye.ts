@@ -1,4 +1,5 @@
 import { limitOutcomes } from '../figures/limits';
+import { quoted } from '../model/reports';
 import { limitValue } from './places';
 import type { Rule } from './types';
 
@@ -22,7 +23,7 @@ loss, a notch, reflections; so do the cursors of the pulse.`,
       yield {
         at: limitValue(limit, byWidth ? 'width' : 'height'),
         subject: limit.name,
-        message: `The eye of \`${limit.name}\` ${size}; ${outcome.limit.text} is wanted${outcome.text.includes('corners') ? ', and its corners cut the contour' : ''}.`,
+        message: `The eye of ${quoted(limit.name)} ${size}; ${outcome.limit.text} is wanted${outcome.text.includes('corners') ? ', and its corners cut the contour' : ''}.`,
         value: outcome.actual.value,
         worse: 'lower',
         valueText: byWidth ? outcome.actual.text.split(' × ').at(-1) : outcome.actual.text.split(' × ')[0],

@@ -1,3 +1,4 @@
+import { quoted } from '../model/reports';
 import type { ElementNetwork } from '../networks/types';
 import { show } from '../quantity/show';
 import { keyOf, nameOf } from './places';
@@ -39,14 +40,14 @@ impedance by more than \`percent\` of the lower one, at the worst ends of their 
           yield {
             at: keyOf(one.element, 'impedance'),
             subject: one.element.name,
-            message: `\`${one.element.name}\` (${rangeText(range)}) differs from \`${before.one.element.name}\` (${rangeText(before.range)}) by up to ${show.percent(worst / 100)}, more than ${show.percent(percent / 100)}.`,
+            message: `${quoted(one.element.name)} (${rangeText(range)}) differs from ${quoted(before.one.element.name)} (${rangeText(before.range)}) by up to ${show.percent(worst / 100)}, more than ${show.percent(percent / 100)}.`,
             value: worst / 100,
             worse: 'higher',
             valueText: show.percent(worst / 100),
             related: [
               {
                 at: nameOf(before.one.element),
-                message: `\`${before.one.element.name}\` has ${rangeText(before.range)}.`,
+                message: `${quoted(before.one.element.name)} has ${rangeText(before.range)}.`,
               },
             ],
           };

@@ -57,7 +57,7 @@ test('an element of an owner is held against its part of the owner’s budget', 
     `owners: { us: 1 dB @ nyquist }\npath: [${chip}]\nlimits: [{ insertion-loss: whole, max: 3 dB @ nyquist }]`,
   );
   const related = findings.find(({ rule }) => rule === 'insertion-loss')?.related?.[0];
-  expect(related?.message).toBe('`chip` spends the most over its share: 2 dB, 1 dB over the budget of us.');
+  expect(related?.message).toBe('`chip` spends the most over its share: 2 dB, 1 dB over the budget of `us`.');
 });
 test('an element with a budget is held against that', () => {
   const run =

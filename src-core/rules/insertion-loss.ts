@@ -1,4 +1,5 @@
 import { limitOutcomes } from '../figures/limits';
+import { quoted } from '../model/reports';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
 import { spendsMost } from './blame';
@@ -26,7 +27,7 @@ owner's budget, else its part by delay of the allowed loss. Nominal values. Shor
       yield {
         at: limitValue(limit, 'max'),
         subject: limit.name,
-        message: `\`${limit.name}\` loses ${outcome.actual.text} at ${show.frequency(outcome.atHz!)}, ${show.loss(over)} more than the ${outcome.limit.text} of ${where}.`,
+        message: `${quoted(limit.name)} loses ${outcome.actual.text} at ${show.frequency(outcome.atHz!)}, ${show.loss(over)} more than the ${outcome.limit.text} of ${where}.`,
         value: outcome.actual.value,
         worse: 'higher',
         valueText: outcome.actual.text,

@@ -106,7 +106,10 @@ export function judge(judged: Judged, config: Config = configOf(judged)): readon
     judged.parsed.get(judged.inputs.file)?.kind === 'config' ? under('configuration', config.reports) : [];
   const findings = withSeverity([...reports, ...ownConfig], config);
   const names = new Set(active.map(({ name }) => name));
-  const waived = applyWaivers(findings, judged, (rule) => names.has(rule));
+  const waived = applyWaivers(findings, judged, {
+    rules: rules.map(({ name }) => name),
+    ran: (rule) => names.has(rule),
+  });
   const aboutWaivers = [
     ...under('waiver-dead', waived.dead),
     ...under('waiver-outgrown', waived.outgrown),

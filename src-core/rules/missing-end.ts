@@ -1,3 +1,4 @@
+import { quoted } from '../model/reports';
 import { limitName } from './places';
 import type { Fix, Judged, Rule } from './types';
 
@@ -39,7 +40,7 @@ export const missingEnd: Rule = {
       yield {
         at: limitName(limit),
         subject: limit.name,
-        message: `The eye of \`${limit.name}\` needs ${what}, which the channel does not have.`,
+        message: `The eye of ${quoted(limit.name)} needs ${what}, which the channel does not have.`,
         fixes: [fixFor(judged, end)],
       };
     }

@@ -1,5 +1,6 @@
 import { limitOutcomes } from '../figures/limits';
 import { returnLossAt } from '../figures/measures';
+import { quoted } from '../model/reports';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
 import { elementsWithin } from './blame';
@@ -20,7 +21,7 @@ function reflectsMost(judged: Judged, limit: Limit, atHz: number): readonly Rela
   return [
     {
       at: nameOf(element),
-      message: `\`${element.name}\` reflects the most there: ${show.loss(lossDb)} of return loss by itself.`,
+      message: `${quoted(element.name)} reflects the most there: ${show.loss(lossDb)} of return loss by itself.`,
     },
   ];
 }
@@ -42,7 +43,7 @@ itself. Nominal values. Bring that element's impedance nearer to the reference, 
       yield {
         at: limitValue(limit, 'min'),
         subject: limit.name,
-        message: `\`${limit.name}\` has ${outcome.actual.text} of return loss ${outcome.actual.note}, less than the ${outcome.limit.text} of its limit.`,
+        message: `${quoted(limit.name)} has ${outcome.actual.text} of return loss ${outcome.actual.note}, less than the ${outcome.limit.text} of its limit.`,
         value: outcome.actual.value,
         worse: 'lower',
         valueText: outcome.actual.text,

@@ -1,3 +1,4 @@
+import { quoted } from '../model/reports';
 import { show } from '../quantity/show';
 import { keyOf } from './places';
 import type { Rule } from './types';
@@ -24,7 +25,7 @@ Nominal values. Match the legs where they part, near the bend or the connector. 
     yield {
       at: keyOf(most.element, 'skew'),
       subject: most.element.name,
-      message: `The legs differ by ${show.time(Math.abs(sum))}, ${show.percent(share)} of a unit interval (${show.time(model.unitInterval)}), more than ${show.percent(percent / 100)}; most of it comes from \`${most.element.name}\`.`,
+      message: `The legs differ by ${show.time(Math.abs(sum))}, ${show.percent(share)} of a unit interval (${show.time(model.unitInterval)}), more than ${show.percent(percent / 100)}; most of it comes from ${quoted(most.element.name)}.`,
       value: Math.abs(sum),
       worse: 'higher',
       valueText: show.time(Math.abs(sum)),

@@ -1,4 +1,5 @@
 import type { Quantity } from '../../schemas/format/types';
+import { quoted } from '../model/reports';
 import type { AnyElement, Element } from '../model/types';
 import type { StubFact } from '../networks/types';
 import { show } from '../quantity/show';
@@ -90,7 +91,7 @@ function drillFix(
   const text = `${millimetres(remainder)}${tolerance > 0 ? ` ± ${millimetres(tolerance)}` : ''}`;
   const candidate = drilled(via, sides, lengthQuantity(remainder, tolerance, text));
   const after = prepareChanged(judged, candidate)?.facts.stubs ?? [];
-  const title = `Backdrill \`${via.name}\` to ${text}: notch from ${show.frequency(lowestNotch(stubs))} to ${notchAfter(after)}`;
+  const title = `Backdrill ${quoted(via.name)} to ${text}: notch from ${show.frequency(lowestNotch(stubs))} to ${notchAfter(after)}`;
   const edits = [{ op: 'set', at: via.place, key: 'backdrill', text: backdrillText(via, sides, text) }] as const;
   return withGain(judged, candidate, { title, ...(preferred && { preferred }), edits });
 }
@@ -109,7 +110,7 @@ export function shortenFixes(judged: Judged, element: AnyElement, stub: StubFact
     const candidate = changed(element, { length: { ...written, value: length, text, unit: 'mm' } });
     const after = prepareChanged(judged, candidate)?.facts.stubs;
     if (!after || lowestNotch(after) < wantedHz) continue;
-    const title = `Shorten \`${element.name}\` to ${millimetres(length)}: notch from ${show.frequency(stub.lowestNotchHz)} to ${notchAfter(after)}`;
+    const title = `Shorten ${quoted(element.name)} to ${millimetres(length)}: notch from ${show.frequency(stub.lowestNotchHz)} to ${notchAfter(after)}`;
     return [withGain(judged, candidate, { title, edits: [{ op: 'value', at: element.places.length, text }] })];
   }
   return [];

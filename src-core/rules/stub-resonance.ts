@@ -1,3 +1,4 @@
+import { quoted } from '../model/reports';
 import type { AnyElement } from '../model/types';
 import type { StubFact } from '../networks/types';
 import { show } from '../quantity/show';
@@ -48,7 +49,7 @@ without \`drill-rules\` none is offered. The multiple is common practice.`,
       yield {
         at: placeOf(element),
         subject: element.name,
-        message: `The ${lengthText(worst)} stub of \`${element.name}\` cuts a notch at ${notchText(worst)}, below ${multiple} × Nyquist (${show.frequency(wanted)}).`,
+        message: `The ${lengthText(worst)} stub of ${quoted(element.name)} cuts a notch at ${notchText(worst)}, below ${multiple} × Nyquist (${show.frequency(wanted)}).`,
         value: worst.lowestNotchHz,
         worse: 'lower',
         valueText: show.frequency(worst.lowestNotchHz),

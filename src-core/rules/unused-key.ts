@@ -1,3 +1,4 @@
+import { quoted } from '../model/reports';
 import type { AnyElement } from '../model/types';
 import type { Rule } from './types';
 
@@ -36,7 +37,7 @@ have the rule \`reserved-key\`.`,
         yield {
           at: { ...at, on: 'key' },
           subject: element.name,
-          message: `\`${key}\` of \`${element.name}\` counts for nothing: its file takes the place of it.`,
+          message: `\`${key}\` of ${quoted(element.name)} counts for nothing: its file takes the place of it.`,
           tags: ['unnecessary'],
           fixes: [
             {

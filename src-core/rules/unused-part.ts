@@ -1,4 +1,5 @@
 import { joinPath } from '../inputs';
+import { quoted } from '../model/reports';
 import type { ParsedFile } from '../text/parsed';
 import type { Judged, Report, Rule } from './types';
 
@@ -34,7 +35,7 @@ const unused = (
 ): Report & { subject: string } => ({
   at: { file, path: [list, name], on: 'key' },
   subject: name,
-  message: `The ${what} \`${name}\` is not used${hint}.`,
+  message: `The ${what} ${quoted(name)} is not used${hint}.`,
   tags: ['unnecessary'],
 });
 

@@ -30,7 +30,8 @@ const waiver = (more: Partial<Waiver> = {}): Waiver => ({
 });
 const judged = (...waivers: Waiver[]) =>
   ({ model: { file: 'lane.channel.yaml', waivers }, inputs: { today: '2026-06-30' } }) as unknown as Judged;
-const apply = (one: Waiver, ran = true) => applyWaivers([finding], judged(one), () => ran);
+const apply = (one: Waiver, ran = true) =>
+  applyWaivers([finding], judged(one), { rules: ['return-loss', 'eye'], ran: () => ran });
 
 test.each([
   [9.06, true, 'just meets it'],
@@ -66,6 +67,12 @@ test('a waiver without a finding is dead, unless its rule could not run', () => 
     fixes: [{ safe: true, edits: [{ op: 'remove' }] }],
   });
   expect(apply(waiver({ at: 'other' }), false).dead).toHaveLength(0);
+});
+
+test('a waiver of a rule that does not exist is dead, with the near name as fix', () => {
+  const [report] = apply(waiver({ rule: 'return-los' }), false).dead;
+  expect(report.message).toBe('This waiver matches nothing: `return-los` is not a rule; did you mean `return-loss`?');
+  expect(report.fixes?.[0]).toMatchObject({ safe: true, edits: [{ op: 'value', text: 'return-loss' }] });
 });
 
 test.each([

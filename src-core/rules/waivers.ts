@@ -1,4 +1,6 @@
+import { quoted } from '../model/reports';
 import type { Waiver } from '../model/types';
+import { nearest } from '../quantity/nearest';
 import { inSi, unitNamed } from '../quantity/units';
 import type { Finding, Fix, Judged, Report } from './types';
 
@@ -44,7 +46,7 @@ const at = (waiver: Waiver, key: string) => ({ ...waiver.place, path: [...waiver
 function outdatedReport(waiver: Waiver): Report {
   return {
     at: at(waiver, 'until'),
-    message: `This waiver of \`${waiver.rule}\` at \`${waiver.at}\` held until ${waiver.until}; its finding counts again.`,
+    message: `This waiver of ${quoted(waiver.rule)} at ${quoted(waiver.at)} held until ${waiver.until}; its finding counts again.`,
     fixes: [remove(waiver)],
   };
 }
@@ -53,22 +55,27 @@ function outgrownReport(waiver: Waiver, finding: Finding): Report {
   const written = waiver.upTo!.text;
   const comparison = isComparable(waiver, finding)
     ? `worse than the ${written} that this waiver accepts`
-    : `which cannot be compared with the \`${written}\` of this waiver`;
+    : `which cannot be compared with the ${quoted(written)} of this waiver`;
   return {
     at: at(waiver, 'up-to'),
-    message: `\`${waiver.rule}\` at \`${waiver.at}\` is now ${finding.valueText ?? finding.value}, ${comparison}; its finding counts again.`,
+    message: `${quoted(waiver.rule)} at ${quoted(waiver.at)} is now ${finding.valueText ?? finding.value}, ${comparison}; its finding counts again.`,
     related: [{ at: finding.at, message: finding.message }],
     fixes: [remove(waiver)],
   };
 }
 
-function deadReport(waiver: Waiver): Report {
-  return {
-    at: at(waiver, 'rule'),
-    message: `This waiver matches nothing: there is no finding of \`${waiver.rule}\` at \`${waiver.at}\`.`,
-    fixes: [remove(waiver)],
-    tags: ['unnecessary'],
-  };
+function deadReport(waiver: Waiver, rules: readonly string[]): Report {
+  const place = at(waiver, 'rule');
+  if (rules.includes(waiver.rule)) {
+    const message = `This waiver matches nothing: there is no finding of ${quoted(waiver.rule)} at ${quoted(waiver.at)}.`;
+    return { at: place, message, fixes: [remove(waiver)], tags: ['unnecessary'] };
+  }
+  const near = nearest(waiver.rule, rules);
+  const message = `This waiver matches nothing: ${quoted(waiver.rule)} is not a rule${near ? `; did you mean \`${near}\`?` : '.'}`;
+  const rename: readonly Fix[] = near
+    ? [{ title: `Write \`${near}\``, edits: [{ op: 'value', at: place, text: near }], preferred: true, safe: true }]
+    : [];
+  return { at: place, message, fixes: [...rename, remove(waiver)] };
 }
 
 const returned = (finding: Finding, waiver: Waiver, why: string): Finding => ({
@@ -76,14 +83,15 @@ const returned = (finding: Finding, waiver: Waiver, why: string): Finding => ({
   related: [...(finding.related ?? []), { at: waiver.place, message: why }],
 });
 
-/**
- * Applies waivers to findings. `ran` says whether a rule could run at all: only then is a waiver without a finding dead.
- */
-export function applyWaivers(
-  findings: readonly Finding[],
-  { model, inputs }: Judged,
-  ran: (rule: string) => boolean,
-): Waived {
+interface Judging {
+  /** Names of all rules. */
+  readonly rules: readonly string[];
+  /** Whether a rule could run at all: only then is a waiver without a finding dead. */
+  readonly ran: (rule: string) => boolean;
+}
+
+/** Applies waivers to findings, in their order; a finding is accepted by the first that covers it. */
+export function applyWaivers(findings: readonly Finding[], { model, inputs }: Judged, { rules, ran }: Judging): Waived {
   const dead: Report[] = [];
   const outgrown: Report[] = [];
   const outdated: Report[] = [];
@@ -91,7 +99,7 @@ export function applyWaivers(
   for (const waiver of model.waivers) {
     const matching = result.filter((finding) => matches(waiver, finding));
     if (matching.length === 0) {
-      if (ran(waiver.rule)) dead.push(deadReport(waiver));
+      if (ran(waiver.rule) || !rules.includes(waiver.rule)) dead.push(deadReport(waiver, rules));
       continue;
     }
     const over = isOver(waiver, inputs.today);
