@@ -20,7 +20,7 @@ export interface ClosedFiles {
 export interface ClosedFilesParts {
   readonly services: Services;
   readonly ids: ResultIds;
-  readonly analyse: (inputs: Inputs, previous: undefined, options: AnalyseOptions) => Analysis;
+  readonly analyse: (inputs: Inputs, previous: Analysis | undefined, options: AnalyseOptions) => Analysis;
   readonly gather: (files: Files, file: FilePath, today: string, previous?: Inputs) => Promise<Inputs>;
   readonly today: () => string;
   readonly now: () => number;
@@ -29,6 +29,7 @@ export interface ClosedFilesParts {
 }
 
 const TIME_FOR_ONE_FILE = 5000;
+const rest = () => new Promise((resolve) => setTimeout(resolve, 5));
 
 export function keepClosedFiles({
   services,
@@ -41,6 +42,9 @@ export function keepClosedFiles({
   announce,
 }: ClosedFilesParts): ClosedFiles {
   const kept = new Map<string, { report: ClosedReport; root: string; dependsOn: ReadonlySet<FilePath> }>();
+  const quiet = async (token: CancellationToken) => {
+    while (services.analyses.busy() && !token.isCancellationRequested) await rest();
+  };
   return {
     async report(located, token) {
       const id = idOf(located);
@@ -48,7 +52,7 @@ export function keepClosedFiles({
       if (known) return known.report;
       if (services.skipped.has(id)) return undefined;
       // What is being typed goes first.
-      while (services.analyses.busy() && !token.isCancellationRequested) await pause();
+      await quiet(token);
       if (token.isCancellationRequested) return undefined;
       const inputs = await gather(services.filesOf(located.root), located.file, today());
       if (inputs.files.get(located.file)?.kind !== 'text') return undefined;
@@ -56,7 +60,10 @@ export function keepClosedFiles({
       let items: Diagnostic[];
       try {
         const end = now() + TIME_FOR_ONE_FILE;
-        const analysis = analyse(inputs, undefined, { until: 'link', outOfTime: () => now() > end });
+        const first = analyse(inputs, undefined, { until: 'time', outOfTime: () => now() > end });
+        await pause();
+        await quiet(token);
+        const analysis = analyse(inputs, first, { until: 'link', outOfTime: () => now() > end + TIME_FOR_ONE_FILE });
         const text = analysis.parsed.get(located.file)?.text ?? '';
         items = analysis.findings
           .filter(({ at, waivedBy }) => at.file === located.file && !waivedBy)

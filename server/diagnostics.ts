@@ -37,11 +37,12 @@ export function diagnosticsOf(services: Services, located: Located): Diagnostic[
   if (failure !== undefined)
     return [notAnalysed(`This text broke the analysis, which is a fault of ours: ${failure}`, 'internal-error')];
   const found = new Map<string, Diagnostic>();
+  const open = documents.at(located)?.text;
   for (const { located: source, analysis } of analyses.all()) {
     if (source.root.key !== located.root.key) continue;
-    // Only what was read from the text that is open now has ranges that hold.
-    const text = analysis.parsed.get(located.file)?.text;
-    if (text === undefined || text !== (documents.at(located)?.text ?? text)) continue;
+    // Only what was read from the text that is open now has ranges that hold; of a text too large to be read there are none.
+    const text = analysis.parsed.get(located.file)?.text ?? (source.file === located.file ? '' : undefined);
+    if (text === undefined || (text !== '' && open !== undefined && text !== open)) continue;
     for (const finding of analysis.findings) {
       if (finding.at.file !== located.file || finding.waivedBy) continue;
       const diagnostic = toDiagnostic(services, source, analysis, finding, text);

@@ -27,14 +27,12 @@ export function refusalOf(file: FilePath): string | undefined {
   return undefined;
 }
 
-/** Unsaved text of the editor comes before what the disk holds. */
+/** Unsaved text of the editor comes before what the disk holds. It is in memory already: whether it is too large, its reader says. */
 export function unsavedFirst(files: RootFiles, openText: (file: FilePath) => string | undefined): RootFiles {
   return {
     async read(file): Promise<FileContent> {
       const text = openText(file);
-      if (text === undefined) return files.read(file);
-      const limit = sizeLimit(file);
-      return text.length > limit ? { kind: 'too-large', bytes: text.length, limit } : { kind: 'text', text };
+      return text === undefined ? files.read(file) : { kind: 'text', text };
     },
     list: (folder) => files.list(folder),
   };

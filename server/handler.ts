@@ -41,7 +41,14 @@ export async function located(
     // What came meanwhile is answered for, too: no answer is older than the text.
     if (newest && newest.text !== text && newest !== document) continue;
     const { root, file } = document.located;
-    return { analysis, root, file, text, version: document.version, offset: position ? offsetAt(text, position) : 0 };
+    return {
+      analysis,
+      root,
+      file,
+      text,
+      version: (newest ?? document).version,
+      offset: position ? offsetAt(text, position) : 0,
+    };
   }
 }
 

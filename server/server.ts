@@ -245,7 +245,11 @@ export function startServer(connection: Connection, host: Host): void {
 }
 
 function capabilities({ capabilities: client }: InitializeParams): InitializeResult['capabilities'] {
-  const files = [{ scheme: '*', pattern: { glob: '**/*' } }];
+  const moved = [
+    { glob: '**/*.{channel,parts}.yaml', matches: 'file' as const },
+    { glob: '**/*.s[0-9]*p', matches: 'file' as const },
+    { glob: '**/*', matches: 'folder' as const },
+  ];
   return {
     positionEncoding: 'utf-16',
     textDocumentSync: { openClose: true, change: TextDocumentSyncKind.Incremental, save: false },
@@ -270,7 +274,7 @@ function capabilities({ capabilities: client }: InitializeParams): InitializeRes
     }),
     workspace: {
       workspaceFolders: { supported: true, changeNotifications: true },
-      fileOperations: { willRename: { filters: files.map(({ pattern }) => ({ pattern })) } },
+      fileOperations: { willRename: { filters: moved.map((pattern) => ({ pattern })) } },
     },
   };
 }

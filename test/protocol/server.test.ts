@@ -125,6 +125,59 @@ describe('findings', () => {
   });
 });
 
+describe('other files', () => {
+  test('a parts file and a configuration have findings of their own', async () => {
+    const board = folder.uri('boards/other.parts.yaml');
+    await client.open(board, PARTS.replace('thickness: 40 um', 'thickness: 40 ohm'));
+    const report = await client.pull(board);
+    expect(report.kind === 'full' && report.items.map(({ code }) => code)).toContain('quantity');
+    await client.close(board);
+    const config = folder.uri('lanewright.config.yaml');
+    const text = 'lanewright: 1\nrules:\n  stub-resonanse: error\n  ';
+    await client.open(config, text, 'lanewright-config');
+    const second = await client.pull(config);
+    expect(second.kind === 'full' && second.items.map(({ message }) => String(message)).join()).toContain(
+      'stub-resonance',
+    );
+    const list = await client.request<CompletionList>('textDocument/completion', {
+      textDocument: { uri: config },
+      position: { line: 3, character: 2 },
+    });
+    expect(list.items.map(({ label }) => label)).toContain('return-loss');
+    await client.close(config);
+  });
+  test('an open configuration changes severities at once, unsaved', async () => {
+    const config = folder.uri('lanewright.config.yaml');
+    const text = LANE.replace('max: 12 dB', 'max: 0.5 dB');
+    await typed(text, async () => {
+      const severity = async () =>
+        (await client.findings(lane)).find(({ code }) => code === 'insertion-loss')?.severity;
+      expect(await severity()).toBe(1);
+      await client.open(config, 'lanewright: 1\nrules:\n  insertion-loss: hint\n', 'lanewright-config');
+      expect(await severity()).toBe(4);
+      await client.close(config);
+      expect(await severity()).toBe(1);
+    });
+  });
+  test('a text that is too large to be read says so', async () => {
+    const uri = folder.uri('large.channel.yaml');
+    await client.open(uri, `${LANE}# ${'x'.repeat(1024 * 1024)}`);
+    const report = await client.pull(uri);
+    expect(report).toMatchObject({
+      kind: 'full',
+      items: [{ code: 'limit', range: { start: { line: 0, character: 0 } } }],
+    });
+    await client.close(uri);
+  });
+  test('a text without a file is a channel by its language', async () => {
+    const uri = 'untitled:Untitled-1';
+    await client.open(uri, LANE.replace('length: 60 mm', 'lenght: 60 mm'));
+    const report = await client.pull(uri);
+    expect(report.kind === 'full' && report.items.map(({ message }) => String(message)).join()).toContain('lenght');
+    await client.close(uri);
+  });
+});
+
 describe('reading', () => {
   test('hover', async () => {
     const hover = await ask<Hover>('hover', LANE, 'trace: run', 8);
