@@ -163,9 +163,9 @@ describe('other files', () => {
     const uri = folder.uri('large.channel.yaml');
     await client.open(uri, `${LANE}# ${'x'.repeat(1024 * 1024)}`);
     const report = await client.pull(uri);
-    expect(report).toMatchObject({
-      kind: 'full',
-      items: [{ code: 'limit', range: { start: { line: 0, character: 0 } } }],
+    expect(report.kind === 'full' && report.items[0]).toMatchObject({
+      code: 'limit',
+      range: { start: { line: 0, character: 0 } },
     });
     await client.close(uri);
   });
