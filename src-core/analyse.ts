@@ -2,6 +2,7 @@ import type { AnalyseOptions, Analysis, Inputs } from './analysis';
 import { type SettledChain, settledChain } from './cascade/settled';
 import { figuresOf, ledgerOf, limitOutcomes, verdictOf } from './figures/index';
 import { fileKind, parseCached } from './inputs';
+import { keepSame } from './keep-same';
 import { computeLink } from './link/compute-link';
 import type { Link } from './link/types';
 import { buildModel } from './model/build';
@@ -168,7 +169,7 @@ function parseFiles({ files }: Inputs, previous: Analysis | undefined, run: Run)
 function modelOf(inputs: Inputs, parsed: Analysis['parsed'], previous: Analysis | undefined, run: Run): Model {
   if (previous && sameFiles(inputs, previous.inputs)) return previous.model;
   const model = run.attempt('model', () => buildModel(inputs, parsed)) ?? emptyModel(inputs);
-  return previous && sameValue(model, previous.model) ? previous.model : model;
+  return previous ? keepSame(model, previous.model) : model;
 }
 
 function sameFiles(a: Inputs, b: Inputs): boolean {

@@ -113,12 +113,14 @@ function terminationReflection(termination: Termination | undefined, model: Mode
 
 /**
  * The same measured on a computed response between its terminations: last instant at which the pulse is above 1/1000 of its peak.
+ * Up to the symbol rate, where a symbol holds nothing: the instant is looked for, not the shape.
  * What lies in the last eighth of the window is taken as before time 0. A response that fills the window is at least that long.
  */
 export function measuredDecay(model: Model, { differential: s }: Network, grid: Grid): Decay {
   const filters = endFilters(model);
-  const spectrum = new Float64Array(2 * grid.points);
-  for (let i = 0; i < grid.points; i++) {
+  const points = 2 ** grid.k + 1;
+  const spectrum = new Float64Array(2 * points);
+  for (let i = 0; i < points; i++) {
     const f = grid.frequencies[i];
     const at = 8 * i;
     const source = terminationReflection(model.transmitter, model, f);
