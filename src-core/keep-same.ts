@@ -27,21 +27,37 @@ function kept(next: unknown, before: unknown, seen: Seen): unknown {
 
 function keptList(next: readonly unknown[], before: readonly unknown[], seen: Seen): readonly unknown[] {
   const byName = namesOf(before);
-  const items = next.map((item, i) => kept(item, byName.get(nameOf(item)) ?? before[i], seen));
+  // Two entries may have one name (a part in two files): the one in the same position is asked first.
+  const counterpart = (item: unknown, i: number) =>
+    nameOf(item) === nameOf(before[i]) ? before[i] : (byName?.get(nameOf(item)) ?? before[i]);
+  const items = next.map((item, i) => kept(item, counterpart(item, i), seen));
   const same = next.length === before.length && items.every((item, i) => Object.is(item, before[i]));
   return same ? before : items;
 }
 
 function keptFields(next: Plain, before: Plain, seen: Seen): Plain {
-  const result: Record<string, unknown> = Object.create(Object.getPrototypeOf(next));
+  const keys = Object.keys(next);
+  const values: unknown[] = new Array(keys.length);
   let same = true;
-  for (const key of Object.keys(next)) {
-    // Defined, not assigned: a key may be `__proto__`.
-    const value = kept(next[key], Object.hasOwn(before, key) ? before[key] : undefined, seen);
-    Object.defineProperty(result, key, { value, enumerable: true, configurable: true, writable: true });
-    if (!Object.hasOwn(before, key) || !Object.is(value, before[key])) same = false;
+  let replaced = false;
+  for (let i = 0; i < keys.length; i++) {
+    const had = Object.hasOwn(before, keys[i]);
+    const value = had ? kept(next[keys[i]], before[keys[i]], seen) : next[keys[i]];
+    values[i] = value;
+    if (!had || !Object.is(value, before[keys[i]])) same = false;
+    if (!Object.is(value, next[keys[i]])) replaced = true;
   }
-  return same && Object.keys(before).length === Object.keys(next).length ? before : result;
+  if (same && Object.keys(before).length === keys.length) return before;
+  return replaced ? withValues(next, keys, values) : next;
+}
+
+/** A copy with other values. Defined, not assigned: a key may be `__proto__`. */
+function withValues(of: Plain, keys: readonly string[], values: readonly unknown[]): Plain {
+  const copy: Record<string, unknown> = Object.create(Object.getPrototypeOf(of));
+  keys.forEach((key, i) => {
+    Object.defineProperty(copy, key, { value: values[i], enumerable: true, configurable: true, writable: true });
+  });
+  return copy;
 }
 
 const nameOf = (item: unknown): string | undefined => {
@@ -49,11 +65,7 @@ const nameOf = (item: unknown): string | undefined => {
   return typeof name === 'string' ? name : undefined;
 };
 
-function namesOf(items: readonly unknown[]): ReadonlyMap<string | undefined, unknown> {
-  const names = new Map<string | undefined, unknown>();
-  for (const item of items) {
-    const name = nameOf(item);
-    if (name !== undefined) names.set(name, item);
-  }
-  return names;
+function namesOf(items: readonly unknown[]): ReadonlyMap<string | undefined, unknown> | undefined {
+  if (nameOf(items[0]) === undefined) return undefined;
+  return new Map(items.map((item) => [nameOf(item), item]));
 }

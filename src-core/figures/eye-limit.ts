@@ -1,8 +1,8 @@
-import type { EyeDensity } from '../link/types';
+import type { EyeDensity, Link } from '../link/types';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
 import type { Computed } from './computed';
-import type { LimitOutcome } from './types';
+import type { Figure, LimitOutcome } from './types';
 
 /**
  * By how much the rhombus of height and width may grow until it touches the contour of the eye (below 1: it does not fit).
@@ -22,52 +22,69 @@ function rhombusScale({ phases, openings }: EyeDensity, heightVolts: number, wid
   return scale;
 }
 
+interface Wanted {
+  readonly heightVolts?: number;
+  readonly widthUi?: number;
+}
+
+/** A width may be written as a time. */
+const wantedOf = ({ values: { height, width } }: Limit<'eye'>, unitInterval: number): Wanted => ({
+  heightVolts: height?.value,
+  widthUi: width && (width.dimension === 'time' ? width.value / unitInterval : width.value),
+});
+
+/** What of the limit has the least in hand, and by what share of it the eye could shrink (above 1) or has to grow (below). */
+function tightest({ heightVolts, widthUi }: Wanted, link: Link): { of: 'height' | 'width' | 'corners'; share: number } {
+  const height = heightVolts ? link.eyeHeightVolts / heightVolts : Number.POSITIVE_INFINITY;
+  const width = widthUi ? link.eyeWidthUi / widthUi : Number.POSITIVE_INFINITY;
+  const least = width < height ? ({ of: 'width', share: width } as const) : ({ of: 'height', share: height } as const);
+  // A rhombus of half the eye's size fits into anything that is called an eye; the contour is computed when it is read.
+  if (!heightVolts || !widthUi || least.share < SAME || least.share >= 2) return least;
+  const corners = rhombusScale(link.density, heightVolts, widthUi);
+  return corners < least.share ? { of: 'corners', share: corners } : least;
+}
+
+/** Rounding is no failure. */
+const SAME = 1 - 1e-9;
+
+const size = ({ heightVolts, widthUi }: Wanted) =>
+  [
+    ...(heightVolts === undefined ? [] : [show.voltage(heightVolts)]),
+    ...(widthUi === undefined ? [] : [show.unitIntervals(widthUi)]),
+  ].join(' × ');
+
 /** Eye height and width at the target BER, and the rhombus between them, against the least that a limit wants. */
 export function eyeOutcome(limit: Limit<'eye'>, { model, link, linkIsStale }: Computed): LimitOutcome | undefined {
-  const height = limit.values.height?.value;
-  const width = limit.values.width;
-  // A width may be written as a time.
-  const widthUi = width && (width.dimension === 'time' ? width.value / model.unitInterval : width.value);
-  if (!link || (height === undefined && widthUi === undefined)) return undefined;
-  const sizes = [
-    ...(height ? [{ of: 'height', share: link.eyeHeightVolts / height }] : []),
-    ...(widthUi ? [{ of: 'width', share: link.eyeWidthUi / widthUi }] : []),
-  ];
-  const least = sizes.reduce((a, b) => (b.share < a.share ? b : a), { of: 'height', share: Number.POSITIVE_INFINITY });
-  // A rhombus of half the eye's size fits into anything that is called an eye; the contour is computed when it is read.
-  const isNear = height && widthUi && least.share >= 1 - 1e-9 && least.share < 2;
-  const rhombus = isNear ? { of: 'rhombus', share: rhombusScale(link.density, height, widthUi) } : least;
-  const worst = rhombus.share < least.share ? rhombus : least;
-  const share = Number.isFinite(worst.share) ? worst.share : 1;
-  const byWidth = worst.of === 'width' || height === undefined;
-  const mark = linkIsStale ? '~' : '';
-  const size = (h: number | undefined, w: number | undefined) =>
-    [...(h === undefined ? [] : [show.voltage(h)]), ...(w === undefined ? [] : [show.unitIntervals(w)])].join(' × ');
-  const figure = (name: string, title: string, h: number | undefined, w: number | undefined, prefix = '') =>
-    ({
-      name,
-      title,
-      value: (byWidth ? w : h) ?? 0,
-      unit: byWidth ? 'UI' : 'V',
-      text: prefix + size(h, w),
-      worse: 'lower',
-    }) as const;
-  const actual = figure(
-    'eye',
-    'Eye',
-    height === undefined ? undefined : link.eyeHeightVolts,
-    widthUi === undefined ? undefined : link.eyeWidthUi,
-    mark,
-  );
-  const wanted = figure('limit', 'Least eye', height, widthUi);
-  const corner = worst.of === 'rhombus' && share < 1 ? ', whose corners cut the contour' : '';
+  const wanted = wantedOf(limit, model.unitInterval);
+  if (!link || (wanted.heightVolts === undefined && wanted.widthUi === undefined)) return undefined;
+  const { of, share } = tightest(wanted, link);
+  const marginShare = Number.isFinite(share) ? share - 1 : 0;
+  const met = marginShare >= SAME - 1;
+  // The figure of the limit is the side that decides; both stand in the text.
+  const byWidth = of === 'width' || wanted.heightVolts === undefined;
+  const figure = (name: string, title: string, eye: Wanted, mark = ''): Figure => ({
+    name,
+    title,
+    value: (byWidth ? eye.widthUi : eye.heightVolts) ?? 0,
+    unit: byWidth ? 'UI' : 'V',
+    text: mark + size(eye),
+    worse: 'lower',
+  });
+  const opening = {
+    ...(wanted.heightVolts !== undefined && { heightVolts: link.eyeHeightVolts }),
+    ...(wanted.widthUi !== undefined && { widthUi: link.eyeWidthUi }),
+  };
+  const actual = figure('eye', 'Eye', opening, linkIsStale ? '~' : '');
+  const least = figure('limit', 'Least eye', wanted);
+  const cornersCut = of === 'corners' && !met;
   return {
     name: limit.name,
     kind: limit.kind,
-    met: share >= 1 - 1e-9,
-    limit: wanted,
+    met,
+    limit: least,
     actual,
-    marginShare: share - 1,
-    text: `eye ${actual.text}, at least ${wanted.text}${corner}`,
+    marginShare,
+    text: `eye ${actual.text}, at least ${least.text}${cornersCut ? ', whose corners cut the contour' : ''}`,
+    ...(cornersCut && { cornersCut }),
   };
 }

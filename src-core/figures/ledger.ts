@@ -8,14 +8,16 @@ import type { Figure, Ledger, LedgerRow } from './types';
 
 interface RowFigureKind extends Pick<Figure, 'name' | 'unit' | 'worse'> {
   title: string;
-  value(measures: ElementMeasures, element: ElementNetwork): number | undefined;
+  value(measures: ElementMeasures, element: ElementNetwork, computed: Computed): number | undefined;
   text(value: number): string;
   note?(value: number): string | undefined;
 }
 
-const firstResonance = ({ prepared }: ElementNetwork) => {
+/** The lowest notch of its stubs; of what has none, the lowest dip of the whole response that is named for it. */
+const firstResonance = ({ element, prepared }: ElementNetwork, { cascade }: Computed) => {
   const notches = prepared?.facts.stubs.map((stub) => stub.notchHz).filter(Number.isFinite) ?? [];
-  return notches.length ? Math.min(...notches) : undefined;
+  if (notches.length > 0) return Math.min(...notches);
+  return cascade?.resonances.find(({ elements }) => elements.includes(element.name))?.frequencyHz;
 };
 
 /** What each row of the ledger, each hover and each hint shows of an element. */
@@ -50,9 +52,9 @@ export const rowFigureKinds: readonly RowFigureKind[] = [
     title: 'First resonance',
     unit: 'Hz',
     worse: 'lower',
-    value: (_, element) => firstResonance(element),
+    value: (_, element, computed) => firstResonance(element, computed),
     text: show.frequency,
-    note: () => 'notch of its stub, pads included',
+    note: () => 'of a stub its notch, pads included',
   },
 ];
 
@@ -113,7 +115,7 @@ function figuresOfRow(element: ElementNetwork, computed: Computed): readonly Fig
   if (element.through) return [];
   const measures = measuresOf(element, computed.networks!.grid, computed.model.nyquistFrequency);
   return rowFigureKinds.flatMap(({ name, title, unit, worse, ...kind }) => {
-    const value = kind.value(measures, element);
+    const value = kind.value(measures, element, computed);
     if (value === undefined || !Number.isFinite(value)) return [];
     const note = kind.note?.(value);
     return [{ name, title, unit, worse, value, text: kind.text(value), ...(note && { note }) }];

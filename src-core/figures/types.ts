@@ -44,6 +44,8 @@ export interface LimitOutcome {
   readonly atHz?: number;
   /** The end seen from; return loss only. */
   readonly end?: 'transmitter' | 'receiver';
+  /** Height and width hold, and the rhombus between them cuts the contour; eye only. */
+  readonly cornersCut?: boolean;
 }
 
 export interface Ledger {

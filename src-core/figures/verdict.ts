@@ -1,9 +1,10 @@
+import type { Analysis } from '../analysis';
 import { show } from '../quantity/show';
 import type { Finding } from '../rules/types';
 import type { Computed } from './computed';
 import type { Figure, LimitOutcome, Verdict } from './types';
 
-interface Judged extends Computed {
+interface Judged extends Computed, Partial<Pick<Analysis, 'inputs' | 'parsed'>> {
   readonly figures: readonly Figure[];
   readonly limits: readonly LimitOutcome[];
   readonly findings: readonly Finding[];
@@ -51,11 +52,20 @@ export const leftOut = ({ networks, link, findings }: Computed & Pick<Judged, 'f
   ...new Set([...(networks?.without ?? []), ...(link?.without ?? []), ...keysNotUsed(findings)]),
 ];
 
+/** A file that holds no channel has findings and no figures. */
+function ofOther(kind: 'parts' | 'config', errors: number, warnings: number): Verdict {
+  const what = kind === 'parts' ? 'a parts file' : 'a configuration';
+  const told = [...(errors ? [counted(errors, 'error')] : []), ...(warnings ? [counted(warnings, 'warning')] : [])];
+  return { state: errors ? 'errors' : warnings ? 'warnings' : 'good', text: [what, ...told].join('; ') };
+}
+
 /** The state of a channel in one line. Accepted findings count for nothing. */
 export function verdictOf(judged: Judged): Verdict {
   const open = judged.findings.filter(({ waivedBy }) => !waivedBy);
   const errors = open.filter(({ severity }) => severity === 'error').length;
   const warnings = open.filter(({ severity }) => severity === 'warning').length;
+  const kind = judged.inputs && judged.parsed?.get(judged.inputs.file)?.kind;
+  if (kind === 'parts' || kind === 'config') return ofOther(kind, errors, warnings);
   if (!judged.cascade) {
     const why = judged.timedOut
       ? 'the time for one file was over'

@@ -1,5 +1,7 @@
 import type { Analysis } from '../analysis';
 import type { PlaceEdit } from '../text/types';
+import { rules } from './list';
+import { reportedByStages } from './reported';
 import type { Finding } from './types';
 import { acceptedText } from './waivers';
 
@@ -17,9 +19,18 @@ const scalar = (text: string) =>
     ? text
     : JSON.stringify(text);
 
-/** A finding can be accepted if it says what it is about. */
+/** What cannot be read has to be mended: without it there is no figure that one could accept. */
+const mustBeMended: ReadonlySet<string> = new Set(
+  rules.filter(({ severity, check }) => severity === 'error' && check === reportedByStages).map(({ name }) => name),
+);
+
+/** A finding can be accepted if it says what it is about, and is not about waivers themselves. */
 export const isAcceptable = (finding: Finding, file: string) =>
-  finding.subject !== undefined && !finding.waivedBy && finding.at.file === file && !finding.rule.startsWith('waiver-');
+  finding.subject !== undefined &&
+  !finding.waivedBy &&
+  finding.at.file === file &&
+  !finding.rule.startsWith('waiver-') &&
+  !mustBeMended.has(finding.rule);
 
 const keyOf = ({ rule, subject }: Finding) => JSON.stringify([rule, subject]);
 

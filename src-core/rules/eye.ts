@@ -23,7 +23,7 @@ loss, a notch, reflections; so do the cursors of the pulse.`,
       yield {
         at: limitValue(limit, byWidth ? 'width' : 'height'),
         subject: limit.name,
-        message: `The eye of ${quoted(limit.name)} ${size}; ${outcome.limit.text} is wanted${outcome.text.includes('corners') ? ', and its corners cut the contour' : ''}.`,
+        message: `The eye of ${quoted(limit.name)} ${size}; ${outcome.limit.text} is wanted${outcome.cornersCut ? ', and its corners cut the contour' : ''}.`,
         value: outcome.actual.value,
         worse: 'lower',
         valueText: byWidth ? outcome.actual.text.split(' × ').at(-1) : outcome.actual.text.split(' × ')[0],

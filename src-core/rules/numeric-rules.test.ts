@@ -1,16 +1,45 @@
 import { describe, expect, test } from 'vitest';
 import { analyseFiles, expectFindings, filesWith } from './testing';
+import { type Sweep, throughFile } from './testing-base';
+
+const models = new Map(
+  [
+    ['gain-1.0009.s4p', { gain: 1.0009 }],
+    ['gain-1.0012.s4p', { gain: 1.0012 }],
+    ['back-0.9795.s4p', { backwardGain: 0.9795 }],
+    ['back-0.9785.s4p', { backwardGain: 0.9785 }],
+    ['to-30.s4p', { toHz: 30e9 }],
+    ['to-18.s4p', { toHz: 18e9 }],
+  ].map(([file, sweep]) => [file as string, { kind: 'text', text: throughFile(sweep as Sweep) } as const]),
+);
 
 /** How many findings of a rule an example has. */
 const count = (rule: string, example: string, until: 'time' | 'link' = 'time') =>
-  analyseFiles(filesWith(example).files, { until }).findings.filter((finding) => finding.rule === rule).length;
+  analyseFiles(new Map([...filesWith(example).files, ...models]), { until }).findings.filter(
+    (finding) => finding.rule === rule,
+  ).length;
 
 const run = (more: string) =>
   `path: [{ trace: run, stackup: board.main, layer: L3, length: 100 mm, impedance: 100 ohm${more} }]`;
 const chip = (ohms: string) =>
   `path: [{ package: chip, length: 2 mm, impedance: ${ohms}, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }]`;
 
+const mate = (file: string) =>
+  `path: [{ connector: mate, touchstone: ${file}, ports: { enter: [1, 3], leave: [2, 4] }, includes: [] }]`;
+const wide = (tolerance: string) =>
+  run('').replace('impedance: 100 ohm', `width: 180 um, gap: 250 um, impedance: 100 ohm ± ${tolerance}`);
+
 describe.each([
+  [
+    'implausible-quantity',
+    'conditions: { temperature: 160 degC }',
+    'conditions: { temperature: 160.1 degC }',
+    'up to 160 degC',
+  ],
+  ['impedance-target', wide('11.8 ohm'), wide('11.6 ohm'), 'the geometry gives 88.3 ohm'],
+  ['passivity', mate('gain-1.0009.s4p'), mate('gain-1.0012.s4p'), 'a singular value of 1.001 is rounding'],
+  ['reciprocity', mate('back-0.9795.s4p'), mate('back-0.9785.s4p'), 'a difference of 0.001 is rounding'],
+  ['data-range', mate('to-30.s4p'), mate('to-18.s4p'), 'cursors may be off by 0.1 %'],
   ['impedance-step', chip('80 ohm'), chip('79.99 ohm'), '100 over 80 is 1.25'],
   ['impedance-step', chip('82 ohm +2/-2 ohm'), chip('82 ohm ± 2.1 ohm'), 'the lower end of the tolerance is judged'],
   ['skew', run(', skew: 20 ps'), run(', skew: 20.01 ps'), 'a fifth of 100 ps'],

@@ -58,7 +58,7 @@ parts:
   landing: { kind: package, length: 3 mm, impedance: 100 ohm, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }
 `;
 
-interface Sweep {
+export interface Sweep {
   readonly toHz?: number;
   readonly gain?: number;
   readonly backwardGain?: number;
@@ -66,7 +66,7 @@ interface Sweep {
 }
 
 /** An invented connector as a file: two uncoupled, matched legs; ports 1 and 2 are one leg, 3 and 4 the other. */
-function throughFile({ toHz = 40e9, gain = 0.98, backwardGain = gain, delaySeconds = 40e-12 }: Sweep): string {
+export function throughFile({ toHz = 40e9, gain = 0.98, backwardGain = gain, delaySeconds = 40e-12 }: Sweep): string {
   const lines = ['! invented', '# Hz S MA R 50'];
   for (let f = 50e6; f <= toHz; f += 50e6) {
     const degrees = -360 * f * delaySeconds;

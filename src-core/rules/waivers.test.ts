@@ -121,6 +121,7 @@ test('an old channel gets one waiver for each rule and subject, at the worst val
     { ...finding, subject: undefined },
     { ...finding, subject: 'other', waivedBy: place },
     { ...finding, rule: 'unused-part', severity: 'hint' },
+    { ...finding, rule: 'unknown-name', subject: 'dive' },
     { ...finding, at: { file: 'board.parts.yaml', path: [] } },
   ];
   const edits = addWaivers({ ...judged(), findings }, acceptance);
