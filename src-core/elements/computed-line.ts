@@ -1,6 +1,6 @@
 import type { TwoPort } from '../networks/types';
 import { type DielectricPoint, debyeThrough, wideBandLogarithm } from '../physics/laminate';
-import { type Surface, surfaceImpedance } from '../physics/roughness';
+import { roughnessFactor, type Surface, surfaceImpedance } from '../physics/roughness';
 import { propagation, scatterLine, scatterSeries } from '../physics/transmission-line';
 import { perGrid } from './per-grid';
 
@@ -78,18 +78,22 @@ export function seriesPermittivity(
   return out;
 }
 
-const surfaceKey = ({ conductivity, roughness }: Surface, depth: number) =>
-  `surface ${conductivity} ${depth} ${roughness.kind} ${roughness.kind === 'rms' ? roughness.rmsMeters : ''} ${
-    roughness.kind === 'huray' ? `${roughness.radiusMeters} ${roughness.ratio}` : ''
-  }`;
+const surfaceKey = ({ conductivity, roughness }: Surface) => `${conductivity} ${JSON.stringify(roughness)}`;
+
+/** A foil's surface over the grid: its roughness once, its slab once for each depth. */
+function surfaceOf(surface: Surface, depthMeters: number, frequencies: Float64Array): Float64Array {
+  const key = surfaceKey(surface);
+  return perGrid(frequencies, `surface ${depthMeters} ${key}`, () => {
+    const factor = perGrid(frequencies, `roughness ${key}`, () => roughnessFactor(frequencies, surface));
+    return surfaceImpedance(frequencies, surface, depthMeters, factor);
+  });
+}
 
 /** Series impedance and shunt admittance per metre over frequency: 4 numbers each. */
 function perMeter(line: ComputedLine, mode: LineMode, frequencies: Float64Array): Float64Array {
   const log = perGrid(frequencies, 'laminate-logarithm', () => wideBandLogarithm(frequencies));
   const layering = (side: Layering) =>
     perGrid(frequencies, `layering ${JSON.stringify(side)}`, () => seriesPermittivity(side, frequencies, log));
-  const surface = (one: Surface, depth: number) =>
-    perGrid(frequencies, surfaceKey(one, depth), () => surfaceImpedance(frequencies, one, depth));
   const lower = layering(line.lower);
   const upper = layering(line.upper);
   const out = new Float64Array(4 * frequencies.length);
@@ -102,9 +106,9 @@ function perMeter(line: ComputedLine, mode: LineMode, frequencies: Float64Array)
     out[4 * i + 2] = -omega * capacitance * im;
     out[4 * i + 3] = omega * capacitance * re;
   }
-  addWalls(out, mode.stripPerMeter, () => surface(line.strip, mode.slabMeters));
-  addWalls(out, mode.lowerPlanePerMeter, () => surface(line.lowerPlane, Number.POSITIVE_INFINITY));
-  addWalls(out, mode.upperPlanePerMeter, () => surface(line.upperPlane, Number.POSITIVE_INFINITY));
+  addWalls(out, mode.stripPerMeter, () => surfaceOf(line.strip, mode.slabMeters, frequencies));
+  addWalls(out, mode.lowerPlanePerMeter, () => surfaceOf(line.lowerPlane, Number.POSITIVE_INFINITY, frequencies));
+  addWalls(out, mode.upperPlanePerMeter, () => surfaceOf(line.upperPlane, Number.POSITIVE_INFINITY, frequencies));
   return out;
 }
 

@@ -1,5 +1,6 @@
 import { hyperbolic, transformAdmittance } from '../physics/chain';
 import { type DielectricPoint, debyeThrough, wideBandLogarithm } from '../physics/laminate';
+import { findRoot } from '../physics/root';
 
 /** A short uniform stretch whose conductors cost nothing: a piece of barrel or branch, of one leg. */
 export interface Stretch {
@@ -81,7 +82,7 @@ const HIGHEST_HZ = 1e12;
 
 /**
  * Lowest frequency at which a stub, loaded at its end, shorts its joint: its input admittance B = Y0 tan φ has its first pole.
- * φ grows with frequency through every stretch, so that the root is bracketed and halved; losses are left out, Dk moves with
+ * φ grows with frequency through every stretch, so that the root is bracketed; losses are left out, Dk moves with
  * frequency. For one stretch: tan(βl) = 1/(ω C Z0). Check values N-06, V-07.
  * @returns Hz; Infinity for a stub of no length or a notch above 1 THz
  */
@@ -108,13 +109,6 @@ export function stubNotch({ stretches, endFarads }: OpenStub): number {
     }
     return angle - Math.PI / 2;
   };
-  if (phase(HIGHEST_HZ) < 0) return Number.POSITIVE_INFINITY;
-  let low = 0;
-  let high = HIGHEST_HZ;
-  for (let i = 0; i < 60; i++) {
-    const middle = (low + high) / 2;
-    if (phase(middle) < 0) low = middle;
-    else high = middle;
-  }
-  return (low + high) / 2;
+  const beyond = phase(HIGHEST_HZ);
+  return beyond < 0 ? Number.POSITIVE_INFINITY : findRoot(phase, 0, HIGHEST_HZ, -Math.PI / 2, beyond);
 }

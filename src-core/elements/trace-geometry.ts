@@ -1,8 +1,9 @@
 import type { Element, Model } from '../model/types';
 import type { ElementNote } from '../networks/types';
-import { type Side, type TraceGeometry, widthForImpedance } from '../physics/cross-section';
+import { GAP_IN_WIDTHS, type Side, type TraceGeometry } from '../physics/cross-section';
 import { wideBandLogarithm } from '../physics/laminate';
 import { type Layering, seriesPermittivity } from './computed-line';
+import { heldWidth } from './cross-sections';
 import { type Copper, copperIndex, heightOf, layeringOf, type Slice, sideOf, type TraceSide } from './stackup';
 import { endsOf, hasTolerance, isPair, rangeNote } from './written';
 
@@ -74,10 +75,10 @@ export function geometryOf(
   const rest = surroundings(place, model.nyquistFrequency);
   if (width) {
     // a pair without a gap is another rule's error; its figures then stand for the usual gap
-    return { ...rest, widthMeters: width.value, ...(pair && { gapMeters: gap?.value ?? 1.5 * width.value }) };
+    return { ...rest, widthMeters: width.value, ...(pair && { gapMeters: gap?.value ?? GAP_IN_WIDTHS * width.value }) };
   }
   if (!impedance) return undefined;
-  const widthMeters = widthForImpedance(rest, pair, impedance.value);
+  const widthMeters = heldWidth({ geometry: rest, pair, ohms: impedance.value });
   if (widthMeters === undefined) {
     notes.push(
       rangeNote(
@@ -88,7 +89,7 @@ export function geometryOf(
     );
     return undefined;
   }
-  return { ...rest, widthMeters, ...(pair && { gapMeters: 1.5 * widthMeters }) };
+  return { ...rest, widthMeters, ...(pair && { gapMeters: GAP_IN_WIDTHS * widthMeters }) };
 }
 
 /** Geometries at the ends of the tolerances of width and gap; empty where neither has one. */

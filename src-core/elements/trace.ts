@@ -2,16 +2,11 @@ import type { Element, Model } from '../model/types';
 import type { ElementFacts, ElementKind, ElementNote, Prepared } from '../networks/types';
 import { SPEED_OF_LIGHT } from '../physics/constants';
 import { conductivityAt } from '../physics/copper';
-import {
-  type CrossSection,
-  crossSection,
-  type ModeSection,
-  modeImpedances,
-  type TraceGeometry,
-} from '../physics/cross-section';
+import { type CrossSection, type ModeSection, modeImpedances, type TraceGeometry } from '../physics/cross-section';
 import type { Surface } from '../physics/roughness';
 import { show } from '../quantity/show';
 import { type ComputedLine, computedAt, type LineMode } from './computed-line';
+import { heldCrossSection } from './cross-sections';
 import { declaredAt } from './declared-line';
 import { declaredFacts, declaredLine, declaredSegment, legOhms, skewOf } from './declared-segment';
 import { type Line, lineNetwork } from './line';
@@ -54,7 +49,7 @@ function fromGeometry(
   model: Model,
   notes: ElementNote[],
 ): Prepared<Line> {
-  const section = crossSection(geometry);
+  const section = heldCrossSection(geometry);
   const computed = slowed(computedLine(trace, place, geometry, section, model), trace, section);
   const { values } = trace;
   const at = computedAt(computed, 'odd', model.nyquistFrequency);

@@ -31,8 +31,9 @@ export function appendSeries(m: Chain, zRe: number, zIm: number): void {
 export function hyperbolic(alpha: number, beta: number, out: Float64Array): void {
   const c = Math.cos(beta);
   const s = Math.sin(beta);
-  const ch = Math.cosh(alpha);
-  const sh = Math.sinh(alpha);
+  const grown = Math.exp(alpha) / 2;
+  const ch = grown + 0.25 / grown;
+  const sh = grown - 0.25 / grown;
   out[0] = ch * c;
   out[1] = sh * s;
   out[2] = sh * c;

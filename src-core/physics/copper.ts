@@ -36,8 +36,8 @@ export function slabImpedance(
   at = 0,
 ): Float64Array {
   const rs = surfaceResistance(frequencyHz, conductivity);
-  const x = thicknessMeters === Number.POSITIVE_INFINITY ? 20 : thicknessMeters * rs * conductivity; // t/δ
-  if (x >= 20) {
+  const x = thicknessMeters === Number.POSITIVE_INFINITY ? 16 : thicknessMeters * rs * conductivity; // t/δ
+  if (x >= 16) {
     out[at] = rs;
     out[at + 1] = rs;
   } else if (x < 1e-4) {
@@ -45,12 +45,12 @@ export function slabImpedance(
     out[at + 1] = (2 * Math.PI * frequencyHz * MU_0 * thicknessMeters) / 3;
   } else {
     // coth((1+j)x) = (sinh 2x − j sin 2x)/(cosh 2x − cos 2x), both multiplied by 2e^{−2x} so that nothing overflows
-    const e = Math.exp(-2 * x);
+    const oneLess = x < 0.1 ? -Math.expm1(-2 * x) : 1 - Math.exp(-2 * x);
+    const e = 1 - oneLess;
     const sine = Math.sin(x);
-    const oneLess = -Math.expm1(-2 * x);
     const scale = rs / (oneLess * oneLess + 4 * e * sine * sine);
     const re = oneLess * (1 + e);
-    const im = -2 * e * Math.sin(2 * x);
+    const im = -4 * e * sine * Math.cos(x);
     out[at] = scale * (re - im);
     out[at + 1] = scale * (re + im);
   }

@@ -1,6 +1,7 @@
 import { SPEED_OF_LIGHT } from './constants';
 import { wallFactor } from './incremental-inductance';
 import { coverShare, microstrip, thickCoupledMicrostrip } from './microstrip';
+import { findRoot } from './root';
 import { thickCoupledStripline, thickStripline, thinStripline } from './stripline';
 
 /** What lies between the strip and a plane. `dk` is the real part at the frequency that the impedances are wanted at. */
@@ -209,7 +210,7 @@ const WIDTH_STEP = 0.1;
 
 /**
  * The width that gives an impedance, with a gap of 1.5 widths in a pair. From the widest on downwards the impedance rises, so the root
- * is bracketed from there and halved.
+ * is bracketed from there.
  * @param geometry without width and gap
  * @param ohms of the pair (twice the odd mode's), or of the single strip
  * @returns undefined if no width from a fiftieth to fifty times the nearest plane's distance gives it
@@ -230,18 +231,16 @@ export function widthForImpedance(
   };
   // Of a pair narrower than its copper is thick the flanks face each other and the impedance falls again: the wider root is meant.
   const narrowest = Math.log(0.02);
-  let narrow = Math.log(50);
-  if (!(excess(narrow) < 0)) return undefined;
-  let wide = narrow;
-  while (!(excess(narrow) > 0)) {
+  let wide = Math.log(50);
+  let atWide = excess(wide);
+  if (!(atWide < 0)) return undefined;
+  let narrow = 0; // as wide as high: most roots lie close below
+  let atNarrow = excess(narrow);
+  while (!(atNarrow > 0)) {
     if (narrow <= narrowest) return undefined;
-    wide = narrow;
+    [wide, atWide] = [narrow, atNarrow];
     narrow = Math.max(narrowest, narrow - WIDTH_STEP);
+    atNarrow = excess(narrow);
   }
-  for (let i = 0; i < 50; i++) {
-    const middle = (narrow + wide) / 2;
-    if (excess(middle) > 0) narrow = middle;
-    else wide = middle;
-  }
-  return height * Math.exp((narrow + wide) / 2);
+  return height * Math.exp(findRoot(excess, narrow, wide, atNarrow, atWide));
 }

@@ -65,7 +65,7 @@ checkValues({
 });
 
 /** Resistance of the causal form over that of the smooth surface: Re (1+j)K. */
-const resistanceFactor = ([re, im]: ArrayLike<number>) => re - im;
+const resistanceFactor = ([re, im]: Float64Array) => re - im;
 
 test("the causal forms have just Hammerstad's and Huray's resistance", () => {
   const out = new Float64Array(2);

@@ -74,33 +74,41 @@ export interface Surface {
   readonly roughness: Roughness;
 }
 
+/** The causal factor of a surface's roughness over frequency: 2n numbers, re and im; 1 at DC and for smooth copper. */
+export function roughnessFactor(frequencies: ArrayLike<number>, { conductivity, roughness }: Surface): Float64Array {
+  const out = new Float64Array(2 * frequencies.length);
+  const rms = roughness.kind === 'rms' ? roughness.rmsMeters : 0;
+  const perHertz = 1.4 * Math.PI * MU_0 * conductivity * rms * rms;
+  for (let i = 0; i < frequencies.length; i++) {
+    const f = frequencies[i];
+    out[2 * i] = 1;
+    if (f <= 0) continue; // roughness does nothing at DC
+    if (rms > 0) causalHammerstad(perHertz * f, out, 2 * i);
+    else if (roughness.kind === 'huray' && roughness.radiusMeters > 0)
+      causalHuray(skinDepth(f, conductivity), roughness.radiusMeters, roughness.ratio, out, 2 * i);
+  }
+  return out;
+}
+
 /**
  * Surface impedance of copper over frequency: skin effect, its joint with DC, roughness; causal and passive.
  * @param thicknessMeters depth in which current may flow; Infinity: a half-space, 0 at DC
+ * @param factor that of the surface's roughness, where it is at hand already
  * @returns 2n numbers: re and im, ohm per square
  */
 export function surfaceImpedance(
   frequencies: ArrayLike<number>,
   surface: Surface,
   thicknessMeters: number,
+  factor: Float64Array = roughnessFactor(frequencies, surface),
 ): Float64Array {
-  const { conductivity, roughness } = surface;
   const out = new Float64Array(2 * frequencies.length);
-  const factor = new Float64Array(2);
-  const rms = roughness.kind === 'rms' ? roughness.rmsMeters : 0;
-  const perHertz = 1.4 * Math.PI * MU_0 * conductivity * rms * rms;
-  for (let i = 0; i < frequencies.length; i++) {
-    const f = frequencies[i];
-    slabImpedance(f, conductivity, thicknessMeters, out, 2 * i);
-    if (f <= 0) continue; // roughness does nothing at DC
-    if (rms > 0) causalHammerstad(perHertz * f, factor, 0);
-    else if (roughness.kind === 'huray' && roughness.radiusMeters > 0)
-      causalHuray(skinDepth(f, conductivity), roughness.radiusMeters, roughness.ratio, factor, 0);
-    else continue;
-    const re = out[2 * i];
-    const im = out[2 * i + 1];
-    out[2 * i] = re * factor[0] - im * factor[1];
-    out[2 * i + 1] = re * factor[1] + im * factor[0];
+  for (let i = 0; i < out.length; i += 2) {
+    slabImpedance(frequencies[i >> 1], surface.conductivity, thicknessMeters, out, i);
+    const re = out[i];
+    const im = out[i + 1];
+    out[i] = re * factor[i] - im * factor[i + 1];
+    out[i + 1] = re * factor[i + 1] + im * factor[i];
   }
   return out;
 }

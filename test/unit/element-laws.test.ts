@@ -188,7 +188,7 @@ describe('a cascade of equal parts', () => {
   test('equals one of n-fold length', () => {
     fc.assert(
       fc.property(fc.oneof(cables, traces), fc.integer({ min: 2, max: 8 }), (one, n) => {
-        const values = { ...one.values, skew: undefined } as { length: ReturnType<typeof meters> };
+        const values = { ...one.values, skew: undefined } as unknown as { length: ReturnType<typeof meters> };
         const of = (lengthMeters: number) =>
           ({ ...one, values: { ...values, length: meters(lengthMeters) } }) as AnyElement;
         const whole = networkOf(of(values.length.value), sweep);
