@@ -6,8 +6,10 @@ import type { EyeDensity } from './types';
 
 const rows = 160;
 /** Thresholds between the middle of an eye and its level at which the contour's bit errors are computed. */
-const contourSteps = 48;
+const contourSteps = 32;
 const floorLog10 = -20;
+/** Errors as frequent as this need no better count. */
+const common = 0.02;
 
 /**
  * The statistical eye as a picture: probability a bin, and the contour at the target bit error ratio.
@@ -60,15 +62,19 @@ function densityOf(eye: Eye, top: number): Float32Array {
   for (let c = 0; c < tails.length; c++) {
     const { density, sigmaBins } = tails[c];
     const { half } = density;
-    const reach = Math.ceil(10 * sigmaBins + rowBins / 2) + 1;
+    const reach = Math.ceil(9 * sigmaBins + rowBins / 2) + 1;
     const share = rowShare(sigmaBins, rowBins, reach);
+    const outermost = half.length - 1;
+    const both = new Float64Array(2 * half.length - 1);
+    for (let i = 0; i <= outermost; i++) both[outermost + i] = both[outermost - i] = half[i];
     for (let r = 0; r < rows / 2; r++) {
       let sum = 0;
       for (const level of all) {
         const x = Math.round((r + 0.5) * rowBins - (level * mainCursors[c]) / binVolts);
-        const from = Math.max(x - reach, 1 - half.length);
-        const to = Math.min(x + reach, half.length - 1);
-        for (let i = from; i <= to; i++) sum += half[i < 0 ? -i : i] * share[x > i ? x - i : i - x];
+        const from = Math.max(0, x - reach + outermost);
+        const to = Math.min(2 * outermost, x + reach + outermost);
+        const shift = reach - x - outermost;
+        for (let i = from; i <= to; i++) sum += both[i] * share[i + shift];
       }
       if (sum > 1e-39) logs[r][c] = Math.log(sum / all.length);
     }
@@ -84,10 +90,14 @@ function densityOf(eye: Eye, top: number): Float32Array {
   return out;
 }
 
-/** Share of a Gaussian that falls into a row whose middle is k bins away. */
+/** Share of a Gaussian that falls into a row whose middle is `k - reach` bins away, at k. */
 function rowShare(sigmaBins: number, rowBins: number, reach: number): Float64Array {
   const above = (bins: number) => (sigmaBins > 0 ? gaussianTail(bins / sigmaBins) : bins < 0 ? 1 : bins > 0 ? 0 : 0.5);
-  return Float64Array.from({ length: reach + 1 }, (_, k) => above(k - rowBins / 2) - above(k + rowBins / 2));
+  const out = new Float64Array(2 * reach + 1);
+  for (let k = 0; k <= reach; k++) {
+    out[reach + k] = out[reach - k] = above(k - rowBins / 2) - above(k + rowBins / 2);
+  }
+  return out;
 }
 
 /** For each eye, lower and upper edge at each phase; at the sampling instant exactly those of the figure. */
@@ -102,12 +112,8 @@ function openingsOf(eye: Eye): EyeDensity['openings'] {
     const even = pair[0] + pair[1] === 0;
     for (const direction of even ? [1] : [-1, 1]) {
       const steps = Array.from({ length: contourSteps + 1 }, (_, s) => middle + (direction * half * s) / contourSteps);
-      const errors = steps.map((threshold) => {
-        const logs = tailLogs(eye, pair, threshold);
-        return Float64Array.from({ length: perUi }, (_, i) => jittered(logs, centre - perUi / 2 + i, eye.nodes));
-      });
       const side = direction > 0 ? edges.upper : edges.lower;
-      for (let i = 0; i < perUi; i++) side[i] = crossing(steps, errors, i, wanted);
+      walkOutwards(eye, pair, steps, wanted, side);
       const exact = openingAt(eye, pair);
       side[perUi / 2] = exact[direction > 0 ? 1 : 0];
     }
@@ -120,14 +126,40 @@ function openingsOf(eye: Eye): EyeDensity['openings'] {
   return [...downward, ...upward];
 }
 
-/** Where, walking from the middle of the eye, the errors pass what is wanted; straight in the logarithm. The middle where it is shut. */
-function crossing(steps: readonly number[], errors: readonly Float64Array[], i: number, wanted: number): number {
-  if (!(errors[0][i] <= wanted)) return steps[0];
-  for (let s = 1; s < steps.length; s++) {
-    if (errors[s][i] <= wanted) continue;
-    const inside = Math.log(Math.max(errors[s - 1][i], 1e-40));
-    const share = (Math.log(wanted) - inside) / (Math.log(errors[s][i]) - inside);
-    return steps[s - 1] + share * (steps[s] - steps[s - 1]);
+/**
+ * Where, walking outwards from the middle of an eye, the errors pass what is wanted, at each phase; straight in the logarithm between steps.
+ * The middle where it is shut. Columns in which errors are common need no second look: further out there are more.
+ */
+function walkOutwards(
+  eye: Eye,
+  pair: readonly [number, number],
+  steps: readonly number[],
+  wanted: number,
+  out: Float64Array,
+): void {
+  const { centre, perUi } = eye.columns;
+  const inside = new Float64Array(perUi);
+  const open = new Uint8Array(perUi).fill(1);
+  const whole = [0, eye.columns.tails.length - 1] as const;
+  const enough = Math.log(Math.max(common, 4 * wanted));
+  let logs: Float64Array | undefined;
+  for (let s = 0; s < steps.length; s++) {
+    logs = tailLogs(eye, pair, steps[s], whole, logs && { logs, enough });
+    let left = 0;
+    for (let i = 0; i < perUi; i++) {
+      if (!open[i]) continue;
+      const errors = jittered(logs, centre - perUi / 2 + i, eye.nodes);
+      const log = Math.log(Math.max(errors, 1e-40));
+      if (errors <= wanted) {
+        inside[i] = log;
+        out[i] = steps[s];
+        left++;
+        continue;
+      }
+      open[i] = 0;
+      if (s === 0) out[i] = steps[0];
+      else out[i] += ((Math.log(wanted) - inside[i]) / (log - inside[i])) * (steps[s] - steps[s - 1]);
+    }
+    if (left === 0) return;
   }
-  return steps[steps.length - 1];
 }

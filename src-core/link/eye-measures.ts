@@ -15,17 +15,23 @@ export interface Eye {
 
 /**
  * Logarithm of the two tails into one eye, per column: that the upper level falls below a threshold or the lower one rises above it.
- * Half a symbol's swing of droop moves each level towards the threshold.
+ * Droop moves each level towards the threshold.
+ * @param range first and last column
+ * @param nearer the same for a threshold nearer to the eye's middle: columns above `enough` there keep that
  */
 export function tailLogs(
   { columns, droopVolts }: Eye,
   [low, high]: readonly [number, number],
   thresholdVolts: number,
-  from = 0,
-  to = columns.tails.length - 1,
+  [from, to]: readonly [number, number] = [0, columns.tails.length - 1],
+  nearer?: { readonly logs: Float64Array; readonly enough: number },
 ): Float64Array {
   const logs = new Float64Array(columns.tails.length).fill(lowestLog);
   for (let c = Math.max(0, from); c <= Math.min(to, logs.length - 1); c++) {
+    if (nearer && nearer.logs[c] > nearer.enough) {
+      logs[c] = nearer.logs[c];
+      continue;
+    }
     const main = columns.mainCursors[c];
     const { logAbove } = columns.tails[c];
     const falls = logAbove((high * main - droopVolts - thresholdVolts) / columns.binVolts);
@@ -53,9 +59,8 @@ export function openingAt(eye: Eye, pair: readonly [number, number]): readonly [
   const main = columns.mainCursors[columns.centre];
   // bit errors were each eye as this one
   const wanted = targetBer / (levels.bitErrorShare * levels.eyes.length);
-  const [from, to] = nodes.reach;
-  const errors = (threshold: number) =>
-    jittered(tailLogs(eye, pair, threshold, columns.centre + from, columns.centre + to), columns.centre, nodes);
+  const touched = [columns.centre + nodes.reach[0], columns.centre + nodes.reach[1]] as const;
+  const errors = (threshold: number) => jittered(tailLogs(eye, pair, threshold, touched), columns.centre, nodes);
   const middle = ((pair[0] + pair[1]) / 2) * main;
   if (!(errors(middle) <= wanted)) return [middle, middle];
   const top = edge(errors, middle, pair[1] * main, wanted);
