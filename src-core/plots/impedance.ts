@@ -26,7 +26,7 @@ export const impedancePlot: Plot = {
       title: this.title,
       x: { label: 'Delay from the transmitter, one way', unit: 's', domain: [-margin, end + margin] },
       y: {
-        label: model.signalling === 'single-ended' ? 'Impedance' : 'Differential impedance',
+        label: 'Impedance',
         unit: 'ohm',
         domain: [Math.floor((lowest - air) / 5) * 5, Math.ceil((highest + air) / 5) * 5],
       },
@@ -36,7 +36,7 @@ export const impedancePlot: Plot = {
       ],
       limits: [],
       marks: marksOf(places, forth),
-      summary: `From ${show.impedance(lowest)} to ${show.impedance(highest)} along ${show.time(end)}.`,
+      summary: `${model.signalling === 'single-ended' ? 'From' : 'Differential, from'} ${show.impedance(lowest)} to ${show.impedance(highest)} along ${show.time(end)}.`,
     };
   },
 };

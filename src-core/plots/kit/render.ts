@@ -6,7 +6,7 @@ import { drawLegend } from './legend';
 import { drawLimit, limitPatterns } from './limits';
 import { drawMarks } from './marks';
 import { type Palette, type PaletteName, palettes } from './palette';
-import { escapeMarkup, px, tag } from './svg';
+import { escapeMarkup, px, shortened, tag } from './svg';
 
 export interface RenderOptions extends PlotSize {
   /** `vars`: custom properties `--plot-…` with print colours behind them; `print`: fixed colours on white. */
@@ -75,11 +75,15 @@ function drawInside(
   heatAs: 'levels' | 'contours',
 ): string {
   const density = heat ? (heatAs === 'levels' ? drawHeat(heat, layout) : drawContours(heat, layout, palette)) : '';
-  return (
-    density +
-    limits.map((limit) => drawLimit(limit, layout, palette, idPrefix)).join('') +
-    series.map((one, index) => drawSeries(one, index, layout, palette)).join('')
-  );
+  const drawn = (limit: PlotDescription['limits'][number]) => drawLimit(limit, layout, palette, idPrefix);
+  const masks = limits.filter(({ forbidden }) => forbidden === 'inside');
+  return [
+    density,
+    ...limits.filter((limit) => !masks.includes(limit)).map(drawn),
+    ...series.map((one, index) => drawSeries(one, index, layout, palette)),
+    // a mask lies inside the contour that it is held against, whose halo must not hide it
+    ...masks.map(drawn),
+  ].join('');
 }
 
 function drawGrid({ area, x, y }: PlotLayout, palette: Palette): string {
@@ -116,7 +120,8 @@ function drawGuides({ guides = [] }: PlotDescription, { area, x, fontSize }: Plo
     .join('');
 }
 
-function drawFrame({ area, x, y, height }: PlotLayout, palette: Palette): string {
+function drawFrame(layout: PlotLayout, palette: Palette): string {
+  const { area, x, y, height } = layout;
   const bottom = area.top + area.height;
   const label = (text: string, at: Record<string, string | number>) =>
     tag('text', { ...at, fill: palette.text }, escapeMarkup(text));
@@ -131,7 +136,7 @@ function drawFrame({ area, x, y, height }: PlotLayout, palette: Palette): string
       x.ticks.map(({ pixel, text }) => label(text, { x: pixel, y: bottom + 15, 'text-anchor': 'middle' })).join('') +
       y.ticks.map(({ pixel, text }) => label(text, { x: area.left - 5, y: pixel + 4, 'text-anchor': 'end' })).join('') +
       label(x.title, { x: area.left + area.width / 2, y: height - 6, 'text-anchor': 'middle' }) +
-      label(y.title, {
+      label(shortened(y.title, Math.floor((area.height + 40) / (0.6 * layout.fontSize))), {
         transform: `translate(13,${px(area.top + area.height / 2)}) rotate(-90)`,
         'text-anchor': 'middle',
       }),
