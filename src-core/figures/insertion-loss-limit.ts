@@ -1,7 +1,9 @@
+import { networkAt } from '../cascade/network-at';
 import type { Limit } from '../model/types';
+import type { Grid, Networks, TwoPort } from '../networks/types';
 import { show } from '../quantity/show';
 import type { Computed } from './computed';
-import { frequenciesWithin, insertionLossAt } from './measures';
+import { frequenciesWithin, insertionLossAt, insertionLossOf } from './measures';
 import type { LimitOutcome } from './types';
 
 /** What a limit's path does: the network between its elements, or the whole. undefined where its names are unknown. */
@@ -35,9 +37,40 @@ export function allowedAt(mask: readonly { atHz: number; lossDb: number }[], fre
 /** A loss is the logarithm of a computed number: its last digits fail no limit. */
 export const ROUNDING_DB = 1e-9;
 
-function* judgedFrequencies(mask: readonly { atHz: number }[], grid: Parameters<typeof frequenciesWithin>[0]) {
-  for (const { atHz } of mask) yield atHz;
-  if (mask.length > 1) yield* frequenciesWithin(grid, mask[0].atHz, mask[mask.length - 1].atHz);
+type Mask = readonly { readonly atHz: number; readonly lossDb: number }[];
+interface Judged {
+  readonly atHz: number;
+  readonly lossDb: number;
+}
+
+const onGrid = ({ stepHz, points }: Grid, hz: number) =>
+  hz <= stepHz * (points - 1) * (1 + 1e-9) && Math.abs(hz / stepHz - Math.round(hz / stepHz)) < 1e-9;
+
+/** The loss at each frequency that the limit names, computed at just that one where it lies between the grid's points or beyond them. */
+function atNamed(mask: Mask, s: TwoPort, networks: Networks, between?: readonly [number, number]): readonly Judged[] {
+  const { grid } = networks;
+  const others = mask.filter(({ atHz }) => !onGrid(grid, atHz)).map(({ atHz }) => atHz);
+  const exact = others.length > 0 ? networkAt(networks, Float64Array.from(others), between).differential : undefined;
+  return mask.map(({ atHz }) => {
+    const index = others.indexOf(atHz);
+    return { atHz, lossDb: exact && index >= 0 ? insertionLossOf(exact, index) : insertionLossAt(s, grid, atHz) };
+  });
+}
+
+/** Every point at which a limit is judged: those that it names and, of a mask, those of the grid between its ends. */
+function judgedPoints(
+  mask: Mask,
+  s: TwoPort,
+  networks: Networks,
+  between?: readonly [number, number],
+): readonly Judged[] {
+  const { grid } = networks;
+  const inside =
+    mask.length > 1 ? [...frequenciesWithin(grid, mask[0].atHz, mask[mask.length - 1].atHz)].slice(1, -1) : [];
+  return [
+    ...atNamed(mask, s, networks, between),
+    ...inside.map((atHz) => ({ atHz, lossDb: insertionLossAt(s, grid, atHz) })),
+  ];
 }
 
 /** Insertion loss against a value at one frequency, or against a mask between its ends: the point with the least in hand. */
@@ -46,11 +79,8 @@ export function insertionLossOutcome(limit: Limit<'insertion-loss'>, computed: C
   const s = networks && networkWithin(limit, computed);
   const mask = maskOf(limit, model.nyquistFrequency);
   if (!s || mask.length === 0) return undefined;
-  let worst: { atHz: number; lossDb: number; allowedDb: number } | undefined;
-  const beyond = networks.grid.stepHz * (networks.grid.points - 1) * (1 + 1e-9);
-  for (const atHz of judgedFrequencies(mask, networks.grid)) {
-    if (atHz > beyond) continue;
-    const lossDb = insertionLossAt(s, networks.grid, atHz);
+  let worst: (Judged & { allowedDb: number }) | undefined;
+  for (const { atHz, lossDb } of judgedPoints(mask, s, networks, limit.between)) {
     const allowedDb = allowedAt(mask, atHz);
     if (!worst || allowedDb - lossDb < worst.allowedDb - worst.lossDb) worst = { atHz, lossDb, allowedDb };
   }

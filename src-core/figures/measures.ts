@@ -35,6 +35,9 @@ function attenuationAt(s: TwoPort, grid: Grid, offset: number, frequencyHz: numb
 export const insertionLossAt = (s: TwoPort, grid: Grid, frequencyHz: number) =>
   attenuationAt(s, grid, S21, frequencyHz);
 
+/** Insertion loss at a point of the data itself. */
+export const insertionLossOf = (s: TwoPort, point: number) => attenuationDb(power(s, point, S21));
+
 /** Return loss seen from an end, dB. */
 export const returnLossAt = (s: TwoPort, grid: Grid, end: End, frequencyHz: number) =>
   attenuationAt(s, grid, reflectionOffset(end), frequencyHz);

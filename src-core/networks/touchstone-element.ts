@@ -144,8 +144,8 @@ function rangeNote(model: Model, file: FileReference, data: TouchstoneData): Ele
 
 function qualityNotes(element: AnyElement, file: FileReference, { quality }: TouchstoneData): ElementNote[] {
   const notes: ElementNote[] = [];
-  const say = (rule: string, message: string, value: number, valueText: string) =>
-    notes.push({ rule, at: file.place, message: `\`${file.file}\` ${message}`, value, valueText });
+  const say = (rule: string, message: string, value: number, valueText: string, worse: 'higher' | 'lower' = 'higher') =>
+    notes.push({ rule, at: file.place, message: `\`${file.file}\` ${message}`, value, worse, valueText });
   const { largestSingularValue: gain, largestNonReciprocity: difference, causalityPercent: causal } = quality;
   if (!element.active && gain > leastGain) {
     const most = show.ratio(gain);
@@ -172,6 +172,7 @@ function qualityNotes(element: AnyElement, file: FileReference, { quality }: Tou
       `turns the right way over only ${share} of its course (IEEE 370 initial figure): it answers before it is asked, or has too few points.`,
       causal / 100,
       share,
+      'lower',
     );
   }
   return notes;

@@ -79,6 +79,8 @@ export interface ElementNote {
   readonly message: string;
   readonly fixes?: readonly import('../rules/types').Fix[];
   readonly value?: number;
+  /** Default: higher. */
+  readonly worse?: 'higher' | 'lower';
   readonly valueText?: string;
 }
 

@@ -1,4 +1,3 @@
-import { limitOutcomes } from '../figures/limits';
 import { quoted } from '../model/reports';
 import { limitValue } from './places';
 import type { Rule } from './types';
@@ -14,7 +13,7 @@ loss, a notch, reflections; so do the cursors of the pulse.`,
   bad: 'limits: [{ eye: main, height: 790 mV, width: 0.3 UI }]',
   good: 'limits: [{ eye: main, height: 40 mV, width: 0.3 UI }]',
   *check(judged) {
-    for (const outcome of limitOutcomes(judged)) {
+    for (const outcome of judged.limits) {
       if (outcome.kind !== 'eye' || outcome.met) continue;
       const limit = judged.model.limits.find(({ name }) => name === outcome.name)!;
       const byWidth = outcome.actual.unit === 'UI';

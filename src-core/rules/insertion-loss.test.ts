@@ -25,6 +25,18 @@ test('against a mask the point with the least in hand is told', () => {
   expect(findings[0].message).toContain('at 4 GHz');
   expect(findings[0].message).toContain('of its mask');
 });
+test.each(['7.013 GHz', '150 GHz'])(
+  'at %s, between or beyond the points of the grid, the loss is computed at just that frequency',
+  (frequency) => {
+    // 10 mm of 0.05 dB/mm at 5 GHz, half of it as the root, half of it linear in frequency
+    const ratio = Number.parseFloat(frequency) / 5;
+    const exact = 0.5 * (Math.sqrt(ratio) + ratio) * 0.5;
+    const limit = (allowed: number) =>
+      `limits: [{ insertion-loss: part, between: [chip, chip], max: ${allowed.toFixed(9)} dB @ ${frequency} }]`;
+    expect(analyse(limit(exact * 1.001)).findings.filter(({ rule }) => rule === 'insertion-loss')).toHaveLength(0);
+    expect(analyse(limit(exact * 0.999)).findings.filter(({ rule }) => rule === 'insertion-loss')).toHaveLength(1);
+  },
+);
 test('between two elements only what they hold is judged', () => {
   expect(analyse('limits: [{ insertion-loss: part, between: [chip, chip], max: 0.51 dB @ nyquist }]').findings).toEqual(
     [],

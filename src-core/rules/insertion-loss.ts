@@ -1,4 +1,3 @@
-import { limitOutcomes } from '../figures/limits';
 import { quoted } from '../model/reports';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
@@ -18,7 +17,7 @@ owner's budget, else its part by delay of the allowed loss. Nominal values. Shor
   bad: 'limits: [{ insertion-loss: whole, max: 1 dB @ nyquist }]',
   good: 'limits: [{ insertion-loss: whole, max: 12 dB @ nyquist }]',
   *check(judged) {
-    for (const outcome of limitOutcomes(judged)) {
+    for (const outcome of judged.limits) {
       if (outcome.kind !== 'insertion-loss' || outcome.met) continue;
       const limit = judged.model.limits.find(({ name }) => name === outcome.name) as Limit<'insertion-loss'>;
       const over = outcome.actual.value - outcome.limit.value;

@@ -1,4 +1,3 @@
-import { limitOutcomes } from '../figures/limits';
 import { returnLossAt } from '../figures/measures';
 import { quoted } from '../model/reports';
 import type { Limit } from '../model/types';
@@ -37,7 +36,7 @@ itself. Nominal values. Bring that element's impedance nearer to the reference, 
   bad: 'path: [{ package: chip, length: 10 mm, impedance: 80 ohm, delay: 6.5 ps/mm, loss: 0.05 dB/mm @ 5 GHz }]\nlimits: [{ return-loss: match, band: 50 MHz to 5 GHz, min: 16 dB }]',
   good: 'limits: [{ return-loss: match, band: 50 MHz to 5 GHz, min: 10 dB }]',
   *check(judged) {
-    for (const outcome of limitOutcomes(judged)) {
+    for (const outcome of judged.limits) {
       if (outcome.kind !== 'return-loss' || outcome.met) continue;
       const limit = judged.model.limits.find(({ name }) => name === outcome.name)!;
       yield {
