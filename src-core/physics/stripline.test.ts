@@ -4,7 +4,13 @@ import { ETA_0 } from './constants';
 import { surfaceResistance } from './copper';
 import { crossSection } from './cross-section';
 import { ellipticK, ellipticRatio } from './elliptic';
-import { thickStripline, thinCoupledStripline, thinStripline } from './stripline';
+import {
+  thickCoupledStripline,
+  thickStripline,
+  thinCoupledStripline,
+  thinStripline,
+  thinStriplineWidth,
+} from './stripline';
 
 const COHN = 'Cohn, Shielded coupled-strip transmission line, IRE Trans. MTT-3, 1955, 29-38; exact';
 
@@ -162,7 +168,6 @@ checkValues({
   rows: [{ expected: [47.02, 0.3258] }],
 });
 
-/** Field solutions of the thick, the shifted and the coupled stripline; what the closed forms reach is stated with them. */
 describe('T-30 thick striplines in air, t/b 0.05, w/b 0.5', () => {
   const t = { widthMeters: 0.5, thicknessMeters: 0.05 };
   const side = (heightMeters: number) => ({ heightMeters, dk: 1 });
@@ -200,4 +205,45 @@ test('K is π/2 at modulus 0 and grows without end towards 1', () => {
   expect(ellipticK(0)).toBeCloseTo(Math.PI / 2, 15);
   expect(ellipticK(0.5)).toBeCloseTo(1.685750354812596, 14); // Abramowitz and Stegun, table 17.1, m = 0.25
   expect(ellipticK(1 - 1e-14)).toBeGreaterThan(16);
+});
+
+test('a thin strip has the width that its impedance says', () => {
+  for (const width of [0.01, 0.1, 0.5611, 1, 4])
+    expect(thinStriplineWidth(thinStripline(width))).toBeCloseTo(width, 11);
+});
+
+/** Boundary elements with 40 by 16 panels a strip, which give T-30's own values to 5e-5: [w/b, s/b, t/b, even, odd], in air. */
+const pairs = [
+  [0.35, 0.3, 0.03, 128.88, 91.5],
+  [0.35, 0.6, 0.03, 118.32, 104.01],
+  [0.35, 0.6, 0.1, 104.61, 90.33],
+  [0.5, 0.3, 0.05, 102.76, 75.3],
+  [0.5, 0.6, 0.05, 95.34, 84.87],
+  [0.5, 0.3, 0.1, 95.38, 67.82],
+  [0.5, 1.2, 0.1, 83.86, 82.27],
+] as const;
+
+test('thick pairs lie within the stated share of boundary elements', () => {
+  for (const [w, s, t, even, odd] of pairs) {
+    const pair = thickCoupledStripline(w, s, t);
+    expect(Math.abs(pair.even / even - 1)).toBeLessThan(0.008);
+    expect(Math.abs(pair.odd / odd - 1)).toBeLessThan(0.009);
+  }
+});
+
+/** The same method: [w/b, t/b, e/b, Z]. */
+const shifted = [
+  [0.15, 0.02, 0.2, 144.53],
+  [0.3, 0.06, 0.1, 108.85],
+  [0.3, 0.1, 0.2, 91.52],
+  [0.5, 0.02, 0.2, 84.73],
+  [0.5, 0.06, 0.05, 88.05],
+] as const;
+
+test('strips off the middle lie within the stated share of boundary elements', () => {
+  for (const [w, t, e, ohms] of shifted) {
+    const side = (sign: number) => ({ heightMeters: (1 - t) / 2 + sign * e, dk: 1 });
+    const { odd } = crossSection({ widthMeters: w, thicknessMeters: t, lower: side(-1), upper: side(1) });
+    expect(Math.abs(odd.impedanceOhms / ohms - 1)).toBeLessThan(0.006);
+  }
 });
