@@ -1,7 +1,7 @@
 import { analyse } from '../../src-core/analyse';
 import type { Analysis } from '../../src-core/analysis';
 import { type Curves, curvesOf } from '../../src-core/cascade/curves';
-import { readQuantity } from '../../src-core/quantity/index';
+import { readQuantity } from '../../src-core/quantity/read';
 import { writeTouchstone } from '../../src-core/networks/touchstone-write';
 import { type Command, type OptionValues, Refusal } from './command';
 import { openWorkspace } from './files';

@@ -11,9 +11,10 @@ export function serveFiles(client: BaseLanguageClient): vscode.Disposable {
       const folder = vscode.Uri.parse(uri, true);
       if (!isOpen(folder)) return [];
       const entries = await Promise.resolve(vscode.workspace.fs.readDirectory(folder)).catch(() => []);
-      return entries.flatMap(([name, type]) =>
-        type === vscode.FileType.File ? [{ name, kind: 'file' as const }] : type === vscode.FileType.Directory ? [{ name, kind: 'folder' as const }] : [],
-      );
+      return entries.flatMap(([name, type]): { name: string; kind: 'file' | 'folder' }[] => {
+        if (type === vscode.FileType.File) return [{ name, kind: 'file' }];
+        return type === vscode.FileType.Directory ? [{ name, kind: 'folder' }] : [];
+      });
     }),
   );
 }

@@ -83,12 +83,12 @@ function clientOptions(context: vscode.ExtensionContext, output: vscode.LogOutpu
   };
 }
 
-/** `restart` of the client gives up on a server that does not answer within 2 s and throws: then it is started as new. */
+/** `stop` gives up on a server that does not answer within 2 s and throws: it is then replaced all the same. */
 async function restart(client: BaseLanguageClient, output: vscode.LogOutputChannel): Promise<void> {
   try {
-    await (client.state === State.Running ? client.restart() : client.start());
+    if (client.needsStop()) await client.stop();
   } catch (error) {
     output.warn(`The server did not answer and is replaced: ${error instanceof Error ? error.message : String(error)}`);
-    await client.start();
   }
+  await client.start();
 }

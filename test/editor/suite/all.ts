@@ -2,10 +2,12 @@ import { defineDiagnosticsTests } from './diagnostics';
 import { defineEditingTests } from './editing';
 import { defineLanguageTests } from './language';
 import { definePreviewTests } from './preview';
+import { revert } from './harness';
 import { defineServerTests } from './server';
 
 /** The same tests in both hosts; `host` names the few that one of them cannot have. */
 export function defineSuite(): void {
+  afterEach(revert);
   defineLanguageTests();
   defineDiagnosticsTests();
   defineEditingTests();

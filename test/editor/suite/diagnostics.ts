@@ -31,7 +31,6 @@ export function defineDiagnosticsTests(): void {
       const parts = await open('boards/controller.parts.yaml');
       await replace(parts, '  fast:\n', '  quick:\n');
       await until('the unknown stackup', () => findingsOf(channel.document.uri).find(({ message }) => message.includes('ctrl.fast')));
-      await vscode.window.showTextDocument(parts.document);
       await revert();
       await until('no finding', () => findingsOf(channel.document.uri).length === 0);
     });

@@ -38,7 +38,7 @@ export const finding = (uri: vscode.Uri, rule: string) => findingsOf(uri).find((
 /** Where a text stands in a document. */
 export function rangeOfText(document: vscode.TextDocument, text: string): vscode.Range {
   const start = document.getText().indexOf(text);
-  ok(start >= 0, `the document holds ${JSON.stringify(text)}`);
+  ok(start >= 0, `the document holds ${JSON.stringify(text)}, got ${JSON.stringify(document.getText())}`);
   return new vscode.Range(document.positionAt(start), document.positionAt(start + text.length));
 }
 
@@ -47,7 +47,13 @@ export async function replace(editor: vscode.TextEditor, from: string, to: strin
   ok(await editor.edit((edit) => edit.replace(range, to)), 'the edit was taken');
 }
 
-/** Throws away what was typed. */
+/** Throws away what was typed into the files that are open: each gets the text that stands on disk. */
 export async function revert(): Promise<void> {
-  await vscode.commands.executeCommand('workbench.action.files.revert');
+  for (const document of vscode.workspace.textDocuments.filter(({ isDirty }) => isDirty)) {
+    const onDisk = new TextDecoder().decode(await vscode.workspace.fs.readFile(document.uri));
+    const edit = new vscode.WorkspaceEdit();
+    edit.replace(document.uri, new vscode.Range(0, 0, document.lineCount, 0), onDisk);
+    ok(await vscode.workspace.applyEdit(edit), 'the text of the disk was taken');
+    await document.save();
+  }
 }
