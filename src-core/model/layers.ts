@@ -244,12 +244,14 @@ function atVia(draft: Draft, reached: Reached | undefined, reports: ModelReport[
         { title: 'Remove it: it is derived', edits: [{ op: 'remove', at }] },
       ],
     });
-  } else if (from !== undefined && to !== undefined) checkSpan(draft, stackup, from, to, reports);
+  } else if (from !== undefined && to !== undefined && !checkSpan(draft, stackup, from, to, reports)) {
+    return undefined; // where it ends is in doubt: what follows is not held against it
+  }
   return to === undefined ? undefined : { stackup, layer: to, by: draft };
 }
 
-/** A via's layers differ, and its span holds both. */
-function checkSpan(draft: Draft, stackup: Stackup, from: string, to: string, reports: ModelReport[]): void {
+/** Whether a via's layers differ and its span holds both; else a report. */
+function checkSpan(draft: Draft, stackup: Stackup, from: string, to: string, reports: ModelReport[]): boolean {
   if (from === to) {
     draft.incomplete = true;
     const written = (['to', 'from'] as const).find((end) => Object.hasOwn(draft.raw, end));
@@ -260,15 +262,15 @@ function checkSpan(draft: Draft, stackup: Stackup, from: string, to: string, rep
       message: `Both ends of \`${draft.name}\` are on \`${from}\`: a via joins two layers.`,
       fixes: [{ title: `Remove \`${draft.name}\``, edits: [{ op: 'remove', at: draft.place }] }],
     });
-    return;
+    return false;
   }
   const span = draft.values.span;
-  if (!Array.isArray(span) || span.length !== 2) return;
+  if (!Array.isArray(span) || span.length !== 2) return true;
   const names = copperLayers(stackup).map(({ name }) => name);
   const [first, last] = span.map((name) => names.indexOf(name as string)).sort((a, b) => a - b);
-  if (first < 0) return;
+  if (first < 0) return true;
   const outside = [from, to].filter((name) => names.indexOf(name) < first || names.indexOf(name) > last);
-  if (outside.length === 0) return;
+  if (outside.length === 0) return true;
   draft.incomplete = true;
   const wanted = [first, last, names.indexOf(from), names.indexOf(to)];
   const text = `[${names[Math.min(...wanted)]}, ${names[Math.max(...wanted)]}]`;
@@ -279,6 +281,7 @@ function checkSpan(draft: Draft, stackup: Stackup, from: string, to: string, rep
     message: `\`${draft.name}\` spans \`${names[first]}\` to \`${names[last]}\` and does not reach ${outside.map((name) => `\`${name}\``).join(' or ')}.`,
     fixes: [{ title: `Change the span to \`${text}\``, edits: [{ op: 'value', at: draft.places.span, text }] }],
   });
+  return false;
 }
 
 function atCapacitor(draft: Draft, reached: Reached | undefined, reports: ModelReport[]): void {

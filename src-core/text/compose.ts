@@ -1,5 +1,5 @@
 import { type Document, isAlias, isMap, isPair, isScalar, isSeq, type ParsedNode, parseDocument } from 'yaml';
-import { tooDeepAt } from './limits';
+import { MAX_NESTING, tooDeepAt } from './limits';
 import { resolvePlain } from './scalar';
 import { columnOf, emptyScalar, type ItemNode, type PairNode, type SyntaxNode } from './syntax';
 
@@ -30,11 +30,16 @@ const OPTIONS = {
  * Parses one piece of a text.
  * @param piece the text, padded in front so that its columns are those of the file
  * @param shift what is added to its offsets
+ * @param depth levels that it stands in already
  */
-export function compose(piece: string, shift: number): Composed {
-  const deep = tooDeepAt(piece);
+export function compose(piece: string, shift: number, depth = 0): Composed {
+  const deep = tooDeepAt(piece, MAX_NESTING - depth);
   if (deep !== undefined) return { node: emptyScalar(shift + deep), errors: [], tooDeep: shift + deep };
+  // The library makes an Error for each fault; recording the stack of 100,000 of them costs seconds.
+  const limits = Error as { stackTraceLimit?: number };
+  const { stackTraceLimit } = limits;
   try {
+    limits.stackTraceLimit = 0;
     const document = parseDocument(piece, OPTIONS) as Document.Parsed<ParsedNode>;
     const errors = document.errors.map(({ code, pos, message }) => ({
       code: code as string,
@@ -46,6 +51,8 @@ export function compose(piece: string, shift: number): Composed {
   } catch (error) {
     const message = error instanceof Error ? error.message : String(error);
     return { node: emptyScalar(shift), errors: [{ code: 'IMPOSSIBLE', start: shift, end: shift, message }] };
+  } finally {
+    limits.stackTraceLimit = stackTraceLimit;
   }
 }
 

@@ -55,7 +55,11 @@ export function utf8Length(text: string): number {
   let bytes = text.length;
   for (let i = 0; i < text.length; i++) {
     const code = text.charCodeAt(i);
-    if (code > 0x7f) bytes += code > 0x7ff && (code < 0xd800 || code > 0xdfff) ? 2 : 1;
+    if (code <= 0x7f) continue;
+    bytes += code > 0x7ff ? 2 : 1;
+    const next = text.charCodeAt(i + 1);
+    // A pair of surrogates is four bytes in all, two of which are counted already.
+    if (code >= 0xd800 && code <= 0xdbff && next >= 0xdc00 && next <= 0xdfff) i++;
   }
   return bytes;
 }

@@ -64,18 +64,21 @@ const endOf = ({ text, lines }: Recovery, line: number) => (line < lines.length 
 const pieceOf = (recovery: Recovery, { from, column, end }: Block) =>
   ' '.repeat(column) + recovery.text.slice(from, endOf(recovery, end));
 
-const composeBlock = (recovery: Recovery, it: Block): Composed => compose(pieceOf(recovery, it), it.from - it.column);
+const composeBlock = (recovery: Recovery, it: Block): Composed =>
+  compose(pieceOf(recovery, it), it.from - it.column, it.depth);
 
 const isGood = (composed: Composed) => composed.errors.length === 0 && composed.tooDeep === undefined;
 
 function block(recovery: Recovery, it: Block): SyntaxNode {
   const { text, lines } = recovery;
-  if (it.depth > MAX_NESTING) {
-    add(recovery, it.path, tooDeepReport(contextOf(recovery, it.path), it.from));
-    return emptyScalar(it.from);
+  if (it.depth >= MAX_NESTING) {
+    const last = composeBlock(recovery, it);
+    if (last.tooDeep !== undefined) add(recovery, it.path, tooDeepReport(contextOf(recovery, it.path), last.tooDeep));
+    return last.node;
   }
   const length = endOf(recovery, it.end) - it.from;
-  if (spend(recovery, length)) {
+  // The whole text has failed already.
+  if (it.depth > 0 && spend(recovery, length)) {
     const whole = composeBlock(recovery, it);
     if (isGood(whole)) return whole.node;
   }
@@ -85,11 +88,11 @@ function block(recovery: Recovery, it: Block): SyntaxNode {
     const from = skipSpaces(text, anchorEnd, lines[it.first].end);
     const anchor = text.slice(it.from + 1, anchorEnd);
     if (from < lines[it.first].end && text[from] !== '#') {
-      const node = block(recovery, { ...it, from, column: from - lines[it.first].start, depth: it.depth + 1 });
+      const node = block(recovery, { ...it, from, column: from - lines[it.first].start });
       return { ...node, anchor };
     }
     const below = nested(recovery, it.first + 1, it.end);
-    if (below) return { ...block(recovery, { ...it, ...below, depth: it.depth + 1 }), anchor };
+    if (below) return { ...block(recovery, { ...it, ...below }), anchor };
   }
   if (text[it.from] === '{' || text[it.from] === '[') return leaf(recovery, it).node;
   return map(recovery, it);
@@ -259,6 +262,7 @@ function pairsOf(recovery: Recovery, item: Block, isHead: boolean): PairNode[] {
     }
   }
   const raw = () => [pair(split, rawScalar(text, from, contentEnd(text, from, end)))];
+  if (recovery.reports.length >= MAX_REPORTS) return raw();
   if (continued && !spend(recovery, endOf(recovery, item.end) - item.from)) return raw();
   const whole = composeBlock(recovery, item);
   if (isGood(whole) && whole.node.type === 'map') return [...whole.node.pairs];

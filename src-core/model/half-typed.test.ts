@@ -1,0 +1,67 @@
+import { expect, test } from 'vitest';
+import { channelText, exampleModel, exampleTexts } from './fixtures';
+import { changed, reportsIn } from './testing';
+
+/** Each stands in place of the example's stub, which nothing refers to. */
+const stub = channelText.slice(
+  channelText.indexOf('  - stub: test-point'),
+  channelText.indexOf('  - connector: sled-mate'),
+);
+
+test.each([
+  ['a dash', '  -\n'],
+  ['a dash and a space', '  - \n'],
+  ['a word', '  - tr\n'],
+  ['a kind', '  - trace\n'],
+  ['a kind and a colon', '  - trace:\n'],
+  ['a kind and a colon before the rest', '  - stub:\n    length: 0.9 mm\n    impedance: 50 ohm\n    dk: 3.6\n'],
+  ['a word before the rest', '  - stu\n    length: 0.9 mm\n    impedance: 50 ohm\n    dk: 3.6\n'],
+  ['no kind', '  - length: 0.9 mm\n    impedance: 50 ohm\n    dk: 3.6\n'],
+  ['two kinds', '  - stub: tap\n    via: tap\n    length: 0.9 mm\n    impedance: 50 ohm\n    dk: 3.6\n'],
+  ['an unknown kind', '  - stubb: tap\n    length: 0.9 mm\n    impedance: 50 ohm\n    dk: 3.6\n'],
+  ['a colon without its space', '  - stub:tap\n    length: 0.9 mm\n    impedance: 50 ohm\n    dk: 3.6\n'],
+  ['an open brace', '  - { stub: tap, length: 0.9 mm, impedance: 50 ohm, dk: 3.6\n'],
+  ['an open quote', '  - stub: tap\n    length: 0.9 mm\n    impedance: 50 ohm\n    dk: 3.6\n    note: "for the test\n'],
+])('%s: one finding, with a fix, in its own lines; the others keep what they have', (_, entry) => {
+  const texts = exampleTexts({ channel: changed(stub, entry) });
+  const start = texts['lanes/camera.channel.yaml'].indexOf(entry);
+  const reports = reportsIn(texts);
+  expect(reports.map(({ rule, message }) => `${rule}: ${message}`)).toHaveLength(1);
+  expect(reports[0].fixes?.length).toBeGreaterThan(0);
+  expect(reports[0].range.start).toBeGreaterThanOrEqual(start);
+  expect(reports[0].range.end).toBeLessThanOrEqual(start + entry.length);
+  const { model } = exampleModel(texts);
+  const { model: whole } = exampleModel();
+  expect(model.computable).toBe(true);
+  expect(model.elements).toHaveLength(9);
+  for (const index of [0, 1, 2, 3, 4, 5, 7, 8]) expect(model.elements[index]).toEqual(whole.elements[index]);
+});
+
+test.each([
+  ['a key alone', '    value: 100 nF\n', '    value: 100 nF\n    es\n'],
+  ['a key without value', '    esl: 0.3 nH\n', '    esl:\n'],
+  ['a missing unit', '    esl: 0.3 nH\n', '    esl: 0.3\n'],
+  ['a needed key without value', '    value: 100 nF\n', '    value:\n'],
+  ['a needed key gone', '    value: 100 nF\n', ''],
+  ['a misspelt key', '    esl: 0.3 nH\n', '    els: 0.3 nH\n'],
+  ['no colon', '    esl: 0.3 nH\n', '    esl 0.3 nH\n'],
+  ['no space', '    esl: 0.3 nH\n', '    esl:0.3 nH\n'],
+  ['one space too many', '    esl: 0.3 nH\n', '     esl: 0.3 nH\n'],
+  ['one space too few', '    esl: 0.3 nH\n', '   esl: 0.3 nH\n'],
+  ['no indentation', '    esl: 0.3 nH\n', 'esl: 0.3 nH\n'],
+  ['a tab', '    esl: 0.3 nH\n', '\t\tesl: 0.3 nH\n'],
+  ['a key twice', '    esl: 0.3 nH\n', '    esl: 0.3 nH\n    esl: 0.4 nH\n'],
+])('inside an element, %s: one finding in its lines, the others unharmed', (_, from, to) => {
+  const texts = exampleTexts({ channel: changed(from, to) });
+  const text = texts['lanes/camera.channel.yaml'];
+  const start = text.indexOf('  - capacitor: coupling');
+  const end = text.indexOf('  - stub: test-point');
+  const reports = reportsIn(texts);
+  expect(reports.map(({ rule, message }) => `${rule}: ${message}`)).toHaveLength(1);
+  expect(reports[0].range.start).toBeGreaterThanOrEqual(start);
+  expect(reports[0].range.end).toBeLessThanOrEqual(end);
+  const { model } = exampleModel(texts);
+  const { model: whole } = exampleModel();
+  expect(model.elements).toHaveLength(9);
+  for (const index of [0, 1, 2, 3, 4, 6, 7, 8]) expect(model.elements[index]).toEqual(whole.elements[index]);
+});
