@@ -1,8 +1,8 @@
-import { describe } from 'vitest';
+import { describe, expect, test } from 'vitest';
 import { checkValues } from '../../test/check-values';
 import { ETA_0 } from './constants';
 import { crossSection } from './cross-section';
-import { coupledMicrostrip, dispersedDk, microstrip } from './microstrip';
+import { coupledMicrostrip, dispersedDk, microstrip, thickCoupledMicrostrip } from './microstrip';
 
 const HAMMERSTAD = 'Hammerstad and Jensen, IEEE MTT-S Digest 1980, 407-409';
 const KIRSCHNING = 'Kirschning and Jansen, IEEE Trans. MTT-32, 1984, 83-90';
@@ -205,4 +205,21 @@ checkValues({
     return [odd.effectiveDk, even.effectiveDk, ETA_0 * (odd.impedanceOhms - odd.airImpedanceOhms)];
   },
   rows: [{ expected: [1, 1, 0] }],
+});
+
+/** Boundary elements in air, 50 by 24 panels a strip, which give single strips within 0.1 % of T-14: [w/h, s/h, t/h, even, odd]. */
+const thickPairs = [
+  [1, 1, 0.05, 144.689, 97.357],
+  [1.16, 1.47, 0.18, 124.327, 90.609],
+  [2, 1, 0.15, 98.707, 67.489],
+  [2.5, 2, 0.4, 79.074, 62.326],
+  [1, 1, 0.2, 138.254, 86.886],
+] as const;
+
+test('thick pairs lie within the stated share of boundary elements', () => {
+  for (const [u, g, t, even, odd] of thickPairs) {
+    const pair = thickCoupledMicrostrip(u, g, 1, t);
+    expect(Math.abs(pair.even.impedance / even - 1)).toBeLessThan(0.01);
+    expect(Math.abs(pair.odd.impedance / odd - 1)).toBeLessThan(0.025);
+  }
 });

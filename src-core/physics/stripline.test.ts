@@ -155,6 +155,32 @@ checkValues({
 });
 
 checkValues({
+  id: 'T-05',
+  what: 'stripline w 2.66, t 0.01, b 3.2 mm, ε 2.2, copper 5.813e7 at 10 GHz: conductor loss in Np/m',
+  source: 'Pozar, Microwave Engineering, Example 3.5, Cohn’s formula; boundary elements agree within 3 %',
+  relativeTolerance: 3e-2,
+  compute: () => {
+    const side = { heightMeters: 1.595e-3, dk: 2.2 };
+    const { odd } = crossSection({ widthMeters: 2.66e-3, thicknessMeters: 0.01e-3, lower: side, upper: side });
+    const r = surfaceResistance(10e9, 5.813e7) * (odd.stripPerMeter + odd.lowerPlanePerMeter + odd.upperPlanePerMeter);
+    return r / (2 * 50);
+  },
+  rows: [{ expected: 0.1219 }],
+});
+
+checkValues({
+  id: 'N-18',
+  what: 'coupling lowers the differential impedance: w/b 0.35, ε 3.6: single; the pair at s/b 0.2 against 100 ohm',
+  source: 'Cohn 1954, 1955, exact',
+  relativeTolerance: 1e-4,
+  compute: () => {
+    const pair = (2 * thinCoupledStripline(0.35, 0.2).odd) / Math.sqrt(3.6);
+    return [thinStripline(0.35) / Math.sqrt(3.6), (pair - 100) / (pair + 100)];
+  },
+  rows: [{ expected: [63.475, -0.009772] }],
+});
+
+checkValues({
   id: 'T-23',
   what: 'thick stripline w 0.15, t 0.017, b 0.3 mm, ε 3.6 at 10 GHz: impedance, conductor loss in dB per inch',
   source: "boundary elements with Wheeler's rule; Cohn and Pozar's formula gives 0.3275",
