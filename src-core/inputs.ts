@@ -50,7 +50,7 @@ function refusal(path: string): string | undefined {
   if (/^[a-z][a-z0-9+.-]+:/i.test(path)) return 'is an address; write a path relative to this file';
   if (path.includes('\\')) return 'has a backslash; write `/` between folders';
   for (let i = 0; i < path.length; i++) if (path.charCodeAt(i) < 32) return 'has a control character';
-  if (path.endsWith('/')) return 'names a folder, not a file';
+  if (/(?:^|\/)\.{0,2}$/.test(path)) return 'names a folder, not a file';
   if (path.split('/').some((step) => DEVICES.test(step))) return 'is the name of a device';
   return undefined;
 }

@@ -5,7 +5,7 @@ import { parseFile } from './parse';
 import { rangeOf } from './range';
 import { FILE, place, plain, reportsOf, strayRanges } from './testing';
 
-const valueOf = (text: string) => plain(parseFile(FILE, text).value);
+const read = (text: string) => plain(parseFile(FILE, text).value);
 
 test('values, and where they stand', () => {
   const text = 'a: 1\npath:\n  - trace: x\n    length: 5 mm # long\n    empty:\n';
@@ -27,7 +27,7 @@ test('values, and where they stand', () => {
 
 test('scalars are those of YAML 1.2, whatever the directive says', () => {
   expect(
-    valueOf(
+    read(
       '%YAML 1.1\n---\na: on\nb: yes\nc: 010\nd: 1e-12\ne: ~\nf: true\ng: "1"\nh: .inf\ni: .nan\nj: 0x10\nk: 2027-03-31\n',
     ),
   ).toEqual({
@@ -112,7 +112,7 @@ test.each([
   ],
 ])('%s that is not closed is told where it opens and ends with its entry', (_, text, expected, value) => {
   expect(reportsOf(text)).toEqual([expected]);
-  if (value) expect(valueOf(text)).toEqual(value);
+  if (value) expect(read(text)).toEqual(value);
   const fix = parseFile(FILE, text).reports[0].fixes![0].edits[0];
   expect(fix.op === 'range' && reportsOf(applyEdits(text, [fix]))).toEqual([]);
 });
@@ -172,12 +172,12 @@ test('line endings, byte order mark and surrogates count in UTF-16', () => {
 
 test('a second document is told and not read', () => {
   expect(reportsOf('a: 1\n---\nb: 2\n')).toEqual(['yaml «---»']);
-  expect(valueOf('a: 1\n---\nb: 2\n')).toEqual({ a: 1 });
+  expect(read('a: 1\n---\nb: 2\n')).toEqual({ a: 1 });
 });
 
 test('a value with a colon in it wants quotes and is kept as text', () => {
   expect(reportsOf('title: Camera: sled\nb: 1\n')).toHaveLength(1);
-  expect(valueOf('title: Camera: sled\nb: 1\n')).toEqual({ title: 'Camera: sled', b: 1 });
+  expect(read('title: Camera: sled\nb: 1\n')).toEqual({ title: 'Camera: sled', b: 1 });
 });
 
 test('the examples have no report and no range outside', () => {

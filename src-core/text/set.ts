@@ -73,19 +73,7 @@ export function valueEdit(parsed: ParsedFile, found: Found, text: string): TextE
   const { file, text: source } = parsed;
   const { node, pair } = found;
   const { start } = node.range;
-  if (node.type === 'scalar' && node.style === 'empty') {
-    if (pair?.bare) return { file, range: { start: pair.keyRange.end, end: pair.keyRange.end }, text: `: ${text}` };
-    let end = start;
-    while (source[end] === ' ' || source[end] === '\t') end++;
-    const follows = end < source.length && source[end] !== '\n' && source[end] !== '\r';
-    const before = start > 0 && /\s/.test(source[start - 1]) ? '' : ' ';
-    const colon = pair && start === pair.keyRange.end ? ':' : '';
-    return {
-      file,
-      range: { start, end: follows ? start : end },
-      text: `${colon}${before}${text}${follows && !/\s/.test(source[start]) && !/[,}\]]/.test(source[start]) ? ' ' : ''}`,
-    };
-  }
+  if (node.type === 'scalar' && node.style === 'empty') return writeValue(parsed, start, pair, text);
   let { end } = node.range;
   while (end > start && /\s/.test(source[end - 1])) end--;
   const isBlock = (node.type === 'map' || node.type === 'list') && !node.flow;
@@ -93,4 +81,25 @@ export function valueEdit(parsed: ParsedFile, found: Found, text: string): TextE
   // A block under its key gives way to a value on the key's own line.
   const colon = source.indexOf(':', pair.keyRange.end);
   return { file, range: { start: colon + 1, end }, text: ` ${text}` };
+}
+
+const isSpace = (character: string | undefined) => character === ' ' || character === '\t';
+
+/** Writes a value behind its colon or dash, in place of the space that stands there. */
+function writeValue(
+  { file, text: source }: ParsedFile,
+  at: number,
+  pair: PairNode | undefined,
+  text: string,
+): TextEdit {
+  if (pair?.bare) return { file, range: { start: pair.keyRange.end, end: pair.keyRange.end }, text: `: ${text}` };
+  let start = at;
+  while (start > 0 && isSpace(source[start - 1])) start--;
+  let end = at;
+  while (isSpace(source[end])) end++;
+  const next = source[end];
+  const after = next === '#' || next === '}' || next === ']' ? ' ' : '';
+  const before = start === 0 || source[start - 1] === '\n' ? '' : ' ';
+  const colon = pair && start === pair.keyRange.end ? ':' : '';
+  return { file, range: { start, end }, text: `${colon}${before}${text}${after}` };
 }

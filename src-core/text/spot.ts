@@ -51,7 +51,7 @@ function within(
       if (at <= pair.keyRange.end) return spot(parsed, here, 'key', pair.keyRange, at, level);
       const inside = within(parsed, pair.value, here, at, level);
       if (inside) return inside;
-      return onSameLine(parsed.text, pair.keyRange.end, at)
+      return at <= pair.value.range.start && onSameLine(parsed.text, pair.keyRange.end, at)
         ? spot(parsed, here, 'value', { start: at, end: at }, at, level)
         : undefined;
     }
