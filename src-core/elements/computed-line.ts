@@ -89,36 +89,46 @@ function surfaceOf(surface: Surface, depthMeters: number, frequencies: Float64Ar
   });
 }
 
-/** Series impedance and shunt admittance per metre over frequency: 4 numbers each. */
-function perMeter(line: ComputedLine, mode: LineMode, frequencies: Float64Array): Float64Array {
+/** What a mode's constants are made of, each over the grid: 2n numbers. */
+function ingredients(line: ComputedLine, mode: LineMode, frequencies: Float64Array) {
   const log = perGrid(frequencies, 'laminate-logarithm', () => wideBandLogarithm(frequencies));
   const layering = (side: Layering) =>
     perGrid(frequencies, `layering ${JSON.stringify(side)}`, () => seriesPermittivity(side, frequencies, log));
-  const lower = layering(line.lower);
-  const upper = layering(line.upper);
-  const out = new Float64Array(4 * frequencies.length);
-  const { inductance, capacitance, lowerShare, upperShare } = mode;
-  for (let i = 0; i < frequencies.length; i++) {
-    const omega = 2 * Math.PI * frequencies[i];
-    out[4 * i + 1] = omega * inductance;
-    const re = 1 + lowerShare * (lower[2 * i] - 1) + upperShare * (upper[2 * i] - 1);
-    const im = lowerShare * lower[2 * i + 1] + upperShare * upper[2 * i + 1];
-    out[4 * i + 2] = -omega * capacitance * im;
-    out[4 * i + 3] = omega * capacitance * re;
-  }
-  addWalls(out, mode.stripPerMeter, () => surfaceOf(line.strip, mode.slabMeters, frequencies));
-  addWalls(out, mode.lowerPlanePerMeter, () => surfaceOf(line.lowerPlane, Number.POSITIVE_INFINITY, frequencies));
-  addWalls(out, mode.upperPlanePerMeter, () => surfaceOf(line.upperPlane, Number.POSITIVE_INFINITY, frequencies));
-  return out;
+  const walls = (factor: number, surface: Surface, depthMeters: number) =>
+    factor === 0
+      ? perGrid(frequencies, 'no walls', () => new Float64Array(2 * frequencies.length))
+      : surfaceOf(surface, depthMeters, frequencies);
+  return {
+    lower: layering(line.lower),
+    upper: layering(line.upper),
+    strip: walls(mode.stripPerMeter, line.strip, mode.slabMeters),
+    lowerPlane: walls(mode.lowerPlanePerMeter, line.lowerPlane, Number.POSITIVE_INFINITY),
+    upperPlane: walls(mode.upperPlanePerMeter, line.upperPlane, Number.POSITIVE_INFINITY),
+  };
 }
 
-function addWalls(out: Float64Array, factor: number, surface: () => Float64Array): void {
-  if (factor === 0) return;
-  const impedance = surface();
-  for (let i = 0, j = 0; j < impedance.length; i += 4, j += 2) {
-    out[i] += factor * impedance[j];
-    out[i + 1] += factor * impedance[j + 1];
-  }
+/** Writes series impedance and shunt admittance per metre at frequency `i` to `out`: 4 numbers. */
+function perMeter(
+  mode: LineMode,
+  from: ReturnType<typeof ingredients>,
+  i: number,
+  omega: number,
+  out: Float64Array,
+): void {
+  const { lower, upper, strip, lowerPlane, upperPlane } = from;
+  const re = 2 * i;
+  const im = re + 1;
+  out[0] =
+    mode.stripPerMeter * strip[re] +
+    mode.lowerPlanePerMeter * lowerPlane[re] +
+    mode.upperPlanePerMeter * upperPlane[re];
+  out[1] =
+    omega * mode.inductance +
+    mode.stripPerMeter * strip[im] +
+    mode.lowerPlanePerMeter * lowerPlane[im] +
+    mode.upperPlanePerMeter * upperPlane[im];
+  out[2] = -omega * mode.capacitance * (mode.lowerShare * lower[im] + mode.upperShare * upper[im]);
+  out[3] = omega * mode.capacitance * (1 + mode.lowerShare * (lower[re] - 1) + mode.upperShare * (upper[re] - 1));
 }
 
 /** Scattering of one mode in the leg's reference; 8 numbers a frequency. */
@@ -129,16 +139,18 @@ export function scatterComputed(
   reference: number,
 ): TwoPort {
   const { lengthMeters } = line;
-  const constants = perMeter(line, line[mode], frequencies);
+  const from = ingredients(line, line[mode], frequencies);
   const out: TwoPort = new Float64Array(8 * frequencies.length);
+  const constants = new Float64Array(4);
   const wave = new Float64Array(4);
   for (let i = 0; i < frequencies.length; i++) {
+    perMeter(line[mode], from, i, 2 * Math.PI * frequencies[i], constants);
     if (frequencies[i] === 0) {
       // no admittance at DC: the resistance alone, in series
-      scatterSeries(constants[4 * i] * lengthMeters, 0, reference, out, 8 * i);
+      scatterSeries(constants[0] * lengthMeters, 0, reference, out, 8 * i);
       continue;
     }
-    propagation(constants[4 * i], constants[4 * i + 1], constants[4 * i + 2], constants[4 * i + 3], wave);
+    propagation(constants[0], constants[1], constants[2], constants[3], wave);
     scatterLine(wave[0] * lengthMeters, wave[1] * lengthMeters, wave[2], wave[3], reference, out, 8 * i);
   }
   return out;
@@ -146,10 +158,11 @@ export function scatterComputed(
 
 /** Nepers, seconds of phase delay and impedance of one leg in one mode at a frequency above 0. */
 export function computedAt(line: ComputedLine, mode: 'odd' | 'even', frequencyHz: number) {
-  const frequencies = new Float64Array([frequencyHz]);
-  const [zRe, zIm, yRe, yIm] = perMeter(line, line[mode], frequencies);
+  const constants = new Float64Array(4);
   const wave = new Float64Array(4);
-  propagation(zRe, zIm, yRe, yIm, wave);
+  const from = ingredients(line, line[mode], Float64Array.of(frequencyHz));
+  perMeter(line[mode], from, 0, 2 * Math.PI * frequencyHz, constants);
+  propagation(constants[0], constants[1], constants[2], constants[3], wave);
   return {
     nepers: wave[0] * line.lengthMeters,
     delaySeconds: (wave[1] * line.lengthMeters) / (2 * Math.PI * frequencyHz),

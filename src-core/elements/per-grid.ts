@@ -10,11 +10,9 @@ const MOST = 48;
 export function perGrid(frequencies: Float64Array, key: string, compute: () => Float64Array): Float64Array {
   let table = tables.get(frequencies);
   if (!table) tables.set(frequencies, (table = new Map()));
-  let found = table.get(key);
-  if (!found) {
-    found = compute();
-    if (table.size >= MOST) table.delete(table.keys().next().value as string);
-    table.set(key, found);
-  }
+  const found = table.get(key) ?? compute();
+  table.delete(key); // and last again: what was not asked for the longest goes first
+  if (table.size >= MOST) table.delete(table.keys().next().value as string);
+  table.set(key, found);
   return found;
 }

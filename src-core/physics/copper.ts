@@ -36,8 +36,8 @@ export function slabImpedance(
   at = 0,
 ): Float64Array {
   const rs = surfaceResistance(frequencyHz, conductivity);
-  const x = thicknessMeters === Number.POSITIVE_INFINITY ? 16 : thicknessMeters * rs * conductivity; // t/δ
-  if (x >= 16) {
+  const x = thicknessMeters === Number.POSITIVE_INFINITY ? 12 : thicknessMeters * rs * conductivity; // t/δ
+  if (x >= 12) {
     out[at] = rs;
     out[at + 1] = rs;
   } else if (x < 1e-4) {
