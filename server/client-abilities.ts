@@ -12,6 +12,7 @@ export interface ClientAbilities {
   readonly snippets: boolean;
   readonly itemDefaults: boolean;
   readonly definitionLinks: boolean;
+  readonly disabledActions: boolean;
   readonly watchFiles: boolean;
   readonly progress: boolean;
   readonly folderChanges: boolean;
@@ -34,6 +35,7 @@ export function abilitiesFrom({
     snippets: completion?.completionItem?.snippetSupport === true,
     itemDefaults: completion?.completionList?.itemDefaults?.includes('editRange') === true,
     definitionLinks: textDocument?.definition?.linkSupport === true,
+    disabledActions: textDocument?.codeAction?.disabledSupport === true,
     watchFiles: workspace?.didChangeWatchedFiles?.dynamicRegistration === true,
     progress: window?.workDoneProgress === true,
     folderChanges: workspace?.workspaceFolders === true,

@@ -39,8 +39,11 @@ export const codeActions: Handler<CodeActionParams, CodeAction[] | null> =
       !context.only || context.only.some((only) => kind === only || kind.startsWith(`${only}.`));
     const actions: CodeAction[] = [];
     if (wanted(CodeActionKind.QuickFix)) {
-      for (const action of actionsAt(at.analysis, at.file, fromRange(at.text, range)))
-        actions.push(toCodeAction(services, at, textDocument.uri, action));
+      for (const action of actionsAt(at.analysis, at.file, fromRange(at.text, range))) {
+        const isRefused = action.kind === 'accept' && action.refused !== undefined;
+        if (!isRefused || services.client.disabledActions)
+          actions.push(toCodeAction(services, at, textDocument.uri, action));
+      }
     }
     if (context.only && wanted(FIX_ALL)) {
       const edits = fixAllOf(at.analysis, at.file);
@@ -66,21 +69,18 @@ function toCodeAction(
     const data: ActionData = { uri, rule: finding.rule, title, at: placeKey(finding) };
     return { title, kind: CodeActionKind.QuickFix, diagnostics, data, ...(action.preferred && { isPreferred: true }) };
   }
+  const common = { title, kind: CodeActionKind.QuickFix, diagnostics };
+  if (action.refused !== undefined) return { ...common, disabled: { reason: action.refused } };
   const { rule, subject, message } = finding;
   const value = acceptedText(finding);
   const argument: AcceptFinding = {
     uri,
     rule,
     at: subject ?? '',
-    message,
+    message: String(message),
     ...(value !== undefined && { value }),
   };
-  return {
-    title,
-    kind: CodeActionKind.QuickFix,
-    diagnostics,
-    command: { title, command: acceptFindingCommand, arguments: [argument] },
-  };
+  return { ...common, command: { title, command: acceptFindingCommand, arguments: [argument] } };
 }
 
 export const resolveAction: Handler<CodeAction, CodeAction> = (services) => async (action, token) => {

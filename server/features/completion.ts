@@ -42,11 +42,26 @@ export const completion: Handler<CompletionParams, CompletionList | null> =
       list: (folder) => services.filesOf(root).list(folder),
       library: () => services.workspace.library(root, token, 'parts'),
     });
-    return {
-      isIncomplete: items.some(({ kind }) => kind === 'unit'),
-      items: items.map((item) => toItem(item, text, parsed.kind, services.client.snippets)),
-    };
+    const made = items.map((item) => toItem(item, text, parsed.kind, services.client.snippets));
+    const isIncomplete = items.some(({ kind }) => kind === 'unit');
+    return services.client.itemDefaults ? withDefaults(made, isIncomplete) : { isIncomplete, items: made };
   };
+
+/** The range that all items share is said once. */
+function withDefaults(items: readonly CompletionItem[], isIncomplete: boolean): CompletionList {
+  const shared = items[0]?.textEdit && 'range' in items[0].textEdit ? items[0].textEdit.range : undefined;
+  const isShared = ({ textEdit }: CompletionItem) =>
+    textEdit && 'range' in textEdit && JSON.stringify(textEdit.range) === JSON.stringify(shared);
+  return {
+    isIncomplete,
+    ...(shared && { itemDefaults: { editRange: shared, insertTextMode: InsertTextMode.asIs } }),
+    items: items.map((item) => {
+      if (!isShared(item)) return item;
+      const { textEdit, insertTextMode: _same, ...rest } = item;
+      return { ...rest, textEditText: textEdit!.newText };
+    }),
+  };
+}
 
 function toItem(completion: Completion, text: string, fileKind: string, snippets: boolean): CompletionItem {
   const { label, kind, detail, insert, isSnippet, range, filter, rank, preselect, retrigger, also, about } = completion;

@@ -16,7 +16,13 @@ export type Action =
       readonly preferred: boolean;
       readonly edits: readonly PlaceEdit[];
     }
-  | { readonly kind: 'accept'; readonly title: string; readonly finding: Finding };
+  | {
+      readonly kind: 'accept';
+      readonly title: string;
+      readonly finding: Finding;
+      /** Why it cannot be accepted. */
+      readonly refused?: string;
+    };
 
 /** What can be done about the findings that touch a range; in the order of the findings, fixes before acceptance. */
 export function actionsAt(analysis: Analysis, file: FilePath, range: TextRange): readonly Action[] {
@@ -46,9 +52,16 @@ export function actionsAt(analysis: Analysis, file: FilePath, range: TextRange):
   });
 }
 
+/** Listed even where it is refused, with the reason, so that nobody looks for it in vain. */
 function acceptance(analysis: Analysis, finding: Finding): Action | undefined {
-  if (cannotBeRead.has(finding.rule) || !isAcceptable(finding, analysis.model.file)) return undefined;
-  return { kind: 'accept', title: `Accept this finding… (${finding.rule})`, finding };
+  const title = `Accept this finding… (${finding.rule})`;
+  if (finding.rule.startsWith('waiver-')) return undefined;
+  const refused = cannotBeRead.has(finding.rule)
+    ? 'What cannot be read is mended, not accepted.'
+    : isAcceptable(finding, analysis.model.file)
+      ? undefined
+      : 'Only a finding about an element or a limit of this channel can be accepted.';
+  return { kind: 'accept', title, finding, ...(refused && { refused }) };
 }
 
 /** Errors of what is written: they are mended, not accepted. */

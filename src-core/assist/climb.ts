@@ -29,11 +29,20 @@ function* marksUpwards(lines: readonly LineParts[], column: number): Generator<M
   }
 }
 
+/** Deeper than any text that is read (design: 64). */
+export const MOST_NESTED = 64;
+
+export interface Climbed {
+  readonly path: ValuePath;
+  readonly levels: readonly Level[];
+}
+
 /**
  * Walks up from a column of the last line by indentation alone.
- * @returns the steps that lead to the mapping whose keys stand in that column, and every level on the way, outermost first
+ * @returns the steps that lead to the mapping whose keys stand in that column, and every level on the way, outermost first;
+ * undefined where it nests too deeply
  */
-export function climb(lines: readonly LineParts[], column: number): { path: ValuePath; levels: readonly Level[] } {
+export function climb(lines: readonly LineParts[], column: number): Climbed | undefined {
   const path: (string | number)[] = [];
   const keys: Map<string, string>[] = [];
   let here: Holder = { column, keys: new Map() };
@@ -42,6 +51,7 @@ export function climb(lines: readonly LineParts[], column: number): { path: Valu
     keys.unshift('index' in here ? new Map() : here.keys);
   };
   for (const mark of marksUpwards(lines, column)) {
+    if (keys.length > MOST_NESTED) return undefined;
     const isOuter = mark.column < here.column;
     if (mark.key === undefined) {
       if ('index' in here && mark.column === here.column) here.index++;

@@ -112,3 +112,12 @@ test('rows of a stackup', () => {
     1,
   ]);
 });
+
+test('a text that nests without end has no place in it, and costs no more than its length', () => {
+  for (const piece of ['[', '{a: ', '- ', '{ a: b, ']) {
+    const text = piece.repeat(100_000);
+    expect(cursorAt(text, text.length)).toBeUndefined();
+  }
+  const deep = Array.from({ length: 200 }, (_, depth) => `${' '.repeat(depth)}a:`).join('\n');
+  expect(cursorAt(deep, deep.length)).toBeUndefined();
+});

@@ -1,5 +1,5 @@
 import type { TextRange, ValuePath } from '../text/types';
-import { climb, type Level, withKeysBelow } from './climb';
+import { climb, type Level, MOST_NESTED, withKeysBelow } from './climb';
 import { type LineParts, linesBefore, outsideQuotes, withoutComment, wordEnd } from './cursor-lines';
 import { inFlow, openBrackets } from './flow-cursor';
 
@@ -29,13 +29,18 @@ export interface Cursor {
   readonly column: number;
 }
 
+const LONGEST_LINE = 10_000;
+
 export function cursorAt(text: string, offset: number): Cursor | undefined {
   const lines = linesBefore(text, offset);
   const current = lines.at(-1)!;
   const cursorColumn = offset - current.start;
+  // Nobody types at the end of such a line, and what follows looks at it several times.
+  if (current.text.length > LONGEST_LINE) return undefined;
   const before = current.text.slice(0, cursorColumn);
   if (/(^|\s)#/.test(outsideQuotes(before))) return undefined;
   const open = openBrackets(lines, cursorColumn);
+  if (open.length > MOST_NESTED) return undefined;
   return open.length > 0 ? inFlow(text, offset, lines, open) : inBlock(text, offset, lines, cursorColumn);
 }
 
@@ -63,7 +68,9 @@ function inBlock(text: string, offset: number, lines: readonly LineParts[], curs
     ...more,
   });
   if (value) {
-    const { path, levels } = climb(lines, line.column);
+    const climbed = climb(lines, line.column);
+    if (!climbed) return undefined;
+    const { path, levels } = climbed;
     const last = withKeysBelow(text, offset, line.column, levels.at(-1));
     const keys = new Map(last?.keys);
     keys.delete(line.key!);
@@ -80,7 +87,9 @@ function inBlock(text: string, offset: number, lines: readonly LineParts[], curs
   const lastDash = line.dashes.at(-1);
   if (lastDash !== undefined && cursorColumn > lastDash) {
     const content = Math.max(line.column, lastDash + 2);
-    const { path, levels } = climb(lines, content);
+    const climbed = climb(lines, content);
+    if (!climbed) return undefined;
+    const { path, levels } = climbed;
     const token = { start: line.start + Math.min(line.column, cursorColumn), end: 0 };
     token.end = wordEnd(text, Math.max(offset, token.start), line.key !== undefined ? /[:\s]/ : /[\n\r#]/);
     const last = withKeysBelow(text, offset, content, levels.at(-1));
@@ -90,7 +99,9 @@ function inBlock(text: string, offset: number, lines: readonly LineParts[], curs
     });
   }
   const column = Math.min(line.blank ? cursorColumn : line.column, cursorColumn);
-  const { path, levels } = climb(lines, column);
+  const climbed = climb(lines, column);
+  if (!climbed) return undefined;
+  const { path, levels } = climbed;
   const token = { start: line.start + column, end: wordEnd(text, offset, /[:\s]/) };
   const last = withKeysBelow(text, offset, column, levels.at(-1));
   const keys = new Map(last?.keys);

@@ -48,6 +48,7 @@ export function inFlow(
   const upTo = lines.slice(0, first.line + 1);
   const onKey = opener.key !== undefined && first.column >= opener.valueColumn;
   const base = climb(upTo, onKey ? opener.column : Math.max(opener.column, (opener.dashes.at(-1) ?? -2) + 2));
+  if (!base) return undefined;
   let path: ValuePath = onKey ? [...base.path, opener.key!] : base.path;
   const levels: Level[] = [...base.levels];
   if (!onKey) levels.pop();

@@ -81,6 +81,14 @@ describe('findings', () => {
 });
 
 describe('other files', () => {
+  test('what a lane finds in a closed parts file is told beside its own', async () => {
+    await open.folder.write('boards/bad.parts.yaml', PARTS.replace('thickness: 40 um', 'thickness: 40 ohm'));
+    await typed(LANE.replace('main.parts', 'bad.parts'), async () => {
+      const report = await open.client.pull(open.lane);
+      const related = 'relatedDocuments' in report ? report.relatedDocuments : undefined;
+      expect(Object.keys(related ?? {})).toEqual([open.folder.uri('boards/bad.parts.yaml')]);
+    });
+  });
   test('a parts file and a configuration have findings of their own', async () => {
     const board = open.folder.uri('boards/other.parts.yaml');
     await open.client.open(board, PARTS.replace('thickness: 40 um', 'thickness: 40 ohm'));

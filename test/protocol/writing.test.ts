@@ -30,6 +30,7 @@ describe('writing', () => {
       });
       const fix = actions.find(({ isPreferred }) => isPreferred)!;
       expect(fix.edit).toBeUndefined();
+      expect(actions.find(({ title }) => title.startsWith('Accept'))?.disabled?.reason).toContain('mended');
       const { edit } = await open.client.request<CodeAction>('codeAction/resolve', fix);
       expect(edit?.documentChanges).toEqual([
         { textDocument: { uri: open.lane, version: expect.any(Number) }, edits: [{ range, newText: 'length' }] },
@@ -69,7 +70,7 @@ describe('writing', () => {
       expect(change.edits[0].newText).toContain('until: 2027-06-30');
       await open.client.change(
         open.lane,
-        `${text}waivers:\n  - rule: ${rule}\n    at: ${at}\n    up-to: ${value}\n    until: 2027-06-30\n    by: open.lane team\n    reason: a prototype\n`,
+        `${text}waivers:\n  - rule: ${rule}\n    at: ${at}\n    up-to: ${value}\n    until: 2027-06-30\n    by: lane team\n    reason: a prototype\n`,
       );
       expect((await open.client.findings(open.lane)).map(({ code }) => code)).not.toContain('insertion-loss');
     });
