@@ -15,7 +15,7 @@ export const elementKinds: Record<ElementKindName, ElementKind> = {
   package: reversible(packageKind) as ElementKind,
   trace: reversible(traceKind) as ElementKind,
   cable: reversible(cableKind) as ElementKind,
-  via: reversible(viaKind) as ElementKind,
+  via: viaKind as ElementKind, // its ends are the layers of its neighbours, whichever way it is placed
   connector: reversible(connectorKind) as ElementKind,
   capacitor: reversible(capacitorKind) as ElementKind,
   stub: reversible(stubKind) as ElementKind,

@@ -8,7 +8,7 @@ test('the value of the limit is marked', () => {
   expectFindings(`
     limits:
       - { insertion-loss: whole, max: 1 dB @ nyquist }
-      #                               ^^^^^^^^^^^^^^ error insertion-loss: \`whole\` loses 2.31 dB at 5 GHz, 1.31 dB more than the 1 dB of its limit.
+      #                               ^^^^^^^^^^^^^^ error insertion-loss: \`whole\` loses 2.32 dB at 5 GHz, 1.32 dB more than the 1 dB of its limit.
   `);
 });
 test.each([

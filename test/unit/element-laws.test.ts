@@ -166,11 +166,15 @@ describe('any element', () => {
     );
   });
 
-  test('the other way round it has its ports exchanged', () => {
+  test('the other way round it has its ports exchanged; a via follows its layers instead', () => {
     fc.assert(
       fc.property(anyElement, (one) => {
         const forwards = networkOf({ ...one, reversed: false }, sweep);
         const backwards = networkOf({ ...one, reversed: true }, sweep);
+        if (one.kind === 'via') {
+          expect(backwards).toEqual(forwards);
+          return;
+        }
         const at = 8 * 20;
         expect(backwards.differential[at]).toBe(forwards.differential[at + 6]);
         expect(backwards.differential[at + 2]).toBe(forwards.differential[at + 4]);
