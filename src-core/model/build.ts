@@ -89,8 +89,8 @@ function readPath(context: ElementContext): Draft[] {
   }
   const drafts = entries.slice(0, MAX_ELEMENTS).map((entry, index) => readElement(context, entry, index));
   resolveIncludes(context, drafts);
-  resolveLayers(drafts, reports);
   for (const draft of drafts) checkMissing(context, draft);
+  resolveLayers(drafts, reports);
   return drafts;
 }
 

@@ -221,6 +221,13 @@ function addDefaults(draft: Draft): void {
   }
 }
 
+/** Whether a key that the kind does not know, misspelt or half typed, was meant to be one of these: it has its own finding. */
+function isMeant({ kind, raw }: Draft, keys: readonly string[]): boolean {
+  const known = new Set(keysOf(kind).map(({ key }) => key));
+  const unknown = Object.keys(raw).filter((key) => !known.has(key) && key !== '');
+  return unknown.some((key) => nearest(key, keys) !== undefined || keys.some((one) => one.startsWith(key)));
+}
+
 /** What the element's own model needs and is not there; keys that are written and bad have their own finding. */
 export function checkMissing({ reports, singleEnded }: ElementContext, draft: Draft): void {
   if (draft.unknownKind || draft.includedIn !== undefined) return;
@@ -228,7 +235,9 @@ export function checkMissing({ reports, singleEnded }: ElementContext, draft: Dr
   if (lacking.length === 0) return;
   // One finding for one cause: an entry without a name is only begun, and a part that is not found may hold the rest.
   const begun = draft.raw[draft.kind] === null || draft.partUnread;
-  const unwritten = begun ? [] : missingKeys(draft.kind, draft.raw, singleEnded);
+  const unwritten = begun
+    ? []
+    : missingKeys(draft.kind, draft.raw, singleEnded).filter(({ anyOf }) => !isMeant(draft, anyOf));
   draft.incomplete = true;
   const { file, path } = headOf(draft);
   reports.push(...formatReports(missingKeyProblems(draft.kind, unwritten), file, path.slice(0, -1), draft.name));

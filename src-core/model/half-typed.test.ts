@@ -44,6 +44,12 @@ test.each([
   ['a needed key without value', '    value: 100 nF\n', '    value:\n'],
   ['a needed key gone', '    value: 100 nF\n', ''],
   ['a misspelt key', '    esl: 0.3 nH\n', '    els: 0.3 nH\n'],
+  ['a needed key misspelt', '    value: 100 nF\n', '    vlaue: 100 nF\n'],
+  ['a needed key half typed', '    value: 100 nF\n', '    val\n'],
+  ['a dash one space too far', '  - capacitor: coupling\n', '   - capacitor: coupling\n'],
+  ['a dash two spaces too far', '  - capacitor: coupling\n', '    - capacitor: coupling\n'],
+  ['a dash at the left', '  - capacitor: coupling\n', '- capacitor: coupling\n'],
+  ['one tab', '    esl: 0.3 nH\n', '\tesl: 0.3 nH\n'],
   ['no colon', '    esl: 0.3 nH\n', '    esl 0.3 nH\n'],
   ['no space', '    esl: 0.3 nH\n', '    esl:0.3 nH\n'],
   ['one space too many', '    esl: 0.3 nH\n', '     esl: 0.3 nH\n'],
@@ -54,7 +60,7 @@ test.each([
 ])('inside an element, %s: one finding in its lines, the others unharmed', (_, from, to) => {
   const texts = exampleTexts({ channel: changed(from, to) });
   const text = texts['lanes/camera.channel.yaml'];
-  const start = text.indexOf('  - capacitor: coupling');
+  const start = text.lastIndexOf('\n', text.indexOf('- capacitor: coupling'));
   const end = text.indexOf('  - stub: test-point');
   const reports = reportsIn(texts);
   expect(reports.map(({ rule, message }) => `${rule}: ${message}`)).toHaveLength(1);
@@ -64,4 +70,12 @@ test.each([
   const { model: whole } = exampleModel();
   expect(model.elements).toHaveLength(9);
   for (const index of [0, 1, 2, 3, 4, 6, 7, 8]) expect(model.elements[index]).toEqual(whole.elements[index]);
+});
+
+test('the first entry without its dash', () => {
+  const texts = exampleTexts({ channel: changed('  - package: camera-serdes\n', '') });
+  expect(reportsIn(texts).map(({ rule, marked }) => `${rule} «${marked}»`)).toEqual(['yaml «length: 14 mm»']);
+  const { model } = exampleModel(texts);
+  const { model: whole } = exampleModel();
+  expect(model.elements.slice(1)).toEqual(whole.elements.slice(1));
 });

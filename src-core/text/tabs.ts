@@ -1,7 +1,8 @@
 import type { TextReport } from './reports';
-import type { ItemNode, PairNode, SyntaxNode } from './syntax';
+import { type ItemNode, lineStart, type PairNode, type SyntaxNode } from './syntax';
 import type { FilePath, PlaceEdit, TextRange } from './types';
 
+/** Where nothing beside it tells. */
 const TAB_WIDTH = 2;
 
 export interface Expanded {
@@ -29,7 +30,7 @@ export function expandTabs(text: string, file: FilePath): Expanded | undefined {
   const edits: PlaceEdit[] = [];
   for (const { start, end } of runs) {
     pieces.push(text.slice(at, start));
-    const spaces = spacesFor(text.slice(start, end));
+    const spaces = ' '.repeat(widthOf(text, start, end));
     starts.push(start + shift);
     pieces.push(spaces);
     shift += spaces.length - (end - start);
@@ -55,17 +56,37 @@ export function expandTabs(text: string, file: FilePath): Expanded | undefined {
     rule: 'tab',
     at: { file, path: [] },
     range: runs[0],
-    message: `${lines} indented with tabs; YAML allows spaces only. Each tab is read as ${TAB_WIDTH} spaces here.`,
+    message: `${lines} indented with tabs; YAML allows spaces only.`,
     fixes: [{ title: 'Indent with spaces', edits, preferred: true, safe: true }],
   };
   return { text: pieces.join(''), original, report };
 }
 
-const spacesFor = (run: string) => {
+/** How many spaces a run of tabs stands for: what the line above asks for if that has spaces, else two a tab. */
+function widthOf(text: string, start: number, end: number): number {
+  const line = lineStart(text, start);
+  const above = lineAbove(text, line);
   let width = 0;
-  for (const character of run) width += character === '\t' ? TAB_WIDTH : 1;
-  return ' '.repeat(width);
-};
+  for (let at = start; at < end; at++) width += text[at] === '\t' ? TAB_WIDTH : 1;
+  if (above === undefined || above.includes('\t')) return width;
+  const dashes = /^ *((?:- +)*)/.exec(above)!;
+  const column = dashes[0].length;
+  const waits = /:\s*(?:#.*)?$/.test(above.slice(0, 500));
+  if (text[end] === '-' && /\s/.test(text[end + 1] ?? ' ')) return waits ? column + 2 - (start - line) : width;
+  return Math.max(0, column + (waits ? 2 : 0) - (start - line));
+}
+
+/** The nearest line of content above; not looked for beyond twenty lines of comment. */
+function lineAbove(text: string, line: number): string | undefined {
+  let end = line - 1;
+  for (let i = 0; i < 20 && end > 0; i++) {
+    const start = lineStart(text, end);
+    const above = text.slice(start, Math.min(end, start + 500)).trimEnd();
+    if (above !== '' && !above.trimStart().startsWith('#')) return above;
+    end = start - 1;
+  }
+  return undefined;
+}
 
 /** A tree with each offset mapped. */
 export function mapOffsets<N extends SyntaxNode>(node: N, map: (offset: number) => number): N {
