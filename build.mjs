@@ -24,6 +24,9 @@ const browser = { ...common, platform: 'browser', mainFields: ['browser', 'modul
 // Bundled CommonJS asks for `require`, which an ES module does not have.
 const requireInModules = "import{createRequire as __createRequire}from'node:module';const require=__createRequire(import.meta.url);";
 
+/** Bundles one of our TypeScript files to an ES module that Node runs, for fuzz and bench. */
+export const bundleForNode = (entry, outfile) => build({ ...node, minify: false, entryPoints: [entry], outfile, format: 'esm', banner: { js: requireInModules } });
+
 const shipped = [
   { ...node, entryPoints: ['client/extension/node.ts'], outfile: 'dist/extension.cjs', format: 'cjs', external: ['vscode'] },
   { ...browser, entryPoints: ['client/extension/browser.ts'], outfile: 'dist/browser-extension.js', format: 'cjs', external: ['vscode'] },

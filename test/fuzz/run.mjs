@@ -9,9 +9,9 @@ const root = join(dirname(fileURLToPath(import.meta.url)), '..', '..');
 install();
 const { buildSchemas } = await import('../../schemas/build.mjs');
 await buildSchemas();
-const { build } = await import('esbuild');
+const { bundleForNode } = await import('../../build.mjs');
 const outfile = join(root, 'dist', 'test', 'fuzz.mjs');
-await build({ entryPoints: [join(root, 'test/fuzz/fuzz.ts')], outfile, bundle: true, platform: 'node', format: 'esm', target: 'node20', logLevel: 'warning' });
+await bundleForNode('test/fuzz/fuzz.ts', outfile);
 const { fuzz } = await import(pathToFileURL(outfile).href);
 
 const { values } = parseArgs({ options: { seed: { type: 'string', default: '20261201' }, every: { type: 'string', default: '1' } } });
