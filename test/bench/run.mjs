@@ -9,7 +9,7 @@ import { boardText, channelText } from './channels.mjs';
 
 const root = join(dirname(fileURLToPath(import.meta.url)), '..', '..');
 await setUp();
-const { build } = await import('esbuild');
+const { bundleForNode } = await import('../../build.mjs');
 const { benchServer } = await import('./server.mjs');
 const { findPython } = await import('../editor/chromium.mjs');
 
@@ -20,7 +20,7 @@ const row = (what, measured, budget, met) => rows.push({ what, measured, budget,
 
 async function analysisRows() {
   const outfile = join(root, 'dist', 'bench-analysis.mjs');
-  await build({ entryPoints: [join(root, 'test/bench/analysis.ts')], outfile, bundle: true, platform: 'node', format: 'esm', target: 'node20', logLevel: 'warning' });
+  await bundleForNode('test/bench/analysis.ts', outfile);
   const { benchAnalysis } = await import(pathToFileURL(outfile).href);
   const base = channelText({ elements: 30 });
   // One element's length differs from one to the next.
