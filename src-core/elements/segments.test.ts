@@ -150,6 +150,23 @@ describe('trace geometry', () => {
     }
   });
 
+  test('where no width gives the impedance, it holds with the nearest width’s copper, and that is said', () => {
+    const one = trace('L3', { impedance: ohms(200) });
+    const { facts, notes } = prepared(one);
+    expect(facts.impedanceOhms).toBe(200);
+    expect(notes[0].message).toMatch(
+      /^No width on L3 with a gap of 1.5 widths gives 200 ohm: 1\d\d ohm is the nearest/,
+    );
+    const { differential } = networkOf(one, Float64Array.of(10e9), model({ referenceOhms: 200 }));
+    expect(s21(differential).db).toBeGreaterThan(1);
+    expect(Math.hypot(differential[0], differential[1])).toBeLessThan(0.02);
+  });
+
+  test('a written common impedance holds', () => {
+    const one = trace('L3', { width: meters(110e-6), gap: meters(140e-6), 'common-impedance': ohms(27) });
+    expect(prepared(one).facts.commonImpedanceOhms).toBe(27);
+  });
+
   test('a target is judged by its own ±', () => {
     const written = { width: meters(110e-6), gap: meters(140e-6) };
     const actual = prepared(trace('L3', written)).facts.impedanceOhms ?? 0;

@@ -2,6 +2,7 @@ import type { Element, Model } from '../model/types';
 import type { ElementNote } from '../networks/types';
 import { GAP_IN_WIDTHS, type Side, type TraceGeometry } from '../physics/cross-section';
 import { wideBandLogarithm } from '../physics/laminate';
+import { show } from '../quantity/show';
 import { type Layering, seriesPermittivity } from './computed-line';
 import { heldWidth } from './cross-sections';
 import { type Copper, copperIndex, heightOf, layeringOf, type Slice, sideOf, type TraceSide } from './stackup';
@@ -62,7 +63,7 @@ export function surroundings(
 
 /**
  * The cross-section of a trace at Nyquist's dielectric constants: as written, or with the width that gives the written impedance.
- * @returns undefined where neither is written or no width gives it (then with a note)
+ * @returns undefined where neither is written; where no width gives the impedance the nearest one, with a note
  */
 export function geometryOf(
   element: Element<'trace'>,
@@ -78,16 +79,16 @@ export function geometryOf(
     return { ...rest, widthMeters: width.value, ...(pair && { gapMeters: gap?.value ?? GAP_IN_WIDTHS * width.value }) };
   }
   if (!impedance) return undefined;
-  const widthMeters = heldWidth({ geometry: rest, pair, ohms: impedance.value });
-  if (widthMeters === undefined) {
+  const { widthMeters, impedanceOhms } = heldWidth({ geometry: rest, pair, ohms: impedance.value });
+  if (Math.abs(impedanceOhms / impedance.value - 1) > 1e-6) {
+    const gap = pair ? ' with a gap of 1.5 widths' : '';
     notes.push(
       rangeNote(
         element,
-        `No width on ${element.layer} gives ${impedance.text}: the line is computed as declared, without copper.`,
+        `No width on ${element.layer}${gap} gives ${show.impedance(impedance.value)}: ${show.impedance(impedanceOhms)} is the nearest, and its copper is taken. Write width and gap.`,
         'impedance',
       ),
     );
-    return undefined;
   }
   return { ...rest, widthMeters, ...(pair && { gapMeters: GAP_IN_WIDTHS * widthMeters }) };
 }

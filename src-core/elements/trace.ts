@@ -8,7 +8,7 @@ import { show } from '../quantity/show';
 import { type ComputedLine, computedAt, type LineMode } from './computed-line';
 import { heldCrossSection } from './cross-sections';
 import { declaredAt } from './declared-line';
-import { declaredFacts, declaredLine, declaredSegment, legOhms, skewOf } from './declared-segment';
+import { declaredFacts, declaredLine, declaredSegment, skewOf } from './declared-segment';
 import { type Line, lineNetwork } from './line';
 import { type Copper, layeringOf } from './stackup';
 import { geometryEnds, geometryOf, placeOf, type TracePlace } from './trace-geometry';
@@ -50,18 +50,18 @@ function fromGeometry(
   notes: ElementNote[],
 ): Prepared<Line> {
   const section = heldCrossSection(geometry);
-  const computed = slowed(computedLine(trace, place, geometry, section, model), trace, section);
   const { values } = trace;
-  const at = computedAt(computed, 'odd', model.nyquistFrequency);
   const pair = isPair(model);
+  const legs = legsOf(trace, section, pair);
+  const computed = asWritten(computedLine(trace, place, geometry, section, model), trace, section, legs);
+  const at = computedAt(computed, 'odd', model.nyquistFrequency);
   const lengthMeters = values.length?.value ?? 0;
   const skewSeconds = pair ? skewOf(values, at.delaySeconds / (lengthMeters || 1)) : 0;
-  const impedanceOhms = pair ? 2 * section.odd.impedanceOhms : section.odd.impedanceOhms;
   const line: Line = values.loss
-    ? declaredLoss(trace, impedanceOhms, section, computed, skewSeconds, model)
+    ? declaredLoss(trace, legs, computed, skewSeconds, model)
     : { ...computed, skewSeconds };
-  notes.push(...geometryNotes(trace, place, section, impedanceOhms));
-  return { parameters: line, facts: factsOf(trace, place, geometry, section, line, impedanceOhms, model), notes };
+  notes.push(...geometryNotes(trace, place, section, pair ? 2 * legs.odd : legs.odd));
+  return { parameters: line, facts: factsOf(trace, place, geometry, section, line, legs, model), notes };
 }
 
 const surfaceOf = ({ foil }: Copper, model: Model): Surface => ({
@@ -101,24 +101,38 @@ function computedLine(
   };
 }
 
-/** The same line where `delay`, `velocity` or `dk` say how fast it is: slower or faster, at the same impedance. */
-function slowed(line: ComputedLine, { values }: Element<'trace'>, { odd }: CrossSection): ComputedLine {
+/** One leg's impedances: the geometry's, or those that are written: without a width, `impedance`; `common-impedance` always. */
+function legsOf(
+  { values }: Element<'trace'>,
+  { odd, even }: CrossSection,
+  pair: boolean,
+): { odd: number; even: number } {
+  const { impedance, width, 'common-impedance': common } = values;
+  const declared = impedance && !width ? impedance.value / (pair ? 2 : 1) : odd.impedanceOhms;
+  return { odd: declared, even: !pair ? declared : common ? 2 * common.value : even.impedanceOhms };
+}
+
+/** The same line as fast as `delay`, `velocity` or `dk` say, where they do, and with the legs' impedances: copper stays as it is. */
+function asWritten(
+  line: ComputedLine,
+  { values }: Element<'trace'>,
+  section: CrossSection,
+  legs: { odd: number; even: number },
+): ComputedLine {
   const written = values.loss ? undefined : writtenDelay(values);
-  if (written === undefined) return line;
-  const ratio = (written * SPEED_OF_LIGHT) / Math.sqrt(odd.effectiveDk);
-  const mode = (one: LineMode) => ({
-    ...one,
-    inductance: one.inductance * ratio,
-    capacitance: one.capacitance * ratio,
-  });
-  return { ...line, odd: mode(line.odd), even: mode(line.even) };
+  const slower = written === undefined ? 1 : (written * SPEED_OF_LIGHT) / Math.sqrt(section.odd.effectiveDk);
+  const mode = (which: 'odd' | 'even') => {
+    const higher = legs[which] / section[which].impedanceOhms;
+    const { inductance, capacitance } = line[which];
+    return { ...line[which], inductance: inductance * slower * higher, capacitance: (capacitance * slower) / higher };
+  };
+  return { ...line, odd: mode('odd'), even: mode('even') };
 }
 
 /** A declared loss in place of copper and laminate; impedances and, where none is written, delay stay the geometry's. */
 function declaredLoss(
   { values }: Element<'trace'>,
-  impedanceOhms: number,
-  { even }: CrossSection,
+  legs: { odd: number; even: number },
   computed: ComputedLine,
   skewSeconds: number,
   model: Model,
@@ -126,11 +140,9 @@ function declaredLoss(
   const points = lossPoints(values.loss ?? [], model, computed.lengthMeters);
   const written = writtenDelay(values);
   const hz = frequencyOf(values.dk) ?? Math.max(...points.map((point) => point.hz));
-  const legs = legOhms(values, impedanceOhms, isPair(model));
-  const ownCommon = values['common-impedance'] === undefined && computed.odd !== computed.even;
   return declaredLine({
-    oddOhms: legs.oddOhms,
-    evenOhms: ownCommon ? even.impedanceOhms : legs.evenOhms,
+    oddOhms: legs.odd,
+    evenOhms: legs.even,
     points,
     skinShare: values['skin-share']?.value ?? SKIN_SHARE.trace,
     delaySeconds:
@@ -146,7 +158,7 @@ function factsOf(
   geometry: TraceGeometry,
   section: CrossSection,
   line: Line,
-  impedanceOhms: number,
+  legs: { odd: number; even: number },
   model: Model,
 ): ElementFacts {
   const { impedance, width } = trace.values;
@@ -156,8 +168,8 @@ function factsOf(
   const { delaySeconds } = line.model === 'declared' ? declaredAt(line, hz) : computedAt(line, 'odd', hz);
   return {
     lengthMeters: trace.values.length?.value,
-    impedanceOhms,
-    commonImpedanceOhms: pair ? section.even.impedanceOhms / 2 : undefined,
+    impedanceOhms: pair ? 2 * legs.odd : legs.odd,
+    commonImpedanceOhms: pair ? legs.even / 2 : undefined,
     impedanceRangeOhms:
       ends.length > 0
         ? [Math.min(...ends), Math.max(...ends)]

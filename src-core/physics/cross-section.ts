@@ -210,13 +210,14 @@ const WIDTH_STEP = 0.1;
  * is bracketed from there.
  * @param geometry without width and gap
  * @param ohms of the pair (twice the odd mode's), or of the single strip
- * @returns undefined if no width from a fiftieth to fifty times the nearest plane's distance gives it
+ * @returns the width, and the impedance that it gives: not `ohms` only where no width from a fiftieth to fifty times the nearest
+ * plane's distance gives those; then the nearest
  */
 export function widthForImpedance(
   geometry: Omit<TraceGeometry, 'widthMeters' | 'gapMeters'>,
   pair: boolean,
   ohms: number,
-): number | undefined {
+): { readonly widthMeters: number; readonly impedanceOhms: number } {
   const legOhms = pair ? ohms / 2 : ohms;
   const height = Math.min(geometry.lower.heightMeters, geometry.upper?.heightMeters ?? Number.POSITIVE_INFINITY);
   const excess = (logWidth: number) => {
@@ -227,17 +228,21 @@ export function widthForImpedance(
     );
   };
   // Of a pair narrower than its copper is thick the flanks face each other and the impedance falls again: the wider root is meant.
+  const result = (logWidth: number, off: number) => ({
+    widthMeters: height * Math.exp(logWidth),
+    impedanceOhms: (pair ? 2 : 1) * (legOhms + off),
+  });
   const narrowest = Math.log(0.02);
   let wide = Math.log(50);
   let atWide = excess(wide);
-  if (!(atWide < 0)) return undefined;
+  if (!(atWide < 0)) return result(wide, atWide);
   let narrow = 0; // as wide as high: most roots lie close below
   let atNarrow = excess(narrow);
   while (!(atNarrow > 0)) {
-    if (narrow <= narrowest) return undefined;
-    [wide, atWide] = [narrow, atNarrow];
-    narrow = Math.max(narrowest, narrow - WIDTH_STEP);
-    atNarrow = excess(narrow);
+    const next = Math.max(narrowest, narrow - WIDTH_STEP);
+    const atNext = excess(next);
+    if (next === narrow || !(atNext > atNarrow)) return result(narrow, atNarrow);
+    [wide, atWide, narrow, atNarrow] = [narrow, atNarrow, next, atNext];
   }
-  return height * Math.exp(findRoot(excess, narrow, wide, atNarrow, atWide));
+  return result(findRoot(excess, narrow, wide, atNarrow, atWide), 0);
 }
