@@ -1,8 +1,9 @@
 // Builds everything that ships, and with --tests what the editor's suites load. Used by every other script.
-import { build } from 'esbuild';
+
 import { cpSync, existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { build } from 'esbuild';
 
 const here = dirname(fileURLToPath(import.meta.url));
 const at = (path) => join(here, path);
@@ -22,22 +23,60 @@ const common = {
 const node = { ...common, platform: 'node', target: 'node20', mainFields: ['module', 'main'] };
 const browser = { ...common, platform: 'browser', mainFields: ['browser', 'module', 'main'], conditions: ['browser'] };
 // Bundled CommonJS asks for `require`, which an ES module does not have.
-const requireInModules = "import{createRequire as __createRequire}from'node:module';const require=__createRequire(import.meta.url);";
+const requireInModules =
+  "import{createRequire as __createRequire}from'node:module';const require=__createRequire(import.meta.url);";
 
 /** Bundles one of our TypeScript files to an ES module that Node runs, for fuzz and bench. */
-export const bundleForNode = (entry, outfile) => build({ ...node, minify: false, entryPoints: [entry], outfile, format: 'esm', banner: { js: requireInModules } });
+export const bundleForNode = (entry, outfile) =>
+  build({ ...node, minify: false, entryPoints: [entry], outfile, format: 'esm', banner: { js: requireInModules } });
 
 const shipped = [
-  { ...node, entryPoints: ['client/extension/node.ts'], outfile: 'dist/extension.cjs', format: 'cjs', external: ['vscode'] },
-  { ...browser, entryPoints: ['client/extension/browser.ts'], outfile: 'dist/browser-extension.js', format: 'cjs', external: ['vscode'] },
+  {
+    ...node,
+    entryPoints: ['client/extension/node.ts'],
+    outfile: 'dist/extension.cjs',
+    format: 'cjs',
+    external: ['vscode'],
+  },
+  {
+    ...browser,
+    entryPoints: ['client/extension/browser.ts'],
+    outfile: 'dist/browser-extension.js',
+    format: 'cjs',
+    external: ['vscode'],
+  },
   { ...node, entryPoints: ['server/node.ts'], outfile: 'dist/server.cjs', format: 'cjs' },
   { ...browser, entryPoints: ['server/browser.ts'], outfile: 'dist/browser-server.js', format: 'iife' },
-  { ...node, entryPoints: { lanewright: 'client/cli/main.ts' }, outdir: 'dist', format: 'esm', splitting: true, outExtension: { '.js': '.mjs' }, chunkNames: 'cli-[name]-[hash]', banner: { js: requireInModules } },
+  {
+    ...node,
+    entryPoints: { lanewright: 'client/cli/main.ts' },
+    outdir: 'dist',
+    format: 'esm',
+    splitting: true,
+    outExtension: { '.js': '.mjs' },
+    chunkNames: 'cli-[name]-[hash]',
+    banner: { js: requireInModules },
+  },
   { ...browser, entryPoints: ['client/preview/page.ts'], outfile: 'dist/preview.js', format: 'iife' },
 ];
 const forTests = [
-  { ...node, minify: false, entryPoints: { suite: 'test/editor/suite/node.ts' }, outdir: 'dist/test', format: 'cjs', outExtension: { '.js': '.cjs' }, external: ['vscode', 'mocha'] },
-  { ...browser, minify: false, entryPoints: { 'suite-browser': 'test/editor/suite/browser.ts' }, outdir: 'dist/test', format: 'cjs', external: ['vscode'] },
+  {
+    ...node,
+    minify: false,
+    entryPoints: { suite: 'test/editor/suite/node.ts' },
+    outdir: 'dist/test',
+    format: 'cjs',
+    outExtension: { '.js': '.cjs' },
+    external: ['vscode', 'mocha'],
+  },
+  {
+    ...browser,
+    minify: false,
+    entryPoints: { 'suite-browser': 'test/editor/suite/browser.ts' },
+    outdir: 'dist/test',
+    format: 'cjs',
+    external: ['vscode'],
+  },
 ];
 
 /** @param {{ tests?: boolean }} options @returns the metafiles by what they describe, for the size gate */
@@ -48,7 +87,10 @@ export async function buildAll({ tests = false } = {}) {
   const wanted = [...shipped, ...(tests ? forTests : [])];
   const results = await Promise.all(wanted.map((options) => build(options)));
   cpSync(at('client/preview/page.css'), at('dist/preview.css'));
-  for (const [from, to] of [['src-core/rules/README.md', 'rules.md'], ['schemas/README.md', 'format.md']]) {
+  for (const [from, to] of [
+    ['src-core/rules/README.md', 'rules.md'],
+    ['schemas/README.md', 'format.md'],
+  ]) {
     if (existsSync(at(from))) cpSync(at(from), at(`dist/${to}`));
   }
   return results.map((result) => result.metafile);

@@ -16,10 +16,13 @@ export function run(command, args, options = {}) {
 
 /** Installs the locked packages if they are missing or the lock file changed. */
 export function install() {
-  const lock = createHash('sha256').update(readFileSync(join(here, 'package-lock.json'))).digest('hex');
+  const lock = createHash('sha256')
+    .update(readFileSync(join(here, 'package-lock.json')))
+    .digest('hex');
   if (existsSync(stamp) && readFileSync(stamp, 'utf8') === lock) return;
   console.error('Installing packages …');
-  if (run('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error']) !== 0) throw new Error('`npm ci` failed; its output is above.');
+  if (run('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error']) !== 0)
+    throw new Error('`npm ci` failed; its output is above.');
   writeFileSync(stamp, lock);
 }
 
@@ -40,7 +43,8 @@ async function demo() {
   if (status === 2) throw new Error('`lanewright check` could not be carried out; its message is above.');
   mkdirSync(join(here, 'dist', 'demo'), { recursive: true });
   const report = join(here, 'dist', 'demo', 'camera-sled.html');
-  if (lanewright('report', 'examples/lanes/camera-sled.channel.yaml', '--format', 'html', '--output', report) > 1) throw new Error('The report could not be written.');
+  if (lanewright('report', 'examples/lanes/camera-sled.channel.yaml', '--format', 'html', '--output', report) > 1)
+    throw new Error('The report could not be written.');
   console.log(`\nReport with pictures: ${report}`);
 }
 

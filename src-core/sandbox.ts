@@ -23,12 +23,18 @@ export const TOUCHSTONE_LIMIT_BYTES = 64 * MEBIBYTE;
 export function sandboxedFiles(root: string, disk: Disk): Files {
   const { separator } = disk;
   const realRoot = disk.realPath(root);
-  const inside = (path: string, folder: string) => path === folder || path.startsWith(folder.endsWith(separator) ? folder : folder + separator);
+  const inside = (path: string, folder: string) =>
+    path === folder || path.startsWith(folder.endsWith(separator) ? folder : folder + separator);
 
   return {
     async read(file: FilePath): Promise<FileContent> {
       const steps = file.split('/');
-      if (file === '' || steps.some((step) => step === '' || step === '.' || step === '..' || step.includes('\0') || step.includes(separator))) {
+      if (
+        file === '' ||
+        steps.some(
+          (step) => step === '' || step === '.' || step === '..' || step.includes('\0') || step.includes(separator),
+        )
+      ) {
         return { kind: 'refused', reason: `\`${file}\` is not a path inside the folder that is open` };
       }
       const folder = await realRoot;
@@ -36,7 +42,11 @@ export function sandboxedFiles(root: string, disk: Disk): Files {
       const path = root + (root.endsWith(separator) ? '' : separator) + steps.join(separator);
       const real = await disk.realPath(path);
       if (real === undefined) return { kind: 'missing' };
-      if (!inside(real, folder)) return { kind: 'refused', reason: `\`${file}\` is a link that leads out of the folder that is open; it was not read` };
+      if (!inside(real, folder))
+        return {
+          kind: 'refused',
+          reason: `\`${file}\` is a link that leads out of the folder that is open; it was not read`,
+        };
       const status = await disk.status(real);
       if (!status) return { kind: 'missing' };
       if (status.kind !== 'file') return { kind: 'refused', reason: `\`${file}\` is not a file` };

@@ -33,13 +33,17 @@ function line(impedance, delay, loss, frequency) {
 }
 
 const chain = ([a, b, c, d], [e, f, g, h]) => [
-  add(multiply(a, e), multiply(b, g)), add(multiply(a, f), multiply(b, h)),
-  add(multiply(c, e), multiply(d, g)), add(multiply(c, f), multiply(d, h)),
+  add(multiply(a, e), multiply(b, g)),
+  add(multiply(a, f), multiply(b, h)),
+  add(multiply(c, e), multiply(d, g)),
+  add(multiply(c, f), multiply(d, h)),
 ];
 
 /** S11, S21 and S22 of one mode; each mode's own reference is that of a leg. */
 function mode(which, frequency) {
-  const [a, b, c, d] = sections.map((section) => line(section[which], section.delay, section.loss, frequency)).reduce(chain);
+  const [a, b, c, d] = sections
+    .map((section) => line(section[which], section.delay, section.loss, frequency))
+    .reduce(chain);
   const bz = scale(1 / REFERENCE, b);
   const cz = scale(REFERENCE, c);
   const sum = add(add(a, bz), add(cz, d));
@@ -75,7 +79,9 @@ const lines = [
 for (let index = 0; index * STEP_HZ <= LAST_HZ; index++) {
   const frequency = index * STEP_HZ;
   fourPort(frequency).forEach((row, i) => {
-    lines.push(`${i === 0 ? (frequency / 1e9).toFixed(2) : ' '} ${row.map(([re, im]) => `${number(re)} ${number(im)}`).join('  ')}`);
+    lines.push(
+      `${i === 0 ? (frequency / 1e9).toFixed(2) : ' '} ${row.map(([re, im]) => `${number(re)} ${number(im)}`).join('  ')}`,
+    );
   });
 }
 const text = `${lines.join('\n')}\n`;

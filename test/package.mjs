@@ -13,15 +13,31 @@ export async function makePackage({ build = true } = {}) {
   const metafiles = build ? await setUp() : [];
   const { version } = JSON.parse(readFileSync(join(root, 'package.json'), 'utf8'));
   const file = join(root, 'dist', `lanewright-${version}.vsix`);
-  const status = run(join(root, 'node_modules', '.bin', 'vsce'), ['package', '--no-dependencies', '--allow-missing-repository', '--no-rewrite-relative-links', '--skip-license', '--out', file], { stdio: ['ignore', 'ignore', 'inherit'] });
+  const status = run(
+    join(root, 'node_modules', '.bin', 'vsce'),
+    [
+      'package',
+      '--no-dependencies',
+      '--allow-missing-repository',
+      '--no-rewrite-relative-links',
+      '--skip-license',
+      '--out',
+      file,
+    ],
+    { stdio: ['ignore', 'ignore', 'inherit'] },
+  );
   if (status !== 0) throw new Error('The package could not be made; the message is above.');
   const { size } = statSync(file);
   console.log(`${file}: ${(size / 1000).toFixed(0)} kB of ${(LIMIT_BYTES / 1000).toFixed(0)} kB`);
   if (size > LIMIT_BYTES) {
     for (const metafile of metafiles) {
       for (const [output, { bytes, inputs }] of Object.entries(metafile.outputs)) {
-        const largest = Object.entries(inputs).sort(([, a], [, b]) => b.bytesInOutput - a.bytesInOutput).slice(0, 10);
-        console.error(`${output} ${bytes}\n${largest.map(([input, part]) => `  ${part.bytesInOutput} ${input}`).join('\n')}`);
+        const largest = Object.entries(inputs)
+          .sort(([, a], [, b]) => b.bytesInOutput - a.bytesInOutput)
+          .slice(0, 10);
+        console.error(
+          `${output} ${bytes}\n${largest.map(([input, part]) => `  ${part.bytesInOutput} ${input}`).join('\n')}`,
+        );
       }
     }
     throw new Error('The package is larger than its limit.');

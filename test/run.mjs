@@ -10,7 +10,11 @@ const results = join(root, 'test-results');
 
 function run(command, args, environment = {}) {
   return new Promise((resolve) => {
-    const child = spawn(command, args, { cwd: root, stdio: ['ignore', 'inherit', 'inherit'], env: { ...process.env, ...environment } });
+    const child = spawn(command, args, {
+      cwd: root,
+      stdio: ['ignore', 'inherit', 'inherit'],
+      env: { ...process.env, ...environment },
+    });
     child.on('error', (error) => {
       console.error(error.message);
       resolve(1);
@@ -56,7 +60,16 @@ async function main() {
     asOne('format and lint', bin('biome'), ['check', '--error-on-warnings', '.']),
     asOne('types', bin('tsc'), ['--noEmit', '-p', '.']),
     asOne('generated references are fresh', process.execPath, ['schemas/build.mjs', '--check']),
-    counted('unit, protocol, command line, preview', 'vitest.json', bin('vitest'), ['run', '--reporter=default', '--reporter=json', '--outputFile.json=test-results/vitest.json'], (json) => ({ passed: json.numPassedTests, failed: json.numFailedTests + (json.numFailedTestSuites && !json.numFailedTests ? json.numFailedTestSuites : 0) })),
+    counted(
+      'unit, protocol, command line, preview',
+      'vitest.json',
+      bin('vitest'),
+      ['run', '--reporter=default', '--reporter=json', '--outputFile.json=test-results/vitest.json'],
+      (json) => ({
+        passed: json.numPassedTests,
+        failed: json.numFailedTests + (json.numFailedTestSuites && !json.numFailedTests ? json.numFailedTestSuites : 0),
+      }),
+    ),
     counted('real editor', 'editor.json', process.execPath, ['test/editor/run.mjs'], (json) => json),
   ];
   let passed = 0;

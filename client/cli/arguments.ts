@@ -16,17 +16,30 @@ export function readArguments(command: Command, args: readonly string[]): { path
     allowPositionals: true,
     tokens: true,
     options: Object.fromEntries(
-      table.map((option) => [option.name, { type: option.value ? ('string' as const) : ('boolean' as const), ...(option.short && { short: option.short }), ...(option.multiple && { multiple: true }) }]),
+      table.map((option) => [
+        option.name,
+        {
+          type: option.value ? ('string' as const) : ('boolean' as const),
+          ...(option.short && { short: option.short }),
+          ...(option.multiple && { multiple: true }),
+        },
+      ]),
     ),
   });
   for (const token of tokens) {
     if (token.kind !== 'option') continue;
     const option = table.find(({ name }) => name === token.name);
     if (!option) {
-      const near = nearest(token.name, table.map(({ name }) => name));
-      throw new Refusal(`\`${token.rawName}\` is not an option of \`lanewright ${command.name}\`${near ? `; did you mean \`--${near}\`?` : ''} See \`lanewright ${command.name} --help\`.`);
+      const near = nearest(
+        token.name,
+        table.map(({ name }) => name),
+      );
+      throw new Refusal(
+        `\`${token.rawName}\` is not an option of \`lanewright ${command.name}\`${near ? `; did you mean \`--${near}\`?` : ''} See \`lanewright ${command.name} --help\`.`,
+      );
     }
-    if (option.value && token.value === undefined) throw new Refusal(`\`--${option.name}\` wants a value: \`--${option.name} ${option.value}\`.`);
+    if (option.value && token.value === undefined)
+      throw new Refusal(`\`--${option.name}\` wants a value: \`--${option.name} ${option.value}\`.`);
     if (!option.value && token.value !== undefined) throw new Refusal(`\`--${option.name}\` takes no value.`);
     if (option.choices && token.value !== undefined && !option.choices.includes(choiceOf(token.value))) {
       throw new Refusal(`\`${token.value}\` is not a choice of \`--${option.name}\`: ${option.choices.join(', ')}.`);

@@ -1,5 +1,6 @@
 import { analyse } from '../../src-core/analyse';
 import type { Analysis } from '../../src-core/analysis';
+import type { Finding } from '../../src-core/rules/types';
 import type { FileContent, FilePath } from '../../src-core/text/types';
 import { type Command, Refusal } from './command';
 import { findFiles, openWorkspace, type Workspace } from './files';
@@ -22,13 +23,36 @@ export const check: Command = {
   summary: 'Findings and a one-line verdict for each channel.',
   arguments: '[FILES|FOLDERS|-]',
   options: [
-    { name: 'format', short: 'f', value: 'FORMAT[=FILE]', choices: Object.keys(printers), multiple: true, help: 'How to print; may be given several times, each with a file of its own. Default: text.' },
-    { name: 'fail-on', value: 'LEVEL', choices: [...LEVELS, 'never'], help: 'The least severity that makes the status 1. Default: error.' },
-    { name: 'stdin-filename', value: 'FILE', help: 'The name under which the text on standard input (`-`) is checked; paths in it are relative to this file.' },
+    {
+      name: 'format',
+      short: 'f',
+      value: 'FORMAT[=FILE]',
+      choices: Object.keys(printers),
+      multiple: true,
+      help: 'How to print; may be given several times, each with a file of its own. Default: text.',
+    },
+    {
+      name: 'fail-on',
+      value: 'LEVEL',
+      choices: [...LEVELS, 'never'],
+      help: 'The least severity that makes the status 1. Default: error.',
+    },
+    {
+      name: 'stdin-filename',
+      value: 'FILE',
+      help: 'The name under which the text on standard input (`-`) is checked; paths in it are relative to this file.',
+    },
     { name: 'fix', help: 'Apply the safe fixes: spelling, units, dead waivers.' },
-    { name: 'unsafe-fixes', help: 'With --fix or --diff: also the computed design changes, the preferred one of each finding.' },
+    {
+      name: 'unsafe-fixes',
+      help: 'With --fix or --diff: also the computed design changes, the preferred one of each finding.',
+    },
     { name: 'diff', help: 'Show what --fix would change; write nothing.' },
-    { name: 'add-waivers', value: 'BY', help: 'Accept every present finding by a waiver in the name of BY, to adopt an old repository. Needs --until and --reason.' },
+    {
+      name: 'add-waivers',
+      value: 'BY',
+      help: 'Accept every present finding by a waiver in the name of BY, to adopt an old repository. Needs --until and --reason.',
+    },
     { name: 'until', value: 'YYYY-MM-DD', help: 'Last day of the waivers that --add-waivers writes.' },
     { name: 'reason', value: 'TEXT', help: 'Reason of the waivers that --add-waivers writes.' },
     { name: 'quiet', short: 'q', help: 'Tell errors alone.' },
@@ -50,17 +74,27 @@ export const check: Command = {
     const print = openPrinters(options, workspace, terminal);
     const progress = startProgress(terminal, files.length, 'files');
     const failOn = typeof options['fail-on'] === 'string' ? options['fail-on'] : 'error';
-    const failing = failOn === 'never' ? new Set<string>() : new Set<string>(LEVELS.slice(0, LEVELS.indexOf(failOn as (typeof LEVELS)[number]) + 1));
+    const failing =
+      failOn === 'never'
+        ? new Set<string>()
+        : new Set<string>(LEVELS.slice(0, LEVELS.indexOf(failOn as (typeof LEVELS)[number]) + 1));
     const total: Record<string, number> = {};
+    const told = eachOnce(files);
     let failed = false;
     let timedOut = false;
     let previous: Analysis | undefined;
     for (const [index, file] of files.entries()) {
       const inputs = await inputsFor(workspace, file, options);
       let analysis = analyse(inputs, previous, { until: 'link', outOfTime: fiveSeconds() });
-      analysis = await fixFile(analysis, { workspace, options, terminal, analyseAgain: async () => analyse(await inputsFor(workspace, file, options), undefined, { until: 'link' }) });
-      print.file(analysis);
-      failed ||= analysis.findings.some(({ severity, waivedBy }) => !waivedBy && failing.has(severity));
+      analysis = await fixFile(analysis, {
+        workspace,
+        options,
+        terminal,
+        analyseAgain: async () => analyse(await inputsFor(workspace, file, options), undefined, { until: 'link' }),
+      });
+      const shown = told.once(analysis);
+      print.file(shown);
+      failed ||= shown.findings.some(({ severity, waivedBy }) => !waivedBy && failing.has(severity));
       timedOut ||= analysis.timedOut ?? false;
       for (const [stage, count] of Object.entries(analysis.computed)) total[stage] = (total[stage] ?? 0) + count;
       previous = analysis;
@@ -73,33 +107,66 @@ export const check: Command = {
   },
 };
 
+/**
+ * A channel's analysis also holds what is wrong in the parts files that it uses. Each such finding is told once: with its own file
+ * if that is checked too, else with the first channel that meets it.
+ */
+function eachOnce(files: readonly FilePath[]) {
+  const checked = new Set(files);
+  const told = new Set<string>();
+  const isNew = ({ at, rule, message }: Finding) => {
+    const key = JSON.stringify([at, rule, message]);
+    return !told.has(key) && Boolean(told.add(key));
+  };
+  return {
+    once: (analysis: Analysis): Analysis => ({
+      ...analysis,
+      findings: analysis.findings.filter(
+        (finding) => finding.at.file === analysis.inputs.file || (!checked.has(finding.at.file) && isNew(finding)),
+      ),
+    }),
+  };
+}
+
 /** design section 8: five seconds for one file */
 function fiveSeconds(): () => boolean {
   const end = performance.now() + 5000;
   return () => performance.now() > end;
 }
 
-async function readStdin(paths: readonly string[], options: Readonly<Record<string, unknown>>, read: () => Promise<string>) {
+async function readStdin(
+  paths: readonly string[],
+  options: Readonly<Record<string, unknown>>,
+  read: () => Promise<string>,
+) {
   const name = options['stdin-filename'];
   if (!paths.includes('-')) {
     if (name !== undefined) throw new Refusal('`--stdin-filename` goes with `-`, the text on standard input.');
     return undefined;
   }
   if (paths.length > 1) throw new Refusal('`-` stands alone: the text on standard input is one file.');
-  if (typeof name !== 'string') throw new Refusal('`-` needs `--stdin-filename FILE`, so that paths in it can be found.');
+  if (typeof name !== 'string')
+    throw new Refusal('`-` needs `--stdin-filename FILE`, so that paths in it can be found.');
   const content: FileContent = { kind: 'text', text: await read() };
   const workspace = openWorkspace(options as { root?: string });
   return { path: name, overlay: new Map<FilePath, FileContent>([[workspace.toFilePath(name), content]]) };
 }
 
 /** One printer a `--format`, each to its own file or to stdout. @throws Refusal where two would share stdout */
-function openPrinters(options: Readonly<Record<string, unknown>>, workspace: Workspace, terminal: Parameters<Command['run']>[0]['terminal']): { file: Printer['file']; end(): Promise<void> } {
+function openPrinters(
+  options: Readonly<Record<string, unknown>>,
+  workspace: Workspace,
+  terminal: Parameters<Command['run']>[0]['terminal'],
+): { file: Printer['file']; end(): Promise<void> } {
   const wanted = (options.format as readonly string[] | undefined) ?? ['text'];
   const targets = wanted.map((choice) => {
     const [name, ...rest] = choice.split('=');
     return { name, path: rest.length ? rest.join('=') : undefined, chunks: [] as string[] };
   });
-  if (targets.filter(({ path }) => path === undefined).length > 1) throw new Refusal('Only one `--format` can go to standard output; give the others a file: `--format json=out.json`.');
+  if (targets.filter(({ path }) => path === undefined).length > 1)
+    throw new Refusal(
+      'Only one `--format` can go to standard output; give the others a file: `--format json=out.json`.',
+    );
   const open = targets.map((target) => ({
     ...target,
     printer: printers[target.name]({

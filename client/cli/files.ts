@@ -25,7 +25,10 @@ function workTree(from: string): string | undefined {
   }
 }
 
-export function openWorkspace({ root: wanted }: OptionValues, overlay: ReadonlyMap<FilePath, FileContent> = new Map()): Workspace {
+export function openWorkspace(
+  { root: wanted }: OptionValues,
+  overlay: ReadonlyMap<FilePath, FileContent> = new Map(),
+): Workspace {
   const root = typeof wanted === 'string' ? resolve(wanted) : (workTree(process.cwd()) ?? process.cwd());
   if (!existsSync(root)) throw new Refusal(`The folder \`${root}\` is not there.`);
   const disk = sandboxedFiles(root, nodeDisk);
@@ -34,11 +37,15 @@ export function openWorkspace({ root: wanted }: OptionValues, overlay: ReadonlyM
     files: { read: async (file) => overlay.get(file) ?? disk.read(file) },
     toFilePath(path) {
       const inside = relative(root, resolve(path));
-      if (inside.startsWith('..') || isAbsolute(inside)) throw new Refusal(`\`${path}\` lies outside \`${root}\`; name a wider folder with --root.`);
+      if (inside.startsWith('..') || isAbsolute(inside))
+        throw new Refusal(`\`${path}\` lies outside \`${root}\`; name a wider folder with --root.`);
       return inside.split(sep).join('/');
     },
     toDisk: (file) => join(root, ...file.split('/')),
-    shown: (file) => relative(process.cwd(), join(root, ...file.split('/'))).split(sep).join('/'),
+    shown: (file) =>
+      relative(process.cwd(), join(root, ...file.split('/')))
+        .split(sep)
+        .join('/'),
   };
 }
 
@@ -52,7 +59,8 @@ export async function findFiles(workspace: Workspace, paths: readonly string[]):
   const found = new Set<FilePath>();
   for (const path of paths.length ? paths : ['.']) {
     const matches = await matchesOf(path);
-    if (matches === undefined) throw new Refusal(`\`${path}\` means no file: there is no such file or folder, and no file matches it.`);
+    if (matches === undefined)
+      throw new Refusal(`\`${path}\` means no file: there is no such file or folder, and no file matches it.`);
     for (const match of matches) found.add(workspace.toFilePath(match));
   }
   return [...found].sort();
@@ -61,9 +69,18 @@ export async function findFiles(workspace: Workspace, paths: readonly string[]):
 async function matchesOf(path: string): Promise<string[] | undefined> {
   if (existsSync(path)) {
     if (!statSync(path).isDirectory()) return [path];
-    const below = await glob(OURS, { cwd: path, dot: false, ignore: ['**/node_modules/**'], followSymbolicLinks: false });
+    const below = await glob(OURS, {
+      cwd: path,
+      dot: false,
+      ignore: ['**/node_modules/**'],
+      followSymbolicLinks: false,
+    });
     return below.map((file) => join(path, file));
   }
-  const matched = await glob(path.split(sep).join('/'), { dot: false, ignore: ['**/node_modules/**'], followSymbolicLinks: false });
+  const matched = await glob(path.split(sep).join('/'), {
+    dot: false,
+    ignore: ['**/node_modules/**'],
+    followSymbolicLinks: false,
+  });
   return matched.length ? matched : undefined;
 }

@@ -34,7 +34,10 @@ export async function fixFile(analysis: Analysis, context: Context): Promise<Ana
   }
   if (options['add-waivers']) {
     const { 'add-waivers': by, until, reason } = options;
-    if (typeof by !== 'string' || typeof until !== 'string' || typeof reason !== 'string') throw new Refusal('`--add-waivers BY` needs `--until YYYY-MM-DD` and `--reason TEXT`: a waiver without them is none.');
+    if (typeof by !== 'string' || typeof until !== 'string' || typeof reason !== 'string')
+      throw new Refusal(
+        '`--add-waivers BY` needs `--until YYYY-MM-DD` and `--reason TEXT`: a waiver without them is none.',
+      );
     const edits = resolveEdits(addWaivers(current, { by, until, reason }), current.parsed);
     if (edits.length) {
       await write(current, edits, context.workspace);
@@ -58,18 +61,31 @@ function fixEdits(analysis: Analysis, options: OptionValues): TextEdit[] {
     const fix = wantedFix(finding, options['unsafe-fixes'] === true);
     if (!fix) continue;
     const edits = resolveEdits(fix.edits, analysis.parsed);
-    const free = edits.every((edit) => edit.file === analysis.inputs.file && !taken.some((other) => edit.range.start <= other.range.end && other.range.start <= edit.range.end));
+    const free = edits.every(
+      (edit) =>
+        edit.file === analysis.inputs.file &&
+        !taken.some((other) => edit.range.start <= other.range.end && other.range.start <= edit.range.end),
+    );
     if (free) taken.push(...edits);
   }
   return taken.sort((a, b) => a.range.start - b.range.start);
 }
 
-function textsAfter({ parsed }: Analysis, edits: readonly TextEdit[]): Map<FilePath, { before: string; after: string }> {
+function textsAfter(
+  { parsed }: Analysis,
+  edits: readonly TextEdit[],
+): Map<FilePath, { before: string; after: string }> {
   const changed = new Map<FilePath, { before: string; after: string }>();
   for (const file of new Set(edits.map((edit) => edit.file))) {
     const before = parsed.get(file)?.text;
     if (before === undefined) continue;
-    changed.set(file, { before, after: applyEdits(before, edits.filter((edit) => edit.file === file)) });
+    changed.set(file, {
+      before,
+      after: applyEdits(
+        before,
+        edits.filter((edit) => edit.file === file),
+      ),
+    });
   }
   return changed;
 }
@@ -88,7 +104,12 @@ function diffOf(analysis: Analysis, edits: readonly TextEdit[], workspace: Works
     let top = 0;
     while (top < old.length && top < fresh.length && old[top] === fresh[top]) top++;
     let bottom = 0;
-    while (bottom < old.length - top && bottom < fresh.length - top && old[old.length - 1 - bottom] === fresh[fresh.length - 1 - bottom]) bottom++;
+    while (
+      bottom < old.length - top &&
+      bottom < fresh.length - top &&
+      old[old.length - 1 - bottom] === fresh[fresh.length - 1 - bottom]
+    )
+      bottom++;
     const gone = old.slice(top, old.length - bottom);
     const come = fresh.slice(top, fresh.length - bottom);
     output += `@@ -${top + 1},${gone.length} +${top + 1},${come.length} @@\n${gone.map((line) => `-${line}\n`).join('')}${come.map((line) => `+${line}\n`).join('')}`;

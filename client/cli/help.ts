@@ -20,7 +20,12 @@ const heading = ({ short, name, value }: Option) => `${short ? `-${short}, ` : '
 
 function rows(pairs: readonly (readonly [string, string])[]): string {
   const column = Math.min(30, Math.max(...pairs.map(([left]) => left.length)) + 4);
-  return pairs.map(([left, right]) => `  ${left.padEnd(column - 2)}${left.length > column - 3 ? `\n${' '.repeat(column)}` : ''}${wrap(right, column)}`).join('\n');
+  return pairs
+    .map(
+      ([left, right]) =>
+        `  ${left.padEnd(column - 2)}${left.length > column - 3 ? `\n${' '.repeat(column)}` : ''}${wrap(right, column)}`,
+    )
+    .join('\n');
 }
 
 const choices = (option: Option) => (option.choices ? ` One of: ${option.choices.join(', ')}.` : '');
@@ -42,16 +47,25 @@ export function commandHelp(command: Command): string {
   ].join('\n');
 }
 
-export function overview(commands: readonly { name: string; summary: string; arguments: string }[], version: string): string {
+export function overview(
+  commands: readonly { name: string; summary: string; arguments: string }[],
+  version: string,
+): string {
   return [
     `lanewright ${version}: high-speed serial channels kept as text, validated and computed.`,
     '',
     'Commands',
     rows(commands.map(({ name, arguments: args, summary }) => [`${name} ${args}`, summary])),
     '',
-    rows([['--version', 'Show the version.'], ['COMMAND --help', 'Show what a command takes.']]),
+    rows([
+      ['--version', 'Show the version.'],
+      ['COMMAND --help', 'Show what a command takes.'],
+    ]),
     '',
-    wrap('Figures are planning estimates. They do not replace a full-wave model, a measurement, or the compliance test of the standard that governs the port.', 0),
+    wrap(
+      'Figures are planning estimates. They do not replace a full-wave model, a measurement, or the compliance test of the standard that governs the port.',
+      0,
+    ),
     '',
   ].join('\n');
 }

@@ -7,12 +7,16 @@ import type { Workspace } from './files';
 /** The inputs of one file under `--config`, `--no-config` and `--date`. */
 export async function inputsFor(workspace: Workspace, file: FilePath, options: OptionValues): Promise<Inputs> {
   const today = typeof options.date === 'string' ? options.date : new Date().toISOString().slice(0, 10);
-  if (!/^\d{4}-\d{2}-\d{2}$/.test(today) || Number.isNaN(Date.parse(today))) throw new Refusal(`\`--date ${today}\` is not a day: write YYYY-MM-DD.`);
+  if (!/^\d{4}-\d{2}-\d{2}$/.test(today) || Number.isNaN(Date.parse(today)))
+    throw new Refusal(`\`--date ${today}\` is not a day: write YYYY-MM-DD.`);
   const inputs = await gatherInputs(workspace.files, file, today);
   if (options['no-config']) return { ...inputs, configFile: undefined };
   if (typeof options.config !== 'string') return inputs;
   const configFile = workspace.toFilePath(options.config);
   const content = await workspace.files.read(configFile);
-  if (content.kind !== 'text') throw new Refusal(`The config file \`${options.config}\` could not be read${content.kind === 'refused' ? `: ${content.reason}` : ''}.`);
+  if (content.kind !== 'text')
+    throw new Refusal(
+      `The config file \`${options.config}\` could not be read${content.kind === 'refused' ? `: ${content.reason}` : ''}.`,
+    );
   return { ...inputs, files: new Map([...inputs.files, [configFile, content]]), configFile };
 }

@@ -5,9 +5,21 @@ declare const LANEWRIGHT_VERSION: string;
 
 /** Loaded when asked for, so that `--version` does not wait for physics and plots. */
 const commands: Record<string, { summary: string; arguments: string; load(): Promise<Command> }> = {
-  check: { arguments: '[FILES|FOLDERS]', summary: 'Findings and a one-line verdict for each channel.', load: () => import('./check').then(({ check }) => check) },
-  curves: { arguments: 'FILE', summary: 'The numbers behind the plots.', load: () => import('./curves').then(({ curves }) => curves) },
-  report: { arguments: 'FILE', summary: 'A page with pictures.', load: () => import('./report').then(({ report }) => report) },
+  check: {
+    arguments: '[FILES|FOLDERS]',
+    summary: 'Findings and a one-line verdict for each channel.',
+    load: () => import('./check').then(({ check }) => check),
+  },
+  curves: {
+    arguments: 'FILE',
+    summary: 'The numbers behind the plots.',
+    load: () => import('./curves').then(({ curves }) => curves),
+  },
+  report: {
+    arguments: 'FILE',
+    summary: 'A page with pictures.',
+    load: () => import('./report').then(({ report }) => report),
+  },
 };
 
 /** NO_COLOR and FORCE_COLOR count when present and not empty; NO_COLOR wins; `--color` stands above both. */
@@ -44,11 +56,21 @@ async function main(args: readonly string[]): Promise<number> {
   if (name === undefined || name === '--help' || name === '-h' || name === 'help') {
     const help = await import('./help');
     const wanted = name === 'help' && rest[0] !== undefined ? commands[rest[0]] : undefined;
-    process.stdout.write(wanted ? help.commandHelp(await wanted.load()) : help.overview(Object.entries(commands).map(([key, value]) => ({ name: key, ...value })), LANEWRIGHT_VERSION));
+    process.stdout.write(
+      wanted
+        ? help.commandHelp(await wanted.load())
+        : help.overview(
+            Object.entries(commands).map(([key, value]) => ({ name: key, ...value })),
+            LANEWRIGHT_VERSION,
+          ),
+    );
     return name === undefined ? 2 : 0;
   }
   const entry = Object.hasOwn(commands, name) ? commands[name] : undefined;
-  if (!entry) throw new Refusal(`\`${name}\` is not a command of lanewright: ${Object.keys(commands).join(', ')}. See \`lanewright --help\`.`);
+  if (!entry)
+    throw new Refusal(
+      `\`${name}\` is not a command of lanewright: ${Object.keys(commands).join(', ')}. See \`lanewright --help\`.`,
+    );
   const command = await entry.load();
   if (rest.includes('--help') || rest.includes('-h')) {
     process.stdout.write((await import('./help')).commandHelp(command));
@@ -71,7 +93,9 @@ main(process.argv.slice(2)).then(
     process.exitCode = status;
   },
   (error: unknown) => {
-    process.stderr.write(`lanewright: ${error instanceof Refusal ? error.message : error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`);
+    process.stderr.write(
+      `lanewright: ${error instanceof Refusal ? error.message : error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`,
+    );
     process.exitCode = 2;
   },
 );

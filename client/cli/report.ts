@@ -19,10 +19,25 @@ export const report: Command = {
   summary: 'A page with pictures: verdict, ledger, limits, findings, plots.',
   arguments: 'FILE',
   options: [
-    { name: 'format', short: 'f', value: 'FORMAT', choices: Object.keys(pages), help: 'How to write it. Default: html.' },
-    { name: 'plot', value: 'NAME', help: 'With --format svg: one plot alone, such as insertion-loss. Default: all, one below the other.' },
+    {
+      name: 'format',
+      short: 'f',
+      value: 'FORMAT',
+      choices: Object.keys(pages),
+      help: 'How to write it. Default: html.',
+    },
+    {
+      name: 'plot',
+      value: 'NAME',
+      help: 'With --format svg: one plot alone, such as insertion-loss. Default: all, one below the other.',
+    },
     { name: 'output', short: 'o', value: 'FILE', help: 'Where to write. Default: standard output.' },
-    { name: 'fail-on', value: 'LEVEL', choices: ['error', 'warning', 'info', 'hint', 'never'], help: 'The least severity that makes the status 1. Default: never: a report is written of any channel.' },
+    {
+      name: 'fail-on',
+      value: 'LEVEL',
+      choices: ['error', 'warning', 'info', 'hint', 'never'],
+      help: 'The least severity that makes the status 1. Default: never: a report is written of any channel.',
+    },
   ],
   examples: [
     ['lanewright report lanes/rx0.channel.yaml -o rx0.html', 'a page of its own, nothing else needed to show it'],
@@ -31,8 +46,13 @@ export const report: Command = {
   async run({ paths, options, terminal }) {
     if (paths.length !== 1) throw new Refusal('`lanewright report` takes one channel file.');
     const workspace = openWorkspace(options);
-    const analysis = analyse(await inputsFor(workspace, workspace.toFilePath(paths[0]), options), undefined, { until: 'link' });
-    const page = await pages[typeof options.format === 'string' ? options.format : 'html'](analysis, typeof options.plot === 'string' ? options.plot : undefined);
+    const analysis = analyse(await inputsFor(workspace, workspace.toFilePath(paths[0]), options), undefined, {
+      until: 'link',
+    });
+    const page = await pages[typeof options.format === 'string' ? options.format : 'html'](
+      analysis,
+      typeof options.plot === 'string' ? options.plot : undefined,
+    );
     if (typeof options.output === 'string') await writeAtomically(options.output, page);
     else terminal.out(page);
     const levels = ['error', 'warning', 'info', 'hint'];

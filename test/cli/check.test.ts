@@ -6,7 +6,8 @@ import type { CheckOutput } from '../../schemas/outputs/check';
 import { emptyFolder, lanewright } from './run';
 
 const SLED = 'examples/lanes/camera-sled.channel.yaml';
-const json = async (...args: string[]): Promise<CheckOutput> => JSON.parse((await lanewright(['check', ...args, '--format', 'json', '--fail-on', 'never'])).stdout);
+const json = async (...args: string[]): Promise<CheckOutput> =>
+  JSON.parse((await lanewright(['check', ...args, '--format', 'json', '--fail-on', 'never'])).stdout);
 const GOOD = readFileSync('examples/lanes/ejector.channel.yaml', 'utf8');
 
 /** A copy of the examples that a test may change. */
@@ -58,7 +59,10 @@ describe('JSON', () => {
   });
   test('is the same in any locale and time zone', async () => {
     const args = ['check', 'examples', '--format', 'json', '--date', '2026-12-01'];
-    const [here, there] = await Promise.all([lanewright(args), lanewright(args, { environment: { LC_ALL: 'tr_TR.UTF-8', LANG: 'tr_TR.UTF-8', TZ: 'Asia/Kolkata' } })]);
+    const [here, there] = await Promise.all([
+      lanewright(args),
+      lanewright(args, { environment: { LC_ALL: 'tr_TR.UTF-8', LANG: 'tr_TR.UTF-8', TZ: 'Asia/Kolkata' } }),
+    ]);
     expect(there.stdout).toBe(here.stdout);
   });
 });
@@ -67,22 +71,30 @@ describe('the backdrill fix', () => {
   test('ends the finding, moves the response’s notch and opens the eye as its title said', async () => {
     const folder = copy();
     const file = join(folder, 'lanes', 'camera-sled.channel.yaml');
-    const checkCopy = async (): Promise<CheckOutput['files'][number]> => JSON.parse((await lanewright(['check', file, '--format', 'json', '--root', folder])).stdout).files[0];
+    const checkCopy = async (): Promise<CheckOutput['files'][number]> =>
+      JSON.parse((await lanewright(['check', file, '--format', 'json', '--root', folder])).stdout).files[0];
     const before = await checkCopy();
     const stub = before.findings.find(({ rule }) => rule === 'stub-resonance');
     expect(stub?.fixes.length).toBeGreaterThan(0);
     const text = readFileSync(file, 'utf8').split('\n');
     const edits = [...(stub?.fixes[0].edits ?? [])].reverse();
-    const offset = ({ line, column }: { line: number; column: number }) => text.slice(0, line - 1).join('\n').length + (line > 1 ? 1 : 0) + column - 1;
+    const offset = ({ line, column }: { line: number; column: number }) =>
+      text.slice(0, line - 1).join('\n').length + (line > 1 ? 1 : 0) + column - 1;
     let changed = text.join('\n');
-    for (const edit of edits) changed = changed.slice(0, offset(edit.range.start)) + edit.text + changed.slice(offset(edit.range.end));
+    for (const edit of edits)
+      changed = changed.slice(0, offset(edit.range.start)) + edit.text + changed.slice(offset(edit.range.end));
     writeFileSync(file, changed);
     const after = await checkCopy();
     expect(after.findings.filter(({ rule }) => rule === 'stub-resonance')).toEqual([]);
-    const figure = (checked: typeof before, name: string) => checked.figures.find((candidate) => candidate.name === name)?.value ?? Number.NaN;
+    const figure = (checked: typeof before, name: string) =>
+      checked.figures.find((candidate) => candidate.name === name)?.value ?? Number.NaN;
     expect(figure(after, 'eye-height')).toBeGreaterThan(figure(before, 'eye-height'));
     expect(figure(after, 'insertion-loss-at-nyquist')).toBeLessThan(figure(before, 'insertion-loss-at-nyquist'));
-    const lowest = (checked: typeof before) => Math.min(...checked.resonances.filter(({ elements }) => elements.includes('dive')).map(({ frequencyHz }) => frequencyHz), Number.POSITIVE_INFINITY);
+    const lowest = (checked: typeof before) =>
+      Math.min(
+        ...checked.resonances.filter(({ elements }) => elements.includes('dive')).map(({ frequencyHz }) => frequencyHz),
+        Number.POSITIVE_INFINITY,
+      );
     expect(lowest(before)).toBeLessThan(40e9);
     expect(lowest(after)).toBeGreaterThan(lowest(before));
     const rulesBefore = new Set(before.findings.map(({ rule }) => rule));
@@ -92,8 +104,13 @@ describe('the backdrill fix', () => {
     const folder = copy();
     const file = join(folder, 'lanes', 'camera-sled.channel.yaml');
     const original = readFileSync(file, 'utf8');
-    const findings = async () => (JSON.parse((await lanewright(['check', file, '--format', 'json', '--root', folder])).stdout) as CheckOutput).files[0].findings;
-    const drilled = original.replace('pitch: 0.9 mm\n    owner: sled board\n  - trace: main-run', 'pitch: 0.9 mm\n    backdrill: { bottom: 0.25 mm ± 0.1 mm }\n    owner: sled board\n  - trace: main-run');
+    const findings = async () =>
+      (JSON.parse((await lanewright(['check', file, '--format', 'json', '--root', folder])).stdout) as CheckOutput)
+        .files[0].findings;
+    const drilled = original.replace(
+      'pitch: 0.9 mm\n    owner: sled board\n  - trace: main-run',
+      'pitch: 0.9 mm\n    backdrill: { bottom: 0.25 mm ± 0.1 mm }\n    owner: sled board\n  - trace: main-run',
+    );
     expect(drilled).not.toBe(original);
     writeFileSync(file, drilled);
     expect((await findings()).filter(({ rule }) => rule === 'stub-resonance')).toEqual([]);
@@ -136,7 +153,10 @@ describe('text for people', () => {
 
 describe('standard input and several outputs', () => {
   test('a text that is not on disk is checked under its name', async () => {
-    const result = await lanewright(['check', '-', '--stdin-filename', 'examples/lanes/new.channel.yaml', '--format', 'json'], { input: GOOD.replace('64 mm', '64') });
+    const result = await lanewright(
+      ['check', '-', '--stdin-filename', 'examples/lanes/new.channel.yaml', '--format', 'json'],
+      { input: GOOD.replace('64 mm', '64') },
+    );
     expect(result.status).toBe(1);
     const { files }: CheckOutput = JSON.parse(result.stdout);
     expect(files[0].file).toBe('examples/lanes/new.channel.yaml');
@@ -144,7 +164,14 @@ describe('standard input and several outputs', () => {
   });
   test('text on stdout and JSON in a file, in one run', async () => {
     const folder = emptyFolder();
-    const { stdout } = await lanewright(['check', SLED, '--format', 'text', '--format', `json=${join(folder, 'out.json')}`]);
+    const { stdout } = await lanewright([
+      'check',
+      SLED,
+      '--format',
+      'text',
+      '--format',
+      `json=${join(folder, 'out.json')}`,
+    ]);
     expect(stdout).toContain('stub-resonance');
     expect(JSON.parse(readFileSync(join(folder, 'out.json'), 'utf8')).files).toHaveLength(1);
   });
@@ -168,7 +195,18 @@ describe('fixes and waivers', () => {
     const before = readFileSync(file, 'utf8');
     expect((await lanewright(['check', file, '--add-waivers', 'lane team', '--root', folder])).status).toBe(2);
     expect(readFileSync(file, 'utf8')).toBe(before);
-    const adopted = await lanewright(['check', file, '--add-waivers', 'lane team', '--until', '2099-01-01', '--reason', 'as built', '--root', folder]);
+    const adopted = await lanewright([
+      'check',
+      file,
+      '--add-waivers',
+      'lane team',
+      '--until',
+      '2099-01-01',
+      '--reason',
+      'as built',
+      '--root',
+      folder,
+    ]);
     expect(adopted.status).toBe(0);
     expect(readFileSync(file, 'utf8')).toContain('reason: as built');
   });

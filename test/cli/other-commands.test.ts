@@ -19,7 +19,9 @@ describe('help', () => {
     const wrong = await lanewright(['chek']);
     expect(wrong.status).toBe(2);
     expect(wrong.stderr).toContain('check');
-    expect((await lanewright(['--version'])).stdout.trim()).toBe(JSON.parse(readFileSync('package.json', 'utf8')).version);
+    expect((await lanewright(['--version'])).stdout.trim()).toBe(
+      JSON.parse(readFileSync('package.json', 'utf8')).version,
+    );
   });
 });
 
@@ -27,16 +29,46 @@ describe('curves', () => {
   test('CSV at just the frequencies asked for', async () => {
     const { stdout, status } = await lanewright(['curves', LANE, '--from', '1GHz', '--to', '5GHz', '--points', '5']);
     expect(status).toBe(0);
-    const rows = stdout.trim().split('\n').map((row) => row.split(','));
+    const rows = stdout
+      .trim()
+      .split('\n')
+      .map((row) => row.split(','));
     expect(rows[0].slice(0, 2)).toEqual(['frequency_Hz', 'SDD11_dB']);
     expect(rows.slice(1).map((row) => Number(row[0]))).toEqual([1e9, 2e9, 3e9, 4e9, 5e9]);
     expect(rows.flat().some((cell) => /NaN|Infinity/.test(cell))).toBe(false);
   });
   test('Touchstone that has four ports for a pair and two for a single conductor', async () => {
-    const pair = await lanewright(['curves', LANE, '--format', 'touchstone', '--from', '0', '--to', '10GHz', '--points', '11']);
+    const pair = await lanewright([
+      'curves',
+      LANE,
+      '--format',
+      'touchstone',
+      '--from',
+      '0',
+      '--to',
+      '10GHz',
+      '--points',
+      '11',
+    ]);
     expect(pair.stdout).toMatch(/^# \S+ S RI R 50/m);
-    const single = await lanewright(['curves', 'examples/lanes/encoder.channel.yaml', '--format', 'touchstone', '--from', '0', '--to', '2GHz', '--points', '3']);
-    const numbers = single.stdout.split('\n').filter((line) => line && !/^[!#]/.test(line)).join(' ').trim().split(/\s+/);
+    const single = await lanewright([
+      'curves',
+      'examples/lanes/encoder.channel.yaml',
+      '--format',
+      'touchstone',
+      '--from',
+      '0',
+      '--to',
+      '2GHz',
+      '--points',
+      '3',
+    ]);
+    const numbers = single.stdout
+      .split('\n')
+      .filter((line) => line && !/^[!#]/.test(line))
+      .join(' ')
+      .trim()
+      .split(/\s+/);
     expect(numbers).toHaveLength(3 * 9);
   });
   test('a piece of the path, and a wrong name', async () => {

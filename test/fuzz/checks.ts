@@ -12,22 +12,30 @@ export function faultsOf(analysis: Analysis, milliseconds: number): string[] {
   if (analysis.findings.length > 201) faults.push(`${analysis.findings.length} findings`);
   for (const finding of analysis.findings) {
     if (finding.rule === 'internal') faults.push(`internal: ${finding.message}`);
-    for (const { at, range } of [finding, ...(finding.related ?? []).map((related) => ({ at: related.at, range: undefined }))]) {
+    for (const { at, range } of [
+      finding,
+      ...(finding.related ?? []).map((related) => ({ at: related.at, range: undefined })),
+    ]) {
       const parsed = analysis.parsed.get(at.file);
       if (!parsed) continue;
       const { start, end } = range ?? rangeOf(parsed, at);
-      if (!(start >= 0 && start <= end && end <= parsed.text.length)) faults.push(`${finding.rule}: range ${start} to ${end} outside a text of ${parsed.text.length}`);
+      if (!(start >= 0 && start <= end && end <= parsed.text.length))
+        faults.push(`${finding.rule}: range ${start} to ${end} outside a text of ${parsed.text.length}`);
     }
-    if (/NaN|Infinity|undefined|\[object/.test(withoutQuotes(finding.message, analysis))) faults.push(`${finding.rule}: ${finding.message}`);
+    if (/NaN|Infinity|undefined|\[object/.test(withoutQuotes(finding.message, analysis)))
+      faults.push(`${finding.rule}: ${finding.message}`);
   }
-  for (const { name, value, text } of analysis.figures) if (!Number.isFinite(value) || /NaN|Infinity/.test(text)) faults.push(`figure ${name} is ${value}, ${text}`);
+  for (const { name, value, text } of analysis.figures)
+    if (!Number.isFinite(value) || /NaN|Infinity/.test(text)) faults.push(`figure ${name} is ${value}, ${text}`);
   return faults;
 }
 
 /** The message without the pieces of the files that it repeats: a key that someone typed may well be called NaN. */
 function withoutQuotes(message: string, { parsed }: Analysis): string {
   const texts = [...parsed.values()].map(({ text }) => text);
-  return message.replace(/`([^`]*)`/g, (quote, piece: string) => (texts.some((text) => text.includes(piece.replace(/…$/, ''))) ? '' : quote));
+  return message.replace(/`([^`]*)`/g, (quote, piece: string) =>
+    texts.some((text) => text.includes(piece.replace(/…$/, ''))) ? '' : quote,
+  );
 }
 
 export function timed(inputs: Inputs, previous?: Analysis): { analysis: Analysis; milliseconds: number } {
@@ -39,7 +47,10 @@ export function timed(inputs: Inputs, previous?: Analysis): { analysis: Analysis
 /** What a person sees of an analysis: equal for two analyses of the same text, whatever came before. */
 export function visible(analysis: Analysis): string {
   return JSON.stringify({
-    findings: analysis.findings.map(({ fixes = [], ...finding }) => ({ ...finding, fixes: fixes.map(({ title, edits }) => ({ title, edits })) })),
+    findings: analysis.findings.map(({ fixes = [], ...finding }) => ({
+      ...finding,
+      fixes: fixes.map(({ title, edits }) => ({ title, edits })),
+    })),
     figures: analysis.figures,
     limits: analysis.limits,
     verdict: analysis.verdict,

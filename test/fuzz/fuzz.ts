@@ -1,10 +1,18 @@
-import { xoroshiro128plus } from 'pure-rand/generator/xoroshiro128plus';
 import { uniformInt } from 'pure-rand/distribution/uniformInt';
+import { xoroshiro128plus } from 'pure-rand/generator/xoroshiro128plus';
 import { hintsOf } from '../../src-core/assist/hints';
 import { rangeOf } from '../../src-core/text/range';
 import { entryAt, faultsOf, timed, visible } from './checks';
 import { examples } from './inputs';
-import { everyKeyMisspelt, everyLineDeleted, everyLineIndentedWrongly, everyPrefix, everyUnitDropped, type Mutation, randomEdit } from './mutations';
+import {
+  everyKeyMisspelt,
+  everyLineDeleted,
+  everyLineIndentedWrongly,
+  everyPrefix,
+  everyUnitDropped,
+  type Mutation,
+  randomEdit,
+} from './mutations';
 
 export interface FuzzOptions {
   readonly root: string;
@@ -32,7 +40,8 @@ export async function fuzz({ root, seed, every, randomEdits, sequences, say }: F
   const local = { cases: 0, firstFindingInside: 0, othersKept: 0 };
   let texts = 0;
   let slowest = 0;
-  const note = (what: string, file: string, found: readonly string[]) => faults.push(...found.map((fault) => `${file}, ${what}: ${fault}`));
+  const note = (what: string, file: string, found: readonly string[]) =>
+    faults.push(...found.map((fault) => `${file}, ${what}: ${fault}`));
 
   for (const file of source.channels) {
     const good = source.textOf(file);
@@ -76,7 +85,9 @@ export async function fuzz({ root, seed, every, randomEdits, sequences, say }: F
       slowest = Math.max(slowest, milliseconds);
       note(`random text ${i} of seed ${seed}`, file, faultsOf(analysis, milliseconds));
     } catch (error) {
-      note(`random text ${i} of seed ${seed}`, file, [`threw ${error instanceof Error ? error.stack : String(error)}\n${text}`]);
+      note(`random text ${i} of seed ${seed}`, file, [
+        `threw ${error instanceof Error ? error.stack : String(error)}\n${text}`,
+      ]);
     }
   }
   say(`${Math.ceil(randomEdits / every)} random texts`);
@@ -92,7 +103,8 @@ export async function fuzz({ root, seed, every, randomEdits, sequences, say }: F
       texts++;
     }
     const cold = timed(await source.inputs(file, text)).analysis;
-    if (visible(kept) !== visible(cold)) faults.push(`${file}, edit sequence ${i} of seed ${seed}: ends in another state than a cold analysis`);
+    if (visible(kept) !== visible(cold))
+      faults.push(`${file}, edit sequence ${i} of seed ${seed}: ends in another state than a cold analysis`);
   }
   say(`${wanted} edit sequences`);
   return { texts, faults, local, slowestMilliseconds: slowest };
@@ -101,7 +113,12 @@ export async function fuzz({ root, seed, every, randomEdits, sequences, say }: F
 type AnalysisLike = ReturnType<typeof timed>['analysis'];
 
 /** A fault inside one element: is it told there, and do the others keep what is shown beside them? */
-function judgeLocality(mutation: Mutation, base: AnalysisLike, broken: AnalysisLike, local: { cases: number; firstFindingInside: number; othersKept: number }): void {
+function judgeLocality(
+  mutation: Mutation,
+  base: AnalysisLike,
+  broken: AnalysisLike,
+  local: { cases: number; firstFindingInside: number; othersKept: number },
+): void {
   const entry = mutation.at === undefined ? undefined : entryAt(base, mutation.at);
   if (!entry) return;
   const known = new Set(base.findings.map(({ message }) => message));
@@ -114,7 +131,8 @@ function judgeLocality(mutation: Mutation, base: AnalysisLike, broken: AnalysisL
     const grown = parsed.text.length - (base.parsed.get(base.inputs.file)?.text.length ?? 0);
     if (start >= entry.start && start <= entry.end + Math.max(0, grown)) local.firstFindingInside++;
   }
-  const names = (analysis: AnalysisLike) => new Set(hintsOf(analysis, analysis.inputs.file).map((hint) => lineHead(analysis, hint.offset)));
+  const names = (analysis: AnalysisLike) =>
+    new Set(hintsOf(analysis, analysis.inputs.file).map((hint) => lineHead(analysis, hint.offset)));
   const before = names(base);
   const after = names(broken);
   const lost = [...before].filter((line) => !after.has(line) && !line.includes(entry.name));

@@ -14,14 +14,27 @@ const outfile = join(root, 'dist', 'test', 'fuzz.mjs');
 await bundleForNode('test/fuzz/fuzz.ts', outfile);
 const { fuzz } = await import(pathToFileURL(outfile).href);
 
-const { values } = parseArgs({ options: { seed: { type: 'string', default: '20261201' }, every: { type: 'string', default: '1' } } });
+const { values } = parseArgs({
+  options: { seed: { type: 'string', default: '20261201' }, every: { type: 'string', default: '1' } },
+});
 const seed = Number(values.seed);
 console.log(`seed ${seed}, every ${values.every}`);
 const start = performance.now();
-const { texts, faults, local, slowestMilliseconds } = await fuzz({ root, seed, every: Number(values.every), randomEdits: 10_000, sequences: 1000, say: console.log });
+const { texts, faults, local, slowestMilliseconds } = await fuzz({
+  root,
+  seed,
+  every: Number(values.every),
+  randomEdits: 10_000,
+  sequences: 1000,
+  say: console.log,
+});
 const share = (part) => `${local.cases ? ((100 * part) / local.cases).toFixed(1) : '-'} %`;
-console.log(`\n${texts} texts in ${((performance.now() - start) / 1000).toFixed(0)} s, slowest analysis ${slowestMilliseconds.toFixed(0)} ms`);
-console.log(`faults inside one element: ${local.cases}; first finding in its lines ${share(local.firstFindingInside)}; all other elements keep their hints ${share(local.othersKept)}`);
+console.log(
+  `\n${texts} texts in ${((performance.now() - start) / 1000).toFixed(0)} s, slowest analysis ${slowestMilliseconds.toFixed(0)} ms`,
+);
+console.log(
+  `faults inside one element: ${local.cases}; first finding in its lines ${share(local.firstFindingInside)}; all other elements keep their hints ${share(local.othersKept)}`,
+);
 console.log(`${faults.length} faults`);
 for (const fault of faults.slice(0, 50)) console.log(`- ${fault}`);
 process.exitCode = faults.length || local.othersKept < 0.95 * local.cases ? 1 : 0;

@@ -1,8 +1,8 @@
 import type { CheckedFile } from '../../../schemas/outputs/check';
 import type { Analysis } from '../../../src-core/analysis';
+import { resonanceText } from '../../../src-core/figures/index';
 import type { Figure } from '../../../src-core/figures/types';
 import { fileKind } from '../../../src-core/inputs';
-import { resonanceText } from '../../../src-core/figures/index';
 import type { Finding, Fix } from '../../../src-core/rules/types';
 import { resolveEdits } from '../../../src-core/text/edits';
 import { locate, positionsIn } from './positions';
@@ -14,7 +14,10 @@ export function checkedFile(analysis: Analysis): CheckedFile {
   return {
     file: inputs.file,
     kind: kind === 'parts' || kind === 'config' ? kind : 'channel',
-    ...(kind === 'channel' && { title: model.title, verdict: { state: analysis.verdict.state, text: analysis.verdict.text } }),
+    ...(kind === 'channel' && {
+      title: model.title,
+      verdict: { state: analysis.verdict.state, text: analysis.verdict.text },
+    }),
     figures: analysis.figures.map(figureJson),
     limits: analysis.limits.map(({ name, kind: limitKind, met, limit, actual, marginShare, text }) => ({
       name,
@@ -25,15 +28,19 @@ export function checkedFile(analysis: Analysis): CheckedFile {
       marginShare,
       text,
     })),
-    ledger: (ledger?.rows ?? []).map(({ element, kind: elementKind, figures, owner, budget, cumulativeDb, cumulativeShare }) => ({
-      element,
-      kind: elementKind,
-      figures: figures.map(figureJson),
-      ...(owner !== undefined && { owner }),
-      ...(budget && { budget: { allowedDb: budget.allowedDb, spentDb: budget.spentDb, share: budget.share, text: budget.text } }),
-      cumulativeDb,
-      ...(cumulativeShare !== undefined && { cumulativeShare }),
-    })),
+    ledger: (ledger?.rows ?? []).map(
+      ({ element, kind: elementKind, figures, owner, budget, cumulativeDb, cumulativeShare }) => ({
+        element,
+        kind: elementKind,
+        figures: figures.map(figureJson),
+        ...(owner !== undefined && { owner }),
+        ...(budget && {
+          budget: { allowedDb: budget.allowedDb, spentDb: budget.spentDb, share: budget.share, text: budget.text },
+        }),
+        cumulativeDb,
+        ...(cumulativeShare !== undefined && { cumulativeShare }),
+      }),
+    ),
     ...(ledger && { reflectionsDb: ledger.reflectionsDb }),
     resonances: (cascade?.resonances ?? []).map((resonance) => ({
       frequencyHz: resonance.frequencyHz,
@@ -48,7 +55,14 @@ export function checkedFile(analysis: Analysis): CheckedFile {
   };
 }
 
-const figureJson = ({ name, title, value, unit, text, note }: Figure) => ({ name, title, value, unit, text, ...(note !== undefined && { note }) });
+const figureJson = ({ name, title, value, unit, text, note }: Figure) => ({
+  name,
+  title,
+  value,
+  unit,
+  text,
+  ...(note !== undefined && { note }),
+});
 
 function findingJson(finding: Finding, analysis: Analysis): CheckedFile['findings'][number] {
   const { rule, severity, message, subject, value, valueText, related = [], fixes = [], waivedBy } = finding;
@@ -70,6 +84,10 @@ function fixJson(fix: Fix, { parsed }: Analysis) {
   return {
     title: fix.title,
     safe: fix.safe ?? false,
-    edits: resolveEdits(fix.edits, parsed).map(({ file, range, text }) => ({ file, range: positionsIn(parsed.get(file)?.text ?? '', range), text })),
+    edits: resolveEdits(fix.edits, parsed).map(({ file, range, text }) => ({
+      file,
+      range: positionsIn(parsed.get(file)?.text ?? '', range),
+      text,
+    })),
   };
 }

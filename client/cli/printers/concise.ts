@@ -1,5 +1,5 @@
-import { locate } from './positions';
 import { plain } from './plain';
+import { locate } from './positions';
 import type { MakePrinter } from './types';
 
 /** A line a finding, for editors and scripts: `FILE:LINE:COLUMN: SEVERITY RULE: MESSAGE`. */
@@ -8,7 +8,9 @@ export const concise: MakePrinter = ({ write, shown, quiet }) => ({
     for (const finding of analysis.findings) {
       if (finding.waivedBy || (quiet && finding.severity !== 'error')) continue;
       const { file, range } = locate(finding, analysis);
-      write(`${plain(shown(file))}:${range.start.line}:${range.start.column}: ${finding.severity} ${finding.rule}: ${plain(finding.message)}\n`);
+      write(
+        `${plain(shown(file))}:${range.start.line}:${range.start.column}: ${finding.severity} ${finding.rule}: ${plain(finding.message)}\n`,
+      );
     }
   },
   end() {},

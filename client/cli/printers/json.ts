@@ -7,7 +7,10 @@ import type { MakePrinter } from './types';
 export const json: MakePrinter = ({ write, version }) => {
   const counts = countFindings();
   let first = true;
-  const open = () => write(`{\n"version": ${CHECK_OUTPUT_VERSION},\n"tool": ${JSON.stringify({ name: 'lanewright', version })},\n"files": [`);
+  const open = () =>
+    write(
+      `{\n"version": ${CHECK_OUTPUT_VERSION},\n"tool": ${JSON.stringify({ name: 'lanewright', version })},\n"files": [`,
+    );
   return {
     file(analysis) {
       if (first) open();

@@ -21,7 +21,10 @@ export function positionAt(text: string, offset: number): Position {
   return { line, column: Math.max(1, Math.min(offset, text.length) - start + 1) };
 }
 
-export const positionsIn = (text: string, { start, end }: TextRange) => ({ start: positionAt(text, start), end: positionAt(text, end) });
+export const positionsIn = (text: string, { start, end }: TextRange) => ({
+  start: positionAt(text, start),
+  end: positionAt(text, end),
+});
 
 /** Where a finding or a related place stands in the newest text. */
 export function locate({ at, range }: { at: Place; range?: TextRange }, { parsed }: Analysis) {
