@@ -61,6 +61,11 @@ test('the result always says what the new value says, and equals the old one jus
 });
 
 test('two entries of one name, each kept for what it is', () => {
-  const before = { parts: [{ name: 'mate', file: 'a' }, { name: 'mate', file: 'b' }] };
+  const before = {
+    parts: [
+      { name: 'mate', file: 'a' },
+      { name: 'mate', file: 'b' },
+    ],
+  };
   expect(keepSame(structuredClone(before), before)).toBe(before);
 });

@@ -15,10 +15,13 @@ const inHalfAYear = () => new Date(Date.now() + 183 * 24 * 3600 * 1000).toISOStr
 
 function dayProblem(text: string): string | undefined {
   if (!/^\d{4}-\d{2}-\d{2}$/.test(text) || Number.isNaN(Date.parse(text))) return 'Write the day as YYYY-MM-DD.';
-  return text < new Date().toISOString().slice(0, 10) ? 'That day is past: the waiver would accept nothing.' : undefined;
+  return text < new Date().toISOString().slice(0, 10)
+    ? 'That day is past: the waiver would accept nothing.'
+    : undefined;
 }
 
-const wanted = (what: string) => (text: string) => (text.trim() ? undefined : `${what} is wanted: a waiver without it is none.`);
+const wanted = (what: string) => (text: string) =>
+  text.trim() ? undefined : `${what} is wanted: a waiver without it is none.`;
 
 /** Asks why, by whom and until when, then writes the waiver. Escape at any question writes nothing. */
 export const acceptFinding = (client: BaseLanguageClient) => async (finding: AcceptFinding) => {
@@ -32,11 +35,15 @@ export const acceptFinding = (client: BaseLanguageClient) => async (finding: Acc
   if (by === undefined) return;
   const until = await ask('Until which day?', inHalfAYear(), dayProblem);
   if (until === undefined) return;
-  const upTo = finding.value === undefined ? undefined : await ask('Up to which value? Beyond it the finding returns.', finding.value, () => undefined);
+  const upTo =
+    finding.value === undefined
+      ? undefined
+      : await ask('Up to which value? Beyond it the finding returns.', finding.value, () => undefined);
   if (finding.value !== undefined && upTo === undefined) return;
 
   const { uri, rule, at } = finding;
   const edit = await client.sendRequest(waiverRequest, { uri, rule, at, until, by, reason, ...(upTo && { upTo }) });
   const converted = edit && (await client.protocol2CodeConverter.asWorkspaceEdit(edit));
-  if (!converted || !(await vscode.workspace.applyEdit(converted))) void vscode.window.showErrorMessage('The waiver could not be written: open the file and try again.');
+  if (!converted || !(await vscode.workspace.applyEdit(converted)))
+    void vscode.window.showErrorMessage('The waiver could not be written: open the file and try again.');
 };

@@ -12,7 +12,9 @@ export const activate = (context: vscode.ExtensionContext) =>
         'lanewright',
         'Lanewright',
         async () => {
-          const worker = new Worker(vscode.Uri.joinPath(extension.extensionUri, 'dist/browser-server.js').toString(true));
+          const worker = new Worker(
+            vscode.Uri.joinPath(extension.extensionUri, 'dist/browser-server.js').toString(true),
+          );
           return { reader: new BrowserMessageReader(worker), writer: new BrowserMessageWriter(worker) };
         },
         options,

@@ -15,9 +15,19 @@ export function registerCommands(context: vscode.ExtensionContext, extension: Ex
     'lanewright.showOutput': () => output.show(),
     'lanewright.copyReport': async () => {
       const status = await client.sendRequest(statusRequest, {}).catch(() => undefined);
-      const facts = { extension: context.extension.packageJSON.version, editor: vscode.version, host, platform: vscode.env.uiKind === vscode.UIKind.Web ? 'web' : 'desktop', server: status ?? 'does not answer' };
-      await vscode.env.clipboard.writeText(JSON.stringify(facts, (key, value) => (key === 'skipped' ? (value as string[]).length : value), 2));
-      void vscode.window.showInformationMessage('A report for an issue is on the clipboard: versions and counts, no file contents.');
+      const facts = {
+        extension: context.extension.packageJSON.version,
+        editor: vscode.version,
+        host,
+        platform: vscode.env.uiKind === vscode.UIKind.Web ? 'web' : 'desktop',
+        server: status ?? 'does not answer',
+      };
+      await vscode.env.clipboard.writeText(
+        JSON.stringify(facts, (key, value) => (key === 'skipped' ? (value as string[]).length : value), 2),
+      );
+      void vscode.window.showInformationMessage(
+        'A report for an issue is on the clipboard: versions and counts, no file contents.',
+      );
     },
     'lanewright.analyseAgain': async (uri?: string) => {
       const target = uri ?? vscode.window.activeTextEditor?.document.uri.toString();
@@ -27,8 +37,18 @@ export function registerCommands(context: vscode.ExtensionContext, extension: Ex
     },
     'lanewright.acceptFinding': acceptFinding(client),
     'lanewright.newChannel': newChannel,
-    'lanewright.showRules': () => vscode.commands.executeCommand('markdown.showPreview', vscode.Uri.joinPath(context.extensionUri, 'dist', 'rules.md')),
-    'lanewright.showFormat': () => vscode.commands.executeCommand('markdown.showPreview', vscode.Uri.joinPath(context.extensionUri, 'dist', 'format.md')),
+    'lanewright.showRules': () =>
+      vscode.commands.executeCommand(
+        'markdown.showPreview',
+        vscode.Uri.joinPath(context.extensionUri, 'dist', 'rules.md'),
+      ),
+    'lanewright.showFormat': () =>
+      vscode.commands.executeCommand(
+        'markdown.showPreview',
+        vscode.Uri.joinPath(context.extensionUri, 'dist', 'format.md'),
+      ),
   };
-  return vscode.Disposable.from(...Object.entries(commands).map(([name, run]) => vscode.commands.registerCommand(name, run)));
+  return vscode.Disposable.from(
+    ...Object.entries(commands).map(([name, run]) => vscode.commands.registerCommand(name, run)),
+  );
 }

@@ -23,9 +23,13 @@ export function rememberDeaths(now: () => number = Date.now) {
       running.clear();
       for (const uri of suspects) deathsOf.set(uri, (deathsOf.get(uri) ?? 0) + 1);
       deaths = [...deaths.filter((time) => now() - time < WINDOW_MILLISECONDS), now()];
-      return { restart: deaths.length <= MOST_RESTARTS, skippedNow: suspects.filter((uri) => deathsOf.get(uri) === DEATHS_OF_A_FILE) };
+      return {
+        restart: deaths.length <= MOST_RESTARTS,
+        skippedNow: suspects.filter((uri) => deathsOf.get(uri) === DEATHS_OF_A_FILE),
+      };
     },
-    skipped: (): readonly string[] => [...deathsOf].filter(([, count]) => count >= DEATHS_OF_A_FILE).map(([uri]) => uri),
+    skipped: (): readonly string[] =>
+      [...deathsOf].filter(([, count]) => count >= DEATHS_OF_A_FILE).map(([uri]) => uri),
     forgive(uri?: string) {
       if (uri === undefined) deathsOf.clear();
       else deathsOf.delete(uri);

@@ -24,7 +24,11 @@ function isOpen(uri: vscode.Uri): boolean {
   if (vscode.workspace.getWorkspaceFolder(uri)) return true;
   return vscode.workspace.textDocuments.some((document) => {
     const folder = vscode.Uri.joinPath(document.uri, '..');
-    return folder.scheme === uri.scheme && folder.authority === uri.authority && `${uri.path}/`.startsWith(folder.path.endsWith('/') ? folder.path : `${folder.path}/`);
+    return (
+      folder.scheme === uri.scheme &&
+      folder.authority === uri.authority &&
+      `${uri.path}/`.startsWith(folder.path.endsWith('/') ? folder.path : `${folder.path}/`)
+    );
   });
 }
 
@@ -32,7 +36,8 @@ async function readThroughEditor(uri: vscode.Uri, limit: number): Promise<FileCo
   if (!isOpen(uri)) return { kind: 'refused', reason: 'it lies outside the folders that are open' };
   try {
     const status = await vscode.workspace.fs.stat(uri);
-    if (status.type & vscode.FileType.SymbolicLink) return { kind: 'refused', reason: 'it is a link, which is not followed here' };
+    if (status.type & vscode.FileType.SymbolicLink)
+      return { kind: 'refused', reason: 'it is a link, which is not followed here' };
     if (status.type !== vscode.FileType.File) return { kind: 'refused', reason: 'it is not an ordinary file' };
     if (status.size > limit) return { kind: 'too-large', bytes: status.size, limit };
     return { kind: 'text', text: new TextDecoder().decode(await vscode.workspace.fs.readFile(uri)) };

@@ -1,7 +1,7 @@
 import * as vscode from 'vscode';
 import { pageHtml } from '../preview/html';
 import { type FromPage, type PageState, readFromPage, type ToPage } from '../preview/messages';
-import { elementAtRequest, rangeRequest, previewChanged, previewRequest } from './protocol';
+import { elementAtRequest, previewChanged, previewRequest, rangeRequest } from './protocol';
 import type { Extension } from './start';
 
 const VIEW_TYPE = 'lanewright.preview';
@@ -25,15 +25,24 @@ export function registerPreview(context: vscode.ExtensionContext, extension: Ext
       await show(preview, uri, extension);
       return;
     }
-    const panel = vscode.window.createWebviewPanel(VIEW_TYPE, 'Preview', { viewColumn: column, preserveFocus: true }, { enableFindWidget: true });
+    const panel = vscode.window.createWebviewPanel(
+      VIEW_TYPE,
+      'Preview',
+      { viewColumn: column, preserveFocus: true },
+      { enableFindWidget: true },
+    );
     preview = adopt(panel, uri, context, extension, () => {
       preview = undefined;
     });
   };
 
   return vscode.Disposable.from(
-    vscode.commands.registerCommand('lanewright.openPreview', (uri?: vscode.Uri) => open(vscode.ViewColumn.Active, asUri(uri))),
-    vscode.commands.registerCommand('lanewright.openPreviewToSide', (uri?: vscode.Uri) => open(vscode.ViewColumn.Beside, asUri(uri))),
+    vscode.commands.registerCommand('lanewright.openPreview', (uri?: vscode.Uri) =>
+      open(vscode.ViewColumn.Active, asUri(uri)),
+    ),
+    vscode.commands.registerCommand('lanewright.openPreviewToSide', (uri?: vscode.Uri) =>
+      open(vscode.ViewColumn.Beside, asUri(uri)),
+    ),
     vscode.commands.registerCommand('lanewright.togglePreviewLock', () => {
       if (!preview) return;
       preview.locked = !preview.locked;
@@ -52,10 +61,12 @@ export function registerPreview(context: vscode.ExtensionContext, extension: Ext
       else void refresh(preview, extension);
     }),
     vscode.window.onDidChangeActiveTextEditor((editor) => {
-      if (preview && !preview.locked && editor && isChannel(editor.document)) void show(preview, editor.document.uri, extension);
+      if (preview && !preview.locked && editor && isChannel(editor.document))
+        void show(preview, editor.document.uri, extension);
     }),
     vscode.window.onDidChangeTextEditorSelection(({ textEditor }) => {
-      if (preview?.uri && textEditor.document.uri.toString() === preview.uri.toString()) void followCursor(preview, textEditor, extension);
+      if (preview?.uri && textEditor.document.uri.toString() === preview.uri.toString())
+        void followCursor(preview, textEditor, extension);
     }),
   );
 }
@@ -66,7 +77,8 @@ const activeChannel = () => {
   return editor && isChannel(editor.document) ? editor : undefined;
 };
 /** Menus hand over a URI, keys and the palette nothing or something else. */
-const asUri = (value: unknown) => (value instanceof vscode.Uri ? value : typeof value === 'string' ? vscode.Uri.parse(value) : undefined);
+const asUri = (value: unknown) =>
+  value instanceof vscode.Uri ? value : typeof value === 'string' ? vscode.Uri.parse(value) : undefined;
 const sameUri = (text: string, uri: vscode.Uri) => vscode.Uri.parse(text).toString() === uri.toString();
 
 const nameOf = (uri: vscode.Uri | undefined) => uri?.path.split('/').pop() ?? '';
@@ -78,7 +90,13 @@ function newNonce(): string {
   return Array.from(bytes, (byte) => byte.toString(16).padStart(2, '0')).join('');
 }
 
-function adopt(panel: vscode.WebviewPanel, uri: vscode.Uri | undefined, context: vscode.ExtensionContext, extension: Extension, gone: () => void): Preview {
+function adopt(
+  panel: vscode.WebviewPanel,
+  uri: vscode.Uri | undefined,
+  context: vscode.ExtensionContext,
+  extension: Extension,
+  gone: () => void,
+): Preview {
   const dist = vscode.Uri.joinPath(context.extensionUri, 'dist');
   const { webview } = panel;
   webview.options = { enableScripts: true, localResourceRoots: [dist], enableCommandUris: false };
@@ -118,24 +136,42 @@ async function refresh(preview: Preview, { client }: Extension): Promise<void> {
     post(preview, { type: 'nothing', reason: 'Open a channel file to see it here.' });
     return;
   }
-  const answerOfServer = await client.sendRequest(previewRequest, { uri: client.code2ProtocolConverter.asUri(uri) }).catch(() => null);
+  const answerOfServer = await client
+    .sendRequest(previewRequest, { uri: client.code2ProtocolConverter.asUri(uri) })
+    .catch(() => null);
   if (generation !== preview.generation) return;
-  if (!answerOfServer) post(preview, { type: 'nothing', reason: `${nameOf(uri)} is not computed yet. Open it in an editor.` });
-  else post(preview, { type: 'data', uri: uri.toString(), version: answerOfServer.version, data: answerOfServer.data as never });
+  if (!answerOfServer)
+    post(preview, { type: 'nothing', reason: `${nameOf(uri)} is not computed yet. Open it in an editor.` });
+  else
+    post(preview, {
+      type: 'data',
+      uri: uri.toString(),
+      version: answerOfServer.version,
+      data: answerOfServer.data as never,
+    });
 }
 
 /** Selects the lines of what was pointed at, in the editor that shows the file, or opens one. */
-async function select(preview: Preview, { at }: Extract<FromPage, { type: 'select' }>, { client }: Extension): Promise<void> {
+async function select(
+  preview: Preview,
+  { at }: Extract<FromPage, { type: 'select' }>,
+  { client }: Extension,
+): Promise<void> {
   if (!preview.uri) return;
-  const found = await client.sendRequest(rangeRequest, { uri: client.code2ProtocolConverter.asUri(preview.uri), place: at }).catch(() => null);
+  const found = await client
+    .sendRequest(rangeRequest, { uri: client.code2ProtocolConverter.asUri(preview.uri), place: at })
+    .catch(() => null);
   if (!found) return;
   const range = client.protocol2CodeConverter.asRange(found.range);
   const uri = client.protocol2CodeConverter.asUri(found.uri);
   const visible = vscode.window.visibleTextEditors.find((editor) => editor.document.uri.toString() === uri.toString());
-  const editor = await vscode.window.showTextDocument(visible?.document ?? (await vscode.workspace.openTextDocument(uri)), {
-    viewColumn: visible?.viewColumn ?? vscode.ViewColumn.One,
-    preserveFocus: true,
-  });
+  const editor = await vscode.window.showTextDocument(
+    visible?.document ?? (await vscode.workspace.openTextDocument(uri)),
+    {
+      viewColumn: visible?.viewColumn ?? vscode.ViewColumn.One,
+      preserveFocus: true,
+    },
+  );
   editor.selection = new vscode.Selection(range.start, range.end);
   editor.revealRange(range, vscode.TextEditorRevealType.InCenterIfOutsideViewport);
 }
@@ -143,14 +179,21 @@ async function select(preview: Preview, { at }: Extract<FromPage, { type: 'selec
 async function followCursor(preview: Preview, editor: vscode.TextEditor, { client }: Extension): Promise<void> {
   if (!vscode.workspace.getConfiguration('lanewright').get('preview.followCursor', true)) return;
   const { document, selection } = editor;
-  const params = { uri: client.code2ProtocolConverter.asUri(document.uri), position: client.code2ProtocolConverter.asPosition(selection.active) };
+  const params = {
+    uri: client.code2ProtocolConverter.asUri(document.uri),
+    position: client.code2ProtocolConverter.asPosition(selection.active),
+  };
   const found = await client.sendRequest(elementAtRequest, params).catch(() => null);
-  if (editor.selection.active.isEqual(selection.active)) post(preview, { type: 'cursorElement', element: found?.element ?? null });
+  if (editor.selection.active.isEqual(selection.active))
+    post(preview, { type: 'cursorElement', element: found?.element ?? null });
 }
 
 async function save({ uri }: Preview, { format, name, content }: Extract<FromPage, { type: 'save' }>): Promise<void> {
   const file = `${nameOf(uri).replace(/\.channel\.yaml$/, '')}-${name}.${format}`;
   const folder = uri ? vscode.Uri.joinPath(uri, '..') : vscode.workspace.workspaceFolders?.[0]?.uri;
-  const target = await vscode.window.showSaveDialog({ defaultUri: folder && vscode.Uri.joinPath(folder, file), filters: { [format.toUpperCase()]: [format] } });
+  const target = await vscode.window.showSaveDialog({
+    defaultUri: folder && vscode.Uri.joinPath(folder, file),
+    filters: { [format.toUpperCase()]: [format] },
+  });
   if (target) await vscode.workspace.fs.writeFile(target, new TextEncoder().encode(content));
 }

@@ -1,5 +1,12 @@
 import * as vscode from 'vscode';
-import { type BaseLanguageClient, CloseAction, ErrorAction, type LanguageClientOptions, RevealOutputChannelOn, State } from 'vscode-languageclient';
+import {
+  type BaseLanguageClient,
+  CloseAction,
+  ErrorAction,
+  type LanguageClientOptions,
+  RevealOutputChannelOn,
+  State,
+} from 'vscode-languageclient';
 import { registerCommands } from './commands';
 import { type Deaths, rememberDeaths } from './deaths';
 import { serveFiles } from './files';
@@ -50,7 +57,12 @@ export async function start(context: vscode.ExtensionContext, host: Host): Promi
 
 export const stop = async () => running?.stop();
 
-function clientOptions(context: vscode.ExtensionContext, output: vscode.LogOutputChannel, status: StatusItem, deaths: Deaths): LanguageClientOptions {
+function clientOptions(
+  context: vscode.ExtensionContext,
+  output: vscode.LogOutputChannel,
+  status: StatusItem,
+  deaths: Deaths,
+): LanguageClientOptions {
   return {
     documentSelector: SELECTOR,
     outputChannel: output,
@@ -64,7 +76,8 @@ function clientOptions(context: vscode.ExtensionContext, output: vscode.LogOutpu
       error: () => ({ action: ErrorAction.Continue }),
       closed: () => {
         const { restart, skippedNow } = deaths.died();
-        for (const uri of skippedNow) output.warn(`${uri} is opened without analysis: its analysis was running when the server stopped, twice.`);
+        for (const uri of skippedNow)
+          output.warn(`${uri} is opened without analysis: its analysis was running when the server stopped, twice.`);
         if (restart) {
           output.warn('The server stopped and is started again.');
           status.restarting();
@@ -72,11 +85,13 @@ function clientOptions(context: vscode.ExtensionContext, output: vscode.LogOutpu
         }
         output.error('The server stopped five times within three minutes and is not started again.');
         status.stopped();
-        void vscode.window.showErrorMessage('Lanewright’s server keeps stopping.', 'Restart', 'Show output').then((choice) => {
-          if (choice === 'Restart') return vscode.commands.executeCommand('lanewright.restartServer');
-          if (choice === 'Show output') output.show();
-          return undefined;
-        });
+        void vscode.window
+          .showErrorMessage('Lanewright’s server keeps stopping.', 'Restart', 'Show output')
+          .then((choice) => {
+            if (choice === 'Restart') return vscode.commands.executeCommand('lanewright.restartServer');
+            if (choice === 'Show output') output.show();
+            return undefined;
+          });
         return { action: CloseAction.DoNotRestart, handled: true };
       },
     },

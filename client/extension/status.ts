@@ -6,7 +6,12 @@ export function statusItem(context: vscode.ExtensionContext) {
   const item = vscode.languages.createLanguageStatusItem('lanewright.status', SELECTOR);
   item.name = 'Lanewright';
   context.subscriptions.push(item);
-  const set = (text: string, severity: vscode.LanguageStatusSeverity, command: vscode.Command | undefined, busy = false) => {
+  const set = (
+    text: string,
+    severity: vscode.LanguageStatusSeverity,
+    command: vscode.Command | undefined,
+    busy = false,
+  ) => {
     item.text = text;
     item.severity = severity;
     item.command = command;
@@ -16,7 +21,11 @@ export function statusItem(context: vscode.ExtensionContext) {
   const restart = { title: 'Restart', command: 'lanewright.restartServer' };
   return {
     starting: () => set('Lanewright: starting', Information, undefined, true),
-    running: () => set('Lanewright: computing while you type', Information, { title: 'Show output', command: 'lanewright.showOutput' }),
+    running: () =>
+      set('Lanewright: computing while you type', Information, {
+        title: 'Show output',
+        command: 'lanewright.showOutput',
+      }),
     restarting: () => set('Lanewright: the server stopped and is started again', Warning, undefined, true),
     stopped: () => set('Lanewright: the server stopped', Failure, restart),
   };

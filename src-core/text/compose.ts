@@ -1,4 +1,4 @@
-import { type Document, isAlias, isMap, isPair, isScalar, isSeq, type ParsedNode, parseDocument } from 'yaml';
+import { type Document, isAlias, isMap, isPair, isScalar, isSeq, type ParsedNode, parseDocument, Schema } from 'yaml';
 import { MAX_NESTING, tooDeepAt } from './limits';
 import { resolvePlain } from './scalar';
 import { columnOf, emptyScalar, type ItemNode, type PairNode, type SyntaxNode } from './syntax';
@@ -19,7 +19,8 @@ export interface Composed {
 
 const OPTIONS = {
   uniqueKeys: false, // quadratic in the library; ours is in values.ts
-  schema: 'failsafe', // scalars are resolved by scalar.ts, whatever the text's %YAML says
+  // Scalars are resolved by scalar.ts, whatever the text's %YAML says. One for all: to make it costs more than a small piece.
+  schema: new Schema({ schema: 'failsafe' }),
   prettyErrors: false,
   keepSourceTokens: true,
   logLevel: 'error',

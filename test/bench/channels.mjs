@@ -31,25 +31,40 @@ drill-rules: { backdrill-minimum: 0.15 mm, backdrill-tolerance: 0.1 mm }
  * @param vary changes lengths a little: another channel to every cache
  * @param widths how many different cross-sections the traces use
  */
-export function channelText({ elements, vary = 0, widths = 1, board = 'board.parts.yaml', rate = '25.78125 Gb/s', ctle = 'auto' }) {
+export function channelText({
+  elements,
+  vary = 0,
+  widths = 1,
+  board = 'board.parts.yaml',
+  rate = '25.78125 Gb/s',
+  ctle = 'auto',
+}) {
   const path = [];
   const inner = elements - 3;
-  path.push('  - package: leave\n    length: 9 mm\n    impedance: 96 ohm\n    delay: 6.8 ps/mm\n    loss: 0.08 dB/mm @ 12.9 GHz');
+  path.push(
+    '  - package: leave\n    length: 9 mm\n    impedance: 96 ohm\n    delay: 6.8 ps/mm\n    loss: 0.08 dB/mm @ 12.9 GHz',
+  );
   const layers = ['L1', 'L3', 'L1', 'L6'];
   let turn = 0;
   for (let i = 0; i < inner; i++) {
     if (i % 2 === 0) {
       const width = 100 + ((turn + vary) % widths) * 2;
-      path.push(`  - trace: run-${i}\n    stackup: board.main\n    layer: ${layers[turn % 4]}\n    length: ${(8 + (i % 5) + (vary % 997) * 0.001).toFixed(3)} mm\n    width: ${width} um\n    gap: ${width + 40} um`);
+      path.push(
+        `  - trace: run-${i}\n    stackup: board.main\n    layer: ${layers[turn % 4]}\n    length: ${(8 + (i % 5) + (vary % 997) * 0.001).toFixed(3)} mm\n    width: ${width} um\n    gap: ${width + 40} um`,
+      );
       turn++;
     } else if (i < inner - 1) {
-      path.push(`  - via: hop-${i}\n    stackup: board.main\n    drill: 0.2 mm\n    antipad: 0.7 mm\n    pitch: 0.8 mm\n    backdrill: { bottom: 0.2 mm ± 0.05 mm }`);
+      path.push(
+        `  - via: hop-${i}\n    stackup: board.main\n    drill: 0.2 mm\n    antipad: 0.7 mm\n    pitch: 0.8 mm\n    backdrill: { bottom: 0.2 mm ± 0.05 mm }`,
+      );
     } else {
       path.push(`  - capacitor: spare-${i}\n    value: 100 nF`);
     }
   }
   path.push('  - capacitor: coupling\n    value: 220 nF\n    esl: 0.2 nH\n    pad-capacitance: 20 fF');
-  path.push('  - package: arrive\n    length: 9 mm\n    impedance: 96 ohm\n    delay: 6.8 ps/mm\n    loss: 0.08 dB/mm @ 12.9 GHz');
+  path.push(
+    '  - package: arrive\n    length: 9 mm\n    impedance: 96 ohm\n    delay: 6.8 ps/mm\n    loss: 0.08 dB/mm @ 12.9 GHz',
+  );
   return `lanewright: 1
 title: Bench ${vary}
 line-rate: ${rate}

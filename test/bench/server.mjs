@@ -16,7 +16,10 @@ export async function benchServer(serverFile, { keystrokes, settle }) {
   writeFileSync(file, text);
   const uri = pathToFileURL(file).href;
   const server = spawn(process.execPath, [serverFile, '--stdio'], { stdio: ['pipe', 'pipe', 'inherit'] });
-  const connection = createMessageConnection(new StreamMessageReader(server.stdout), new StreamMessageWriter(server.stdin));
+  const connection = createMessageConnection(
+    new StreamMessageReader(server.stdout),
+    new StreamMessageWriter(server.stdin),
+  );
   let fresh = () => {};
   connection.onNotification('lanewright/previewChanged', ({ version: at, stale }) => {
     if (!stale && at === version) fresh();
@@ -33,19 +36,31 @@ export async function benchServer(serverFile, { keystrokes, settle }) {
     processId: process.pid,
     rootUri: pathToFileURL(folder).href,
     workspaceFolders: [{ uri: pathToFileURL(folder).href, name: 'bench' }],
-    capabilities: { textDocument: { diagnostic: {}, inlayHint: {} }, workspace: { diagnostics: { refreshSupport: true }, configuration: true, workspaceFolders: true } },
+    capabilities: {
+      textDocument: { diagnostic: {}, inlayHint: {} },
+      workspace: { diagnostics: { refreshSupport: true }, configuration: true, workspaceFolders: true },
+    },
   });
   await connection.sendNotification('initialized', {});
-  await connection.sendNotification('textDocument/didOpen', { textDocument: { uri, languageId: 'lanewright-channel', version, text } });
+  await connection.sendNotification('textDocument/didOpen', {
+    textDocument: { uri, languageId: 'lanewright-channel', version, text },
+  });
   const findings = () => connection.sendRequest('textDocument/diagnostic', { textDocument: { uri } });
-  const hints = () => connection.sendRequest('textDocument/inlayHint', { textDocument: { uri }, range: { start: { line: 0, character: 0 }, end: { line: 60, character: 0 } } });
+  const hints = () =>
+    connection.sendRequest('textDocument/inlayHint', {
+      textDocument: { uri },
+      range: { start: { line: 0, character: 0 }, end: { line: 60, character: 0 } },
+    });
   await findings();
 
   const type = async (digit) => {
     version++;
     const changed = text.replace(/length: (\d+)\.\d+ mm/, `length: $1.${String(digit).padStart(3, '0')} mm`);
     text = changed;
-    await connection.sendNotification('textDocument/didChange', { textDocument: { uri, version }, contentChanges: [{ text }] });
+    await connection.sendNotification('textDocument/didChange', {
+      textDocument: { uri, version },
+      contentChanges: [{ text }],
+    });
   };
   const toFindings = [];
   const toPreview = [];
@@ -61,7 +76,8 @@ export async function benchServer(serverFile, { keystrokes, settle }) {
     await connection.sendRequest('lanewright/preview', { uri });
     toPreview.push(performance.now() - start);
   }
-  const memory = () => Number(/VmRSS:\s+(\d+)/.exec(readFileSync(`/proc/${server.pid}/status`, 'utf8'))?.[1] ?? 0) / 1024;
+  const memory = () =>
+    Number(/VmRSS:\s+(\d+)/.exec(readFileSync(`/proc/${server.pid}/status`, 'utf8'))?.[1] ?? 0) / 1024;
   const before = memory();
   for (let i = 0; i < settle; i++) {
     await type(i % 1000);

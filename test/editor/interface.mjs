@@ -9,7 +9,12 @@ import { startWorkbench } from './workbench.mjs';
 const root = join(dirname(fileURLToPath(import.meta.url)), '..', '..');
 export const pictures = join(root, 'test-results', 'pictures');
 
-const THEMES = { light: 'Default Light Modern', dark: 'Default Dark Modern', 'high-contrast': 'Default High Contrast', 'high-contrast-light': 'Default High Contrast Light' };
+const THEMES = {
+  light: 'Default Light Modern',
+  dark: 'Default Dark Modern',
+  'high-contrast': 'Default High Contrast',
+  'high-contrast-light': 'Default High Contrast Light',
+};
 
 /** A via typed before the cable, key by key as a person would. */
 const NEW_VIA = ['- via: extra', 'stackup: sled.main', 'drill: 0.25 mm', 'antipad: 0.85 mm', 'pitch: 0.9 mm', 'to: L6'];
@@ -53,12 +58,21 @@ export async function run(browser) {
     });
     if (page && name === 'light') {
       await check('a via typed by hand brings its hint and its finding', async () => {
-        await page.locator('.view-line', { hasText: 'cable' }).first().waitFor().catch(() => {});
+        await page
+          .locator('.view-line', { hasText: 'cable' })
+          .first()
+          .waitFor()
+          .catch(() => {});
         await goToLine(page, 79);
-        await poll(async () => (await page.locator('.view-line', { hasText: 'twinax' }).count()) > 0, 'the cable in view');
+        await poll(
+          async () => (await page.locator('.view-line', { hasText: 'twinax' }).count()) > 0,
+          'the cable in view',
+        );
         const line = await page.evaluate(() => {
           const numbers = [...document.querySelectorAll('.monaco-editor .line-numbers')];
-          const row = [...document.querySelectorAll('.monaco-editor .view-line')].find((element) => element.textContent.includes('cable:'));
+          const row = [...document.querySelectorAll('.monaco-editor .view-line')].find((element) =>
+            element.textContent.includes('cable:'),
+          );
           const top = row.getBoundingClientRect().top;
           return Number(numbers.find((element) => Math.abs(element.getBoundingClientRect().top - top) < 4).textContent);
         });
@@ -75,7 +89,10 @@ export async function run(browser) {
         await poll(async () => (await page.locator('.view-line', { hasText: /extra/ }).count()) > 0, 'the typed via');
         await page.locator('.squiggly-error, .squiggly-warning').first().waitFor();
         const frame = await previewFrame(page);
-        await poll(async () => (await frame.locator('#preview').textContent()).includes('extra'), 'the typed via in the ledger');
+        await poll(
+          async () => (await frame.locator('#preview').textContent()).includes('extra'),
+          'the typed via in the ledger',
+        );
         await page.screenshot({ path: join(pictures, 'typed-via.png') });
       });
     }

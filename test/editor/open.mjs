@@ -16,10 +16,12 @@ export async function openExamples() {
     return;
   }
   const workbench = await startWorkbench();
-  console.log(`\nOpen this address in a browser; Ctrl+C ends it:\n${workbench.address(examples, [
-    ['extensionDevelopmentPath', workbench.remote(root)],
-    ['openFile', workbench.remote(join(examples, 'lanes', 'camera-sled.channel.yaml'))],
-  ])}`);
+  console.log(
+    `\nOpen this address in a browser; Ctrl+C ends it:\n${workbench.address(examples, [
+      ['extensionDevelopmentPath', workbench.remote(root)],
+      ['openFile', workbench.remote(join(examples, 'lanes', 'camera-sled.channel.yaml'))],
+    ])}`,
+  );
   process.once('SIGINT', () => {
     workbench.stop();
     process.exit(0);

@@ -27,7 +27,13 @@ export async function previewFrame(page) {
   const frame = await poll(async () => {
     for (const candidate of page.frames()) {
       if (!/fake\.html|\/webview\/browser\/pre\//.test(candidate.url())) continue;
-      if (await candidate.locator('#preview svg').count().catch(() => 0)) return candidate;
+      if (
+        await candidate
+          .locator('#preview svg')
+          .count()
+          .catch(() => 0)
+      )
+        return candidate;
     }
     return undefined;
   }, 'the preview');

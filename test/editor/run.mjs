@@ -31,7 +31,10 @@ async function runSuite(browser, host) {
   const outcome = { passed: [], failed: [] };
   const log = [];
   const ended = new Promise((resolve) => {
-    const limit = setTimeout(() => resolve({ code: 1, why: `no end within ${LIMIT_MILLISECONDS / 1000} s` }), LIMIT_MILLISECONDS);
+    const limit = setTimeout(
+      () => resolve({ code: 1, why: `no end within ${LIMIT_MILLISECONDS / 1000} s` }),
+      LIMIT_MILLISECONDS,
+    );
     page.exposeFunction('codeAutomationLog', (_type, args) => {
       const line = args.map(String).join(' ');
       log.push(line);
@@ -48,11 +51,21 @@ async function runSuite(browser, host) {
   page.on('console', (message) => log.push(`page: ${message.text()}`));
   try {
     const payload = [['openFile', workbench.remote(join(workspace, 'lanes', 'camera-sled.channel.yaml'))]];
-    if (host === 'browser') await serveAsWebExtension(context, { port: workbench.port, extension: root, suite: '/ext/dist/test/suite-browser.js' });
-    else payload.push(['extensionDevelopmentPath', workbench.remote(root)], ['extensionTestsPath', workbench.remote(join(root, 'dist', 'test', 'suite.cjs'))]);
+    if (host === 'browser')
+      await serveAsWebExtension(context, {
+        port: workbench.port,
+        extension: root,
+        suite: '/ext/dist/test/suite-browser.js',
+      });
+    else
+      payload.push(
+        ['extensionDevelopmentPath', workbench.remote(root)],
+        ['extensionTestsPath', workbench.remote(join(root, 'dist', 'test', 'suite.cjs'))],
+      );
     await page.goto(workbench.address(workspace, payload));
     const { code, why } = await ended;
-    if (code !== 0 && outcome.failed.length === 0) outcome.failed.push(`${host}: the suite ended with ${code}${why ? ` (${why})` : ''}`);
+    if (code !== 0 && outcome.failed.length === 0)
+      outcome.failed.push(`${host}: the suite ended with ${code}${why ? ` (${why})` : ''}`);
     if (outcome.failed.length) {
       await page.screenshot({ path: join(results, `editor-${host}.png`) });
       writeFileSync(join(results, `editor-${host}.log`), log.join('\n'));
@@ -77,7 +90,10 @@ async function main() {
       if (wanted.length && !wanted.includes(host)) continue;
       byHost[host] = await runSuite(browser, host);
     }
-    for (const [name, file] of [['interface', './interface.mjs'], ['installed', './installed.mjs']]) {
+    for (const [name, file] of [
+      ['interface', './interface.mjs'],
+      ['installed', './installed.mjs'],
+    ]) {
       if (wanted.length && !wanted.includes(name)) continue;
       byHost[name] = await (await import(file)).run(browser);
     }
@@ -87,7 +103,8 @@ async function main() {
   const count = (which) => Object.values(byHost).reduce((sum, outcome) => sum + outcome[which].length, 0);
   const summary = { passed: count('passed'), failed: count('failed'), byHost };
   writeFileSync(join(results, 'editor.json'), JSON.stringify(summary, null, 2));
-  for (const [host, { passed, failed }] of Object.entries(byHost)) console.log(`${host}: ${passed.length} passed, ${failed.length} failed`);
+  for (const [host, { passed, failed }] of Object.entries(byHost))
+    console.log(`${host}: ${passed.length} passed, ${failed.length} failed`);
   process.exitCode = summary.failed ? 1 : 0;
 }
 

@@ -30,11 +30,25 @@ interface Import {
 
 function importsOf(file: string): Import[] {
   const text = readFileSync(join(root, file), 'utf8');
-  return [...text.matchAll(/^(?:import|export)\s+(type\s+)?([^'";]*?)from\s+'([^']+)'|import\('([^']+)'\)|^import\s+'([^']+)'/gm)].map((match) => {
+  return [
+    ...text.matchAll(
+      /^(?:import|export)\s+(type\s+)?([^'";]*?)from\s+'([^']+)'|import\('([^']+)'\)|^import\s+'([^']+)'/gm,
+    ),
+  ].map((match) => {
     const target = match[3] ?? match[4] ?? match[5];
     const named = match[2] ?? '';
-    const allTypes = /^\{[^}]*\}\s*$/.test(named.trim()) && named.replace(/[{}]/g, '').split(',').filter((name) => name.trim()).every((name) => name.trim().startsWith('type '));
-    return { from: file, to: target.startsWith('.') ? relative(root, join(root, dirname(file), target)) : target, typesOnly: match[1] !== undefined || allTypes || match[4] !== undefined };
+    const allTypes =
+      /^\{[^}]*\}\s*$/.test(named.trim()) &&
+      named
+        .replace(/[{}]/g, '')
+        .split(',')
+        .filter((name) => name.trim())
+        .every((name) => name.trim().startsWith('type '));
+    return {
+      from: file,
+      to: target.startsWith('.') ? relative(root, join(root, dirname(file), target)) : target,
+      typesOnly: match[1] !== undefined || allTypes || match[4] !== undefined,
+    };
   });
 }
 
@@ -50,7 +64,9 @@ test('each folder imports only what the structure allows', () => {
 });
 
 test('src-core knows no editor, no protocol, no Node', () => {
-  const wrong = sources('src-core').flatMap(importsOf).filter(({ to }) => /^(node:|vscode|fs$|path$|os$|crypto$|child_process|worker_threads)/.test(to));
+  const wrong = sources('src-core')
+    .flatMap(importsOf)
+    .filter(({ to }) => /^(node:|vscode|fs$|path$|os$|crypto$|child_process|worker_threads)/.test(to));
   expect(wrong).toEqual([]);
 });
 

@@ -1,8 +1,8 @@
 import { defineDiagnosticsTests } from './diagnostics';
 import { defineEditingTests } from './editing';
+import { revert } from './harness';
 import { defineLanguageTests } from './language';
 import { definePreviewTests } from './preview';
-import { revert } from './harness';
 import { defineServerTests } from './server';
 
 /** The same tests in both hosts; `host` names the few that one of them cannot have. */

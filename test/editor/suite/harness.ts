@@ -4,11 +4,16 @@ export function ok(condition: unknown, message: string): asserts condition {
   if (!condition) throw new Error(message);
 }
 export function equal<T>(got: T, wanted: T, what: string): void {
-  if (JSON.stringify(got) !== JSON.stringify(wanted)) throw new Error(`${what}: wanted ${JSON.stringify(wanted)}, got ${JSON.stringify(got)}`);
+  if (JSON.stringify(got) !== JSON.stringify(wanted))
+    throw new Error(`${what}: wanted ${JSON.stringify(wanted)}, got ${JSON.stringify(got)}`);
 }
 
 /** Asks until the answer is there; the ceiling is a limit, not a wait. */
-export async function until<T>(what: string, ask: () => T | undefined | false | Promise<T | undefined | false>, ceilingMilliseconds = 15_000): Promise<T> {
+export async function until<T>(
+  what: string,
+  ask: () => T | undefined | false | Promise<T | undefined | false>,
+  ceilingMilliseconds = 15_000,
+): Promise<T> {
   const end = Date.now() + ceilingMilliseconds;
   for (;;) {
     const answer = await ask();
@@ -31,9 +36,11 @@ export async function open(path: string): Promise<vscode.TextEditor> {
 }
 
 /** Our findings of a file. */
-export const findingsOf = (uri: vscode.Uri) => vscode.languages.getDiagnostics(uri).filter(({ source }) => source === 'lanewright');
+export const findingsOf = (uri: vscode.Uri) =>
+  vscode.languages.getDiagnostics(uri).filter(({ source }) => source === 'lanewright');
 export const ruleOf = ({ code }: vscode.Diagnostic) => String(typeof code === 'object' ? code.value : code);
-export const finding = (uri: vscode.Uri, rule: string) => findingsOf(uri).find((diagnostic) => ruleOf(diagnostic) === rule);
+export const finding = (uri: vscode.Uri, rule: string) =>
+  findingsOf(uri).find((diagnostic) => ruleOf(diagnostic) === rule);
 
 /** Where a text stands in a document. */
 export function rangeOfText(document: vscode.TextDocument, text: string): vscode.Range {

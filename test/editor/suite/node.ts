@@ -7,5 +7,7 @@ export function run(): Promise<void> {
   const mocha = new Mocha({ ui: 'bdd', timeout: 30_000, reporter: class {} as never });
   mocha.suite.emit('pre-require', globalThis as never, '', mocha);
   defineSuite();
-  return new Promise((resolve, reject) => report(mocha.run((failures) => (failures ? reject(new Error(`${failures} failed`)) : resolve()))));
+  return new Promise((resolve, reject) =>
+    report(mocha.run((failures) => (failures ? reject(new Error(`${failures} failed`)) : resolve()))),
+  );
 }

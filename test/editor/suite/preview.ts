@@ -2,7 +2,8 @@ import * as vscode from 'vscode';
 import { ok, open, until } from './harness';
 
 const tabs = () => vscode.window.tabGroups.all.flatMap((group) => group.tabs);
-const previewTab = () => tabs().find(({ input }) => input instanceof vscode.TabInputWebview && input.viewType.includes('lanewright.preview'));
+const previewTab = () =>
+  tabs().find(({ input }) => input instanceof vscode.TabInputWebview && input.viewType.includes('lanewright.preview'));
 
 export function definePreviewTests(): void {
   describe('the preview', () => {

@@ -5,5 +5,9 @@ interface Runner {
 /** One line a test on the console, which `test/editor/run.mjs` reads. */
 export function report(runner: Runner): void {
   runner.on('pass', (test) => console.log(`[suite] ok ${test.fullTitle()}`));
-  runner.on('fail', (test, error) => console.log(`[suite] FAILED ${test.fullTitle()}: ${error?.message ?? ''} ${error?.stack?.split('\n').slice(1, 3).join(' ') ?? ''}`));
+  runner.on('fail', (test, error) =>
+    console.log(
+      `[suite] FAILED ${test.fullTitle()}: ${error?.message ?? ''} ${error?.stack?.split('\n').slice(1, 3).join(' ') ?? ''}`,
+    ),
+  );
 }

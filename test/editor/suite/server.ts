@@ -3,7 +3,10 @@ import { finding, ok, open, replace, revert, until } from './harness';
 
 interface Running {
   readonly host: 'node' | 'browser';
-  readonly client: { serverProcess?: { pid?: number; kill(signal: string): boolean }; sendNotification(method: string, params: unknown): Promise<void> };
+  readonly client: {
+    serverProcess?: { pid?: number; kill(signal: string): boolean };
+    sendNotification(method: string, params: unknown): Promise<void>;
+  };
 }
 
 export function defineServerTests(): void {
