@@ -178,7 +178,9 @@ function openPrinters(
     }),
   }));
   return {
-    file: (analysis) => open.forEach(({ printer }) => printer.file(analysis)),
+    file: (analysis) => {
+      for (const { printer } of open) printer.file(analysis);
+    },
     async end() {
       for (const { printer, path, chunks } of open) {
         printer.end();

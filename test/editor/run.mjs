@@ -1,6 +1,6 @@
 // The same suite in a real editor, in both hosts: desktop-like (Node) and browser worker; then the installed package.
 // Writes test-results/editor.json: { passed, failed, byHost }.
-import { cpSync, mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { cpSync, mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
