@@ -35,7 +35,7 @@ export function sandboxedFiles(root: string, disk: Disk): Files {
           (step) => step === '' || step === '.' || step === '..' || step.includes('\0') || step.includes(separator),
         )
       ) {
-        return { kind: 'refused', reason: `\`${file}\` is not a path inside the folder that is open` };
+        return { kind: 'refused', reason: 'its path is none inside the folder that is open' };
       }
       const folder = await realRoot;
       if (folder === undefined) return { kind: 'missing' };
@@ -45,11 +45,11 @@ export function sandboxedFiles(root: string, disk: Disk): Files {
       if (!inside(real, folder))
         return {
           kind: 'refused',
-          reason: `\`${file}\` is a link that leads out of the folder that is open; it was not read`,
+          reason: 'it is a link that leads out of the folder that is open',
         };
       const status = await disk.status(real);
       if (!status) return { kind: 'missing' };
-      if (status.kind !== 'file') return { kind: 'refused', reason: `\`${file}\` is not a file` };
+      if (status.kind !== 'file') return { kind: 'refused', reason: 'it is not a file' };
       const limit = /\.s\d+p$/i.test(file) ? TOUCHSTONE_LIMIT_BYTES : YAML_LIMIT_BYTES;
       if (status.bytes > limit) return { kind: 'too-large', bytes: status.bytes, limit };
       return { kind: 'text', text: await disk.readText(real) };

@@ -1,5 +1,7 @@
 import { expect, test } from 'vitest';
-import { exampleModel, exampleTexts } from './fixtures';
+import type { FileContent } from '../text/types';
+import { buildModel } from './build';
+import { exampleModel, exampleTexts, parsedOf } from './fixtures';
 import { changed, findingsOf, reportsIn, withPath } from './testing';
 
 test('the example has no finding and is read in full', () => {
@@ -216,4 +218,21 @@ test('the same values give the same model, wherever they stand in the text', () 
     exampleTexts({ channel: `# a comment\n${changed('path:\n', '\n\npath: # more\n\n')}` }),
   );
   expect(moved).toEqual(model);
+});
+
+test('a file that could not be read says why, and a text that is too large says nothing else', () => {
+  const reportsOf = (content: FileContent) => {
+    const inputs = { file: 'a.channel.yaml', files: new Map([['a.channel.yaml', content]]), today: '2026-12-01' };
+    const parsed = parsedOf(inputs);
+    const texts = [...parsed.values()].flatMap(({ reports }) => reports);
+    return [...texts, ...buildModel(inputs, parsed).reports].map(({ rule, message }) => [rule, message]);
+  };
+  expect(reportsOf({ kind: 'too-large', bytes: 2 ** 20 + 1, limit: 2 ** 20 })).toEqual([
+    ['limit', '`a.channel.yaml` is not read: it is larger than 1 MiB.'],
+  ]);
+  expect(reportsOf({ kind: 'refused', reason: 'it is a link that leads out of the folder that is open' })).toEqual([
+    ['refused-file', '`a.channel.yaml` is not read: it is a link that leads out of the folder that is open.'],
+  ]);
+  expect(reportsOf({ kind: 'missing' })).toEqual([['missing-file', 'This file is not there.']]);
+  expect(reportsOf({ kind: 'text', text: `#${' '.repeat(2 ** 20)}` }).map(([rule]) => rule)).toEqual(['limit']);
 });

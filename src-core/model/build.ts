@@ -12,7 +12,7 @@ import { nameTable } from './name-table';
 import { readParts } from './parts';
 import { isMapping, listAt, mappingAt } from './raw';
 import { formatReports, type ModelReport, placeIn } from './reports';
-import { gatherSources, type Sources } from './sources';
+import { gatherSources, type Sources, unreadable } from './sources';
 import { openShelves } from './stackups';
 import type { Model } from './types';
 
@@ -25,7 +25,7 @@ type ChannelRead = ReturnType<typeof readValues<'channel'>>;
  * texts alone, never on where they stand. Of a parts file it holds the names and the reports.
  */
 export function buildModel(inputs: Inputs, parsed: ReadonlyMap<FilePath, ParsedFile>): Model {
-  if (!parsed.has(inputs.file)) return emptyModel(inputs, []);
+  if (!parsed.has(inputs.file)) return emptyModel(inputs, unreadReports(inputs));
   const sources = gatherSources(inputs, parsed);
   const { own } = sources;
   if (own.parsed.kind !== 'channel' && own.parsed.kind !== 'parts') return emptyModel(inputs, []);
@@ -173,6 +173,13 @@ function versionReports({ own }: Sources): readonly ModelReport[] {
     own.file,
     [],
   );
+}
+
+/** Why the file itself has no text. */
+function unreadReports(inputs: Inputs): readonly ModelReport[] {
+  const { file } = inputs;
+  const [rule, message] = unreadable(inputs, file, file.slice(file.lastIndexOf('/') + 1));
+  return [{ rule, at: placeIn(file, []), message: rule === 'missing-file' ? 'This file is not there.' : message }];
 }
 
 function emptyModel({ file }: Inputs, reports: readonly ModelReport[]): Model {

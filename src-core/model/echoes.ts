@@ -11,8 +11,13 @@ export function withoutEchoes(
   parsed: ReadonlyMap<FilePath, ParsedFile>,
 ): readonly ModelReport[] {
   const faults = new Map<FilePath, ValuePath[]>();
-  for (const { file, reports: found } of parsed.values()) {
-    const paths = found.filter(({ rule, at }) => rule === 'yaml' && at.path.length > 0).map(({ at }) => at.path);
+  for (const { file, value, reports: found } of parsed.values()) {
+    // a text that is too large was not read at all: nothing else is said of it
+    const unread = value === null && found.some(({ rule }) => rule === 'limit');
+    const paths: ValuePath[] = found
+      .filter(({ rule, at }) => rule === 'yaml' && at.path.length > 0)
+      .map(({ at }) => at.path);
+    if (unread) paths.push([]);
     if (paths.length > 0) faults.set(file, paths);
   }
   const said = new Set<string>();

@@ -1,4 +1,4 @@
-import { cpSync, mkdirSync, readFileSync, symlinkSync, writeFileSync } from 'node:fs';
+import { cpSync, mkdirSync, readFileSync, symlinkSync, truncateSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import Ajv from 'ajv/dist/2020';
 import { describe, expect, test } from 'vitest';
@@ -148,6 +148,26 @@ describe('text for people', () => {
     writeFileSync(file, GOOD.replace('length: 64 mm', '"le\\e[31mngth\\u202e": 64 mm'));
     const { stdout } = await lanewright(['check', file, '--root', folder]);
     expect(stdout).not.toMatch(/[\u001b\u202e]/);
+  });
+});
+
+describe('files that are not read', () => {
+  test('too large, or a link that leads out: one finding each, and status 1', async () => {
+    const folder = emptyFolder();
+    const outside = emptyFolder();
+    writeFileSync(join(folder, 'sparse.channel.yaml'), '');
+    truncateSync(join(folder, 'sparse.channel.yaml'), 100 * 2 ** 20);
+    writeFileSync(join(outside, 'other.parts.yaml'), 'lanewright: 1\n');
+    symlinkSync(join(outside, 'other.parts.yaml'), join(folder, 'link.parts.yaml'));
+    for (const [name, rule] of [
+      ['sparse.channel.yaml', 'limit'],
+      ['link.parts.yaml', 'refused-file'],
+    ]) {
+      const result = await lanewright(['check', join(folder, name), '--root', folder, '--format', 'json']);
+      const { files }: CheckOutput = JSON.parse(result.stdout);
+      expect(files[0].findings.map((finding) => finding.rule)).toEqual([rule]);
+      expect(result.status).toBe(1);
+    }
   });
 });
 
