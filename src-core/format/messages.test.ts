@@ -315,3 +315,16 @@ test('whatever YAML makes, reading returns, with problems inside it', () => {
     { numRuns: 500, seed: 20 },
   );
 });
+
+test('a file that lacks a key is marked at its first line, an entry as a whole', () => {
+  expect(readValues('channel', {}).problems.map(({ lacks, on }) => [lacks, on])).toEqual([
+    ['lanewright', 'value'],
+    ['line-rate', 'value'],
+    ['path', 'value'],
+  ]);
+  expect(readValues('waiver', {}).problems.every(({ on }) => on === 'entry')).toBe(true);
+});
+test('a temperature below absolute zero', () => {
+  const { problems } = readValues('channel', { conditions: { temperature: '-300 degC' } });
+  expect(problems.at(-1)?.message).toBe('`-300 degC` is not possible here: it is at least -273 degC.');
+});

@@ -22,7 +22,7 @@ export function problemOf(error: SchemaError, name: SchemaName, value: unknown):
     case 'additionalProperties':
       return unknownKey(holder, String(error.params.additionalProperty));
     case 'required':
-      return missingKey(holder, String(error.params.missingProperty));
+      return missingKey(holder, String(error.params.missingProperty), name);
     case 'not':
       return sameTwice(holder);
     case 'minProperties':
@@ -69,7 +69,9 @@ function unknownKey(holder: Holder, key: string): FormatProblem {
   return { rule: 'schema', path, on: 'key', message: `${message}; did you mean \`${meant}\`?`, fixes: [rename] };
 }
 
-function missingKey(holder: Holder, key: string): FormatProblem {
+const isFile = (name: SchemaName) => name === 'channel' || name === 'parts' || name === 'config';
+
+function missingKey(holder: Holder, key: string, name: SchemaName): FormatProblem {
   const child = Object.hasOwn(known(holder), key) ? known(holder)[key] : undefined;
   const example = child?.examples?.[0] ?? child?.const;
   const fixes: FormatFix[] =
@@ -82,7 +84,9 @@ function missingKey(holder: Holder, key: string): FormatProblem {
           },
         ];
   const message = `${holder.noun.replace(/^a/, 'A')} lacks \`${key}\`${example === undefined ? '' : `, as \`${key}: ${example}\``}.`;
-  return { rule: 'schema', path: holder.path, on: 'entry', message, fixes, lacks: key };
+  // a file that lacks a key is marked at its first line, not from end to end
+  const on = holder.path.length === 0 && isFile(name) ? 'value' : 'entry';
+  return { rule: 'schema', path: holder.path, on, message, fixes, lacks: key };
 }
 
 /** Two keys for one thing. */

@@ -7,8 +7,8 @@ import { isMapping } from './say';
 import { problemOf } from './schema-error';
 import { wrongType } from './wanted';
 
-/** More says nothing new. */
-const MOST_PROBLEMS = 200;
+/** Beyond what is shown of a file they are counted, not read. */
+const MOST_PROBLEMS = 1000;
 
 /**
  * Checks a mapping against the schema of its kind: unknown, missing and reserved keys, wrong types. Quantities are text here;
@@ -23,7 +23,10 @@ export function validateEntry(name: SchemaName, value: unknown): FormatProblem[]
   for (const error of meantErrors(validate.errors ?? [], value)) {
     const problem = problemOf(error, name, value);
     if (!problem) continue;
-    const place = JSON.stringify([problem.path, problem.on === 'entry' ? problem.message : problem.on]);
+    const place = JSON.stringify([
+      problem.path,
+      problem.on === 'entry' || problem.lacks !== undefined ? problem.message : problem.on,
+    ]);
     if (!found.has(place)) found.set(place, problem);
     if (found.size >= MOST_PROBLEMS) break;
   }

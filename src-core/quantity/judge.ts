@@ -44,7 +44,7 @@ export function judged(
 function bound(value: number, [low, high]: readonly [number, number], dimension: Dimension): string {
   if (value > high) return `is at most ${show.dimension(high, dimension)}`;
   if (low === 0) return 'cannot be negative';
-  return value <= 0 ? 'is above zero' : `is at least ${show.dimension(low, dimension)}`;
+  return value <= 0 && low > 0 ? 'is above zero' : `is at least ${show.dimension(low, dimension)}`;
 }
 
 function implausible(quantity: Quantity, plausible: readonly [number, number], start: number, unitEnd: number) {

@@ -71,6 +71,7 @@ test.each<[string | number, QuantitySpec, string, string, string[]]>([
   ['12 mhz', any('frequency'), 'unit-spelling', 'Units keep their case, as in SI: `mhz` is written `MHz`.', ['12 MHz']],
   ['25 Gbps', rate, 'unit-spelling', '`Gbps` is written `Gb/s`.', ['25 Gb/s']],
   ['5 mils', length, 'unit-spelling', '`mils` is written `mil`.', ['5 mil']],
+  ['60 C', any('temperature'), 'unit-spelling', '`C` is written `degC`.', ['60 degC']],
   ['60 °C', any('temperature'), 'unit-spelling', '`°C` is written `degC`.', ['60 degC']],
   ['42 mn', length, 'unknown-unit', '`mn` is not a unit; did you mean `nm`?', ['42 nm']],
   [

@@ -46,8 +46,9 @@ export function unknownUnit(
     ...(safe && { safe }),
   });
   const sameLetters = sameButCase(token.text, dimensions);
-  if (sameLetters.length > 0) {
-    const fitting = sameLetters.filter(({ dimension }) => dimensions.includes(dimension));
+  const fitting = sameLetters.filter(({ dimension }) => dimensions.includes(dimension));
+  const habit = fitting.length === 0 ? habitOf(token.text, dimensions) : undefined;
+  if (sameLetters.length > 0 && !habit) {
     const names = sameLetters.map((unit) => `\`${unit.text}\``).join(' or ');
     const message = `Units keep their case, as in SI: ${quoted(token.text)} is written ${names}.`;
     return problem(
@@ -58,7 +59,6 @@ export function unknownUnit(
       fitting.map((unit) => spelling(unit, fitting.length === 1)),
     );
   }
-  const habit = habitOf(token.text, dimensions);
   if (habit) {
     return problem('unit-spelling', `${quoted(token.text)} is written \`${habit.text}\`.`, start, end, [
       spelling(habit, true),

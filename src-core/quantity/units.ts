@@ -44,6 +44,7 @@ const habits = new Map<string, string>([
   ['degrees', 'degC'],
   ['\u2103', 'degC'],
   ['deg', 'degC'],
+  ['celsius', 'degC'],
   ['db/inch', 'dB/in'],
   ['db/meter', 'dB/m'],
   ['ps/inch', 'ps/in'],

@@ -23,7 +23,7 @@ function suggestion(written: string, names: readonly string[], edit: (name: stri
   const near = nearest(written, names);
   const fixes: Fix[] =
     near === undefined ? [] : [{ title: `Write \`${near}\``, edits: [edit(near)], preferred: true, safe: true }];
-  return { words: near === undefined ? '' : `; did you mean \`${near}\`?`, fixes };
+  return { words: near === undefined ? '.' : `; did you mean \`${near}\`?`, fixes };
 }
 
 function unknownKey(at: Place, written: string, what: string, names: readonly string[]): Report {
@@ -61,7 +61,7 @@ function readRule(rule: AnyRule, value: unknown, at: Place, reports: Report[]) {
       const wanted = typeof rule.options[key] === 'number' ? 'a number above 0' : `a ${typeof rule.options[key]}`;
       reports.push({
         at: place,
-        message: `\`${key}\` of \`${rule.name}\` is ${wanted}; ${String(rule.options[key])} is the default`,
+        message: `\`${key}\` of \`${rule.name}\` is ${wanted}; ${String(rule.options[key])} is the default.`,
       });
     } else options[key] = written;
   }

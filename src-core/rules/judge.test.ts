@@ -102,6 +102,12 @@ describe('order and number', () => {
     expect(rest.map(({ message }) => message)).toEqual(more ? [expect.stringMatching(`^${more} more`)] : []);
     expect(rest.every(({ severity }) => severity === 'error')).toBe(true);
   });
+  test('of many in one mapping, too, the rest is counted', () => {
+    const keys = Array.from({ length: 20_000 }, (_, i) => `q${i}: 1`).join('\n');
+    const { findings } = analyseFiles(filesWith(`# written at the end\n${keys}`).files, time);
+    expect(findings).toHaveLength(201);
+    expect(findings[200].message).toBe('At least 800 more findings are not shown; 200 are.');
+  });
   test('findings stand in the order of the text', () => {
     const { findings } = analyseFiles(
       filesWith(

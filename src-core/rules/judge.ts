@@ -79,7 +79,8 @@ function shortened(findings: readonly Finding[], { inputs }: Judged): readonly F
     rule: 'limit',
     severity: bySeverity[MOST_FINDINGS].severity,
     at: { file: inputs.file, path: [] },
-    message: `${rest} more finding${rest === 1 ? ' is' : 's are'} not shown; ${MOST_FINDINGS} are.`,
+    // readers of texts stop counting at a thousand
+    message: `${findings.length < 1000 ? '' : 'At least '}${rest} more finding${rest === 1 ? ' is' : 's are'} not shown; ${MOST_FINDINGS} are.`,
   };
   return [...findings.filter((finding) => shown.has(finding)), more];
 }
