@@ -5,6 +5,8 @@ import { elementAtRequest, previewChanged, previewRequest, rangeRequest } from '
 import type { Extension } from './start';
 
 const VIEW_TYPE = 'lanewright.preview';
+/** Whether the preview is locked, kept by the workspace so that it survives a reload. */
+const LOCKED = 'lanewright.previewLocked';
 
 interface Preview {
   readonly panel: vscode.WebviewPanel;
@@ -12,6 +14,8 @@ interface Preview {
   locked: boolean;
   /** Only the newest answer is shown. */
   generation: number;
+  /** Closed: an answer that comes later has nowhere to go. */
+  gone: boolean;
 }
 
 /** The preview beside the text: one panel that follows the active channel, or is locked to its own. */
@@ -34,6 +38,7 @@ export function registerPreview(context: vscode.ExtensionContext, extension: Ext
     preview = adopt(panel, uri, context, extension, () => {
       preview = undefined;
     });
+    void context.workspaceState.update(LOCKED, false);
   };
 
   return vscode.Disposable.from(
@@ -47,12 +52,16 @@ export function registerPreview(context: vscode.ExtensionContext, extension: Ext
       if (!preview) return;
       preview.locked = !preview.locked;
       preview.panel.title = titleOf(preview);
+      void context.workspaceState.update(LOCKED, preview.locked);
     }),
     vscode.window.registerWebviewPanelSerializer(VIEW_TYPE, {
       async deserializeWebviewPanel(panel, state: PageState | undefined) {
-        preview = adopt(panel, state?.uri ? vscode.Uri.parse(state.uri) : undefined, context, extension, () => {
+        const uri = state?.uri ? vscode.Uri.parse(state.uri) : activeChannel()?.document.uri;
+        preview = adopt(panel, uri, context, extension, () => {
           preview = undefined;
         });
+        preview.locked = context.workspaceState.get(LOCKED, false);
+        panel.title = titleOf(preview);
       },
     }),
     extension.client.onNotification(previewChanged, ({ uri, stale }) => {
@@ -83,7 +92,9 @@ const sameUri = (text: string, uri: vscode.Uri) => vscode.Uri.parse(text).toStri
 
 const nameOf = (uri: vscode.Uri | undefined) => uri?.path.split('/').pop() ?? '';
 const titleOf = ({ uri, locked }: Preview) => `${locked ? 'Locked preview' : 'Preview'}: ${nameOf(uri)}`;
-const post = ({ panel }: Preview, message: ToPage) => void panel.webview.postMessage(message);
+const post = ({ panel, gone }: Preview, message: ToPage) => {
+  if (!gone) void panel.webview.postMessage(message);
+};
 
 function newNonce(): string {
   const bytes = crypto.getRandomValues(new Uint8Array(24));
@@ -100,9 +111,14 @@ function adopt(
   const dist = vscode.Uri.joinPath(context.extensionUri, 'dist');
   const { webview } = panel;
   webview.options = { enableScripts: true, localResourceRoots: [dist], enableCommandUris: false };
-  const preview: Preview = { panel, uri, locked: false, generation: 0 };
+  const preview: Preview = { panel, uri, locked: false, generation: 0, gone: false };
   panel.title = titleOf(preview);
-  panel.onDidDispose(gone);
+  const icon = (name: string) => vscode.Uri.joinPath(context.extensionUri, 'client', 'extension', 'icons', name);
+  panel.iconPath = { light: icon('light.svg'), dark: icon('dark.svg') };
+  panel.onDidDispose(() => {
+    preview.gone = true;
+    gone();
+  });
   webview.onDidReceiveMessage((message: unknown) => {
     const read = readFromPage(message);
     if (read) void answer(preview, read, extension);
@@ -136,12 +152,13 @@ async function refresh(preview: Preview, { client }: Extension): Promise<void> {
     post(preview, { type: 'nothing', reason: 'Open a channel file to see it here.' });
     return;
   }
+  // The explorer's menu names files that no editor shows: the server computes what is open.
+  await Promise.resolve(vscode.workspace.openTextDocument(uri)).catch(() => undefined);
   const answerOfServer = await client
     .sendRequest(previewRequest, { uri: client.code2ProtocolConverter.asUri(uri) })
     .catch(() => null);
   if (generation !== preview.generation) return;
-  if (!answerOfServer)
-    post(preview, { type: 'nothing', reason: `${nameOf(uri)} is not computed yet. Open it in an editor.` });
+  if (!answerOfServer) post(preview, { type: 'nothing', reason: `${nameOf(uri)} is not computed yet.` });
   else
     post(preview, {
       type: 'data',

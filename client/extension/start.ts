@@ -33,7 +33,13 @@ export async function start(context: vscode.ExtensionContext, host: Host): Promi
   const deaths = rememberDeaths();
   const client = host.createClient(context, clientOptions(context, output, status, deaths));
   running = client;
-  const extension: Extension = { client, host: host.name, output, deaths, restart: () => restart(client, output) };
+  const extension: Extension = {
+    client,
+    host: host.name,
+    output,
+    deaths,
+    restart: () => restart(client, output, status),
+  };
 
   status.starting();
   context.subscriptions.push(
@@ -99,7 +105,8 @@ function clientOptions(
 }
 
 /** `stop` gives up on a server that does not answer within 2 s and throws: it is then replaced all the same. */
-async function restart(client: BaseLanguageClient, output: vscode.LogOutputChannel): Promise<void> {
+async function restart(client: BaseLanguageClient, output: vscode.LogOutputChannel, status: StatusItem): Promise<void> {
+  status.forgive();
   try {
     if (client.needsStop()) await client.stop();
   } catch (error) {

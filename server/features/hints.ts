@@ -16,7 +16,7 @@ export const inlayHints: Handler<InlayHintParams, InlayHint[] | null> =
     if (!at) return null;
     return hintsOf(at.analysis, at.file, fromRange(at.text, range))
       .filter(({ kind }) => isWanted(settings, kind))
-      .map((hint) => toInlayHint(services, at, textDocument.uri, hint));
+      .map((hint, i, all) => toInlayHint(services, at, textDocument.uri, hint, all[i - 1]?.offset === hint.offset));
   };
 
 const isWanted = ({ hints }: Settings, kind: Hint['kind']) => hints[kind];
@@ -31,6 +31,7 @@ function toInlayHint(
   { analysis, root, text }: Analysed,
   uri: string,
   { offset, label, kind, target, insert, element }: Hint,
+  follows: boolean,
 ): InlayHint {
   const targetText = target && analysis.parsed.get(target.file);
   const location = target &&
@@ -40,8 +41,9 @@ function toInlayHint(
     };
   return {
     position: positionAt(text, offset),
-    label: [{ value: label, ...(location && { location }) }],
-    paddingLeft: true,
+    // Hints at one spot read as one phrase: editors set them without a gap.
+    label: [...(follows ? [{ value: ', ' }] : []), { value: label, ...(location && { location }) }],
+    ...(!follows && { paddingLeft: true }),
     ...(kind === 'derived' && { kind: InlayHintKind.Parameter }),
     ...(insert && { textEdits: [toTextEdit(text, insert)] }),
     data: { uri, ...(element !== undefined && { element }) } satisfies HintData,

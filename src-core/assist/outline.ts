@@ -85,13 +85,15 @@ export function outlineOf(parsed: ParsedFile, analysis?: Analysis): readonly Out
   });
 }
 
-/** The entry that holds an offset: the element's name as the model has it. */
+/** The entry on whose lines an offset stands, its dash and indentation included: the element's name as the model has it. */
 export function elementAt(analysis: Analysis, offset: number): string | undefined {
   const parsed = analysis.parsed.get(analysis.model.file);
   if (!parsed) return undefined;
   return analysis.model.elements.find(({ place }) => {
-    const range = rangeOf(parsed, { ...place, on: 'entry' });
-    return range.start <= offset && offset <= range.end;
+    const { start, end } = rangeOf(parsed, { ...place, on: 'entry' });
+    const lineStart = parsed.text.lastIndexOf('\n', start - 1) + 1;
+    const isFirst = /^[\s-]*$/.test(parsed.text.slice(lineStart, start));
+    return (isFirst ? lineStart : start) <= offset && offset <= end;
   })?.name;
 }
 

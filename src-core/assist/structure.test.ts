@@ -28,7 +28,11 @@ test('the outline has sections, elements with figures, and ranges that hold each
     expect(range.start).toBeLessThanOrEqual(selection.start);
     expect(range.end).toBeGreaterThanOrEqual(selection.end);
   }
-  expect(elementAt(analysis, analysis.parsed.get(LANE)!.text.indexOf('board.mate'))).toBe('mate');
+  const { text } = analysis.parsed.get(LANE)!;
+  expect(elementAt(analysis, text.indexOf('board.mate'))).toBe('mate');
+  const lineOfMate = text.lastIndexOf('\n', text.indexOf('board.mate') - 1) + 1;
+  const firstLine = text.lastIndexOf('\n', text.lastIndexOf('- ', lineOfMate + 4)) + 1;
+  expect(elementAt(analysis, firstLine), 'at the start of its first line').toBe('mate');
 });
 
 test('folds follow the indentation, comments and regions', () => {

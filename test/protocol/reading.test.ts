@@ -154,8 +154,11 @@ describe('reading', () => {
     });
     const labels = hints.map(({ label }) => (label as { value: string }[]).map(({ value }) => value).join(''));
     expect(labels.some((label) => /^≈ stub .* → .* GHz$/.test(label))).toBe(true);
-    const layer = hints[labels.indexOf('to: L3')];
-    expect(layer.label).toEqual([{ value: 'to: L3', location: { uri: open.parts, range: expect.anything() } }]);
+    const layer = hints[labels.indexOf(', to: L3')];
+    expect(layer.label).toEqual([
+      { value: ', ' },
+      { value: 'to: L3', location: { uri: open.parts, range: expect.anything() } },
+    ]);
     expect(layer.textEdits).toHaveLength(1);
     expect(layer.tooltip).toBeUndefined();
     expect(await open.client.request('inlayHint/resolve', layer)).toHaveProperty(
