@@ -5,6 +5,7 @@ import type { Decay } from '../networks/grid';
 import type { TouchstoneResult } from '../networks/touchstone-types';
 import type { Networks } from '../networks/types';
 import { cascadeOf } from './cascade';
+import { remainingError } from './remaining-error';
 import type { Cascade } from './types';
 
 export interface Chain {
@@ -52,13 +53,21 @@ export function settledChain(
       checkTime,
     });
     checkTime?.();
-    const cascade = cascadeOf(networks, before?.cascade);
+    const cascade = withError(cascadeOf(networks, before?.cascade), before, networks, model);
     if (networks !== before?.networks) computed.networks += networks.computed ?? 0;
     if (cascade !== before?.cascade) computed.products += cascade.products ?? 0;
     attempts.push({ networks, cascade });
     const { grid } = networks;
     measured = measuredDecay(model, cascade.total, grid);
-    if (grid.remainingError !== undefined || 4 * measured.decaySeconds * grid.stepHz <= 1) break;
+    if (grid.tooCoarse || 4 * measured.decaySeconds * grid.stepHz <= 1) break;
   }
   return { ...attempts[attempts.length - 1], attempts, computed };
+}
+
+/** What a grid that is too coarse does to the cursors, measured where networks or ends changed. */
+function withError(cascade: Cascade, before: Chain | undefined, networks: Networks, model: Model): Cascade {
+  if (!networks.grid.tooCoarse || networks === before?.networks) return cascade;
+  const error = remainingError(model, networks, cascade.total);
+  if (cascade === before?.cascade && error === cascade.remainingError) return cascade;
+  return { ...cascade, remainingError: error };
 }

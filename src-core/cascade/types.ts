@@ -19,6 +19,8 @@ export interface Cascade {
   /** Network from the input of element i to the output of element j, inclusive. Kept. */
   readonly between: (from: number, to: number) => Network;
   readonly resonances: readonly Resonance[];
+  /** Set where the grid is too coarse for the response: share of the main cursor by which what folds back may falsify a cursor. */
+  readonly remainingError?: number;
   /** Products by their two factors, handed from one cascade to the next; opaque. */
   readonly kept?: unknown;
   /** How many products were computed, not found. */

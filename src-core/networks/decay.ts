@@ -1,7 +1,7 @@
 import type { Model } from '../model/types';
 import type { Decay } from './grid';
 import { inverseTransform } from './inverse-transform';
-import { endFilters } from './pulse-spectrum';
+import { terminatedPulse, terminationReflection } from './terminated-pulse';
 import type { ElementFacts, Grid, Network } from './types';
 
 /** The decay that the estimate looks for: 60 dB, an amplitude of 1/1000. */
@@ -61,7 +61,7 @@ function skinTail({ nyquistFrequency, unitInterval }: Model, probes: readonly Pr
 /** The elements between what the two ends reflect. */
 function betweenEnds(model: Model, probes: readonly Probe[]): Probe[] {
   const frequencies = probeFrequencies(model.nyquistFrequency);
-  const end = (termination: Termination | undefined): Probe => ({
+  const end = (termination: Model['transmitter'] | Model['receiver']): Probe => ({
     reflections: Array.from(frequencies, (f) => {
       const { re, im } = terminationReflection(termination, model, f);
       return Math.hypot(re, im);
@@ -98,49 +98,13 @@ function echoes(probes: readonly Probe[]): number {
   return longest;
 }
 
-type Termination = { readonly impedanceOhms: number; readonly capacitanceFarads: number };
-
-/** Reflection of a termination with its capacitance at each leg, seen from the reference (differential; single-ended: of the conductor). */
-function terminationReflection(termination: Termination | undefined, model: Model, frequencyHz: number) {
-  if (!termination) return { re: 0, im: 0 };
-  const { referenceOhms, signalling } = model;
-  const legOhms = signalling === 'single-ended' ? referenceOhms : referenceOhms / 2;
-  const g = referenceOhms / termination.impedanceOhms;
-  const b = 2 * Math.PI * frequencyHz * termination.capacitanceFarads * legOhms;
-  const scale = 1 / ((1 + g) ** 2 + b * b);
-  return { re: ((1 - g) * (1 + g) - b * b) * scale, im: -2 * b * scale };
-}
-
 /**
  * The same measured on a computed response between its terminations: last instant at which the pulse is above 1/1000 of its peak.
  * Up to the symbol rate, where a symbol holds nothing: the instant is looked for, not the shape.
  * What lies in the last eighth of the window is taken as before time 0. A response that fills the window is at least that long.
  */
-export function measuredDecay(model: Model, { differential: s }: Network, grid: Grid): Decay {
-  const filters = endFilters(model);
-  const points = 2 ** grid.k + 1;
-  const spectrum = new Float64Array(2 * points);
-  for (let i = 0; i < points; i++) {
-    const f = grid.frequencies[i];
-    const at = 8 * i;
-    const source = terminationReflection(model.transmitter, model, f);
-    const load = terminationReflection(model.receiver, model, f);
-    // H = s21 / ((1 − s11 Γs)(1 − s22 Γl) − s12 s21 Γs Γl)
-    const pr = 1 - (s[at] * source.re - s[at + 1] * source.im);
-    const pi = -(s[at] * source.im + s[at + 1] * source.re);
-    const qr = 1 - (s[at + 6] * load.re - s[at + 7] * load.im);
-    const qi = -(s[at + 6] * load.im + s[at + 7] * load.re);
-    const gr = source.re * load.re - source.im * load.im;
-    const gi = source.re * load.im + source.im * load.re;
-    const tr = s[at + 2] * s[at + 4] - s[at + 3] * s[at + 5];
-    const ti = s[at + 2] * s[at + 5] + s[at + 3] * s[at + 4];
-    const dr = pr * qr - pi * qi - (tr * gr - ti * gi);
-    const di = pr * qi + pi * qr - (tr * gi + ti * gr);
-    const scale = (sinc(f / model.symbolRate) * filters(f)) / Math.max(dr * dr + di * di, 1e-12);
-    spectrum[2 * i] = (s[at + 4] * dr + s[at + 5] * di) * scale;
-    spectrum[2 * i + 1] = (s[at + 5] * dr - s[at + 4] * di) * scale;
-  }
-  const pulse = inverseTransform(spectrum);
+export function measuredDecay(model: Model, network: Network, grid: Grid): Decay {
+  const pulse = inverseTransform(terminatedPulse(model, network, grid.frequencies.subarray(0, 2 ** grid.k + 1)));
   const sampleSeconds = 1 / (grid.stepHz * pulse.length);
   let peak = 0;
   for (let n = 1; n < pulse.length; n++) if (Math.abs(pulse[n]) > Math.abs(pulse[peak])) peak = n;
@@ -148,5 +112,3 @@ export function measuredDecay(model: Model, { differential: s }: Network, grid: 
   while (last > peak && Math.abs(pulse[last]) < decayed * Math.abs(pulse[peak])) last--;
   return { delaySeconds: peak * sampleSeconds, decaySeconds: last * sampleSeconds };
 }
-
-const sinc = (x: number) => (x === 0 ? 1 : Math.sin(Math.PI * x) / (Math.PI * x));

@@ -35,16 +35,13 @@ describe('the rule', () => {
     expect(chooseGrid(model(wide), decay(3)).j).toBeGreaterThan(0);
   });
 
-  test('at most 16,384 points; beyond, what that may do to a cursor grows with what is missing', () => {
-    const errors = [20, 80, 100, 1000, 1e6].map((nanoseconds) => {
+  test('at most 16,384 points; what they cannot hold is said', () => {
+    const coarse = [20, 40, 41, 1000, 1e6].map((nanoseconds) => {
       const grid = chooseGrid(model(), decay(nanoseconds));
       expect(grid.points).toBeLessThanOrEqual(mostPoints);
-      return grid.remainingError;
+      return grid.tooCoarse ?? false;
     });
-    expect(errors[0]).toBeUndefined();
-    const rest = errors.slice(1) as number[];
-    expect(rest).toEqual([...rest].sort((a, b) => a - b));
-    expect(rest[rest.length - 1]).toBe(1);
+    expect(coarse).toEqual([false, false, true, true, true]); // 4,096 UI of 40 ps are 4 × 40.96 ns
   });
 });
 

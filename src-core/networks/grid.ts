@@ -25,7 +25,7 @@ export interface Decay {
  * Step = symbol rate / 2^k with the smallest k ≥ 8 for which it is at most 1 / (4 × the time, delay included, in which the response
  * decays by 60 dB): a response longer than 1/step would wrap round onto itself. End = 4 × Nyquist × 2^j with the smallest j for which
  * the pulse's spectrum beyond it (symbol, edge and receiver filter, without the channel's loss) is at most 0.1 % of its area.
- * At most 16,384 points; beyond that the step stays too coarse and `remainingError` says what that may do to a cursor.
+ * At most 16,384 points; beyond that the step stays too coarse, `tooCoarse` says so, and the cascade measures what that does to a cursor.
  *
  * Hysteresis: with a `previous` grid of the same symbol rate, that one is kept while it satisfies both conditions and is not finer than needed
  * by more than two halvings in k and one in j. It is handed in while one types, so that most edits keep the grid; at rest it is left out,
@@ -43,8 +43,7 @@ export function chooseGrid(model: Model, decay: Decay, previous?: Grid): Grid {
     if (spareK >= 0 && spareK <= keptHalvings && spareJ >= 0 && spareJ <= 1) return previous;
   }
   const grid = gridOf(symbolRate, Math.min(k, mostK), j);
-  if (k <= mostK) return grid;
-  return { ...grid, remainingError: wrapError(decay, 1 / grid.stepHz) };
+  return k <= mostK ? grid : { ...grid, tooCoarse: true };
 }
 
 /** The grid of given k and j. */
@@ -58,14 +57,3 @@ export function gridOf(symbolRate: number, k: number, j: number): Grid {
 
 const sameRate = ({ stepHz, k }: Grid, symbolRate: number) =>
   Math.abs(stepHz * 2 ** k - symbolRate) < 1e-9 * symbolRate;
-
-/**
- * What wraps round in a window that is too short, by the main cursor: an exponential decay by 60 dB in `decaySeconds`, or the t^(-3/2)
- * tail of skin effect, whichever is larger.
- */
-function wrapError({ decaySeconds, delaySeconds }: Decay, windowSeconds: number): number {
-  const decay = Math.max(decaySeconds - delaySeconds, 1e-15);
-  const tail = windowSeconds - delaySeconds;
-  if (tail <= 0) return 1;
-  return Math.min(1, 1e-3 ** Math.min(tail / decay, 50) + 1e-3 * (decay / tail) ** 1.5);
-}

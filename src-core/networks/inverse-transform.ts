@@ -7,7 +7,7 @@ import FFT from 'fft.js';
  */
 export function inverseTransform(spectrum: Float64Array): Float64Array {
   const samples = spectrum.length - 2;
-  const fft = plan(samples);
+  const fft = fftOf(samples);
   const whole = new Float64Array(2 * samples);
   whole.set(spectrum);
   whole[1] = 0;
@@ -26,7 +26,7 @@ export function inverseTransform(spectrum: Float64Array): Float64Array {
 /** Tables of sines by length; a handful of lengths exist, since the grid's are powers of two. */
 const plans = new Map<number, FFT>();
 
-function plan(samples: number): FFT {
+export function fftOf(samples: number): FFT {
   let made = plans.get(samples);
   if (!made) plans.set(samples, (made = new FFT(samples)));
   return made;

@@ -30,8 +30,8 @@ export interface Grid {
   /** Step = symbol rate / 2^k; end = 4 × Nyquist × 2^j. */
   readonly k: number;
   readonly j: number;
-  /** Set where 16,384 points do not suffice: share of the main cursor that may be wrong. */
-  readonly remainingError?: number;
+  /** Set where 16,384 points do not suffice; see `Cascade.remainingError`. */
+  readonly tooCoarse?: true;
 }
 
 export interface NetworkContext {

@@ -11,8 +11,8 @@ back onto its beginning. The finding tells, where it is more than \`percent\`, t
 and a strong reflection at both ends; a file with resonances that hardly decay does it too.`,
   bad: 'path: [{ cable: tail, length: 90 m, impedance: 100 ohm, delay: 6 ns/m, loss: 0.01 dB/m @ 5 GHz }]',
   good: 'path: [{ cable: tail, length: 0.3 m, impedance: 100 ohm, delay: 4 ns/m, loss: 1 dB/m @ 5 GHz }]',
-  *check({ model, networks }, { percent }) {
-    const error = networks!.grid.remainingError;
+  *check({ model, networks, cascade }, { percent }) {
+    const error = cascade?.remainingError;
     if (error === undefined || error <= percent / 100) return;
     yield {
       at: { file: model.file, path: ['path'], on: 'key' },

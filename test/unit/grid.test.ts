@@ -43,8 +43,8 @@ const peakOf = ({ pulse, samplesPerUi }: Time) => pulse.indexOf(pulse.reduce((a,
 describe('doubling either end of the grid moves no cursor by more than 0.2 % of the main one', () => {
   test.each(channels)('%s', (_, channel) => {
     const { model, networks, time } = analyse(inputsOf(exampleTexts({ channel })), undefined, { until: 'time' });
-    const { k, j, remainingError } = networks!.grid;
-    expect(remainingError).toBeUndefined();
+    const { k, j, tooCoarse } = networks!.grid;
+    expect(tooCoarse).toBeUndefined();
     const peak = peakOf(time!);
     const cursors = cursorsAt(time!, peak);
     const main = Math.max(...cursors);
