@@ -328,3 +328,14 @@ test('a temperature below absolute zero', () => {
   const { problems } = readValues('channel', { conditions: { temperature: '-300 degC' } });
   expect(problems.at(-1)?.message).toBe('`-300 degC` is not possible here: it is at least -273 degC.');
 });
+
+test.each([
+  ['channel', 'a channel'],
+  ['parts', 'a parts file'],
+  ['config', 'a configuration'],
+] as const)('an empty %s file says how one begins', (schema, noun) => {
+  const [{ message, fixes }, ...others] = readValues(schema, null).problems;
+  expect(message).toBe(`This file is empty: ${noun} begins with \`lanewright: 1\`.`);
+  expect(fixes.map(({ title }) => title)).toEqual(['Add `lanewright: 1`']);
+  expect(others).toEqual([]);
+});

@@ -24,7 +24,29 @@ export function readValues<Name extends SchemaName>(
   name: Name,
   raw: unknown,
   options: ReadOptions = {},
-): { values: Partial<ValuesOf<Name>>; problems: FormatProblem[] } {
+): { values: Partial<ValuesOf<Name>>; problems: readonly FormatProblem[] } {
+  if (!isMapping(raw)) return readAnew(name, raw, options);
+  const kept = known.get(raw);
+  const read =
+    kept?.name === name && kept.nyquistHz === options.nyquistHz
+      ? kept
+      : { name, nyquistHz: options.nyquistHz, ...readAnew(name, raw, options) };
+  if (read !== kept) known.set(raw, read);
+  // A copy of one's own: callers add to it what a part says.
+  return { values: Object.assign(Object.create(null), read.values), problems: read.problems };
+}
+
+interface Known {
+  readonly name: SchemaName;
+  readonly nyquistHz: number | undefined;
+  readonly values: unknown;
+  readonly problems: readonly FormatProblem[];
+}
+
+/** What was read of a mapping, as long as that lives: an edit leaves the mappings of other entries the same objects. */
+const known = new WeakMap<object, Known>();
+
+function readAnew<Name extends SchemaName>(name: Name, raw: unknown, options: ReadOptions) {
   const problems = [...validateEntry(name, raw), ...versionProblems(raw, name)];
   const bad = new Set(problems.filter(({ on }) => on !== 'key').map(({ path }) => JSON.stringify(path)));
   const reader: Reader = { bad, problems, options };

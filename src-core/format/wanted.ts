@@ -12,7 +12,7 @@ import { kindOfValue, listed, nounOf, quote } from './say';
 export function wrongType(path: ValuePath, node: NodeSchema, actual: unknown, name: SchemaName): FormatProblem {
   const wrong: Wrong = { path, node, actual, subject: subjectOf(path, name) };
   const isEmpty = actual === null || actual === undefined;
-  const { message, fixes } = isEmpty ? empty(wrong) : wanted(wrong);
+  const { message, fixes } = isEmpty ? empty(wrong, name) : wanted(wrong);
   return {
     rule: node['x-quantity'] && !isEmpty ? 'quantity' : 'schema',
     path,
@@ -44,7 +44,8 @@ const write = (path: ValuePath, text: string, more: Partial<FormatFix> = {}): Fo
 });
 
 /** A key whose value is still to be typed. */
-function empty({ path, node, subject }: Wrong): Said {
+function empty({ path, node, subject }: Wrong, name: SchemaName): Said {
+  if (path.length === 0 && (name === 'channel' || name === 'parts' || name === 'config')) return emptyFile(name);
   if (node['x-declares']) {
     const key = String(path.at(-1));
     const name = freeName(key);
@@ -61,6 +62,11 @@ function empty({ path, node, subject }: Wrong): Said {
     fixes: [],
   };
 }
+
+const emptyFile = (name: SchemaName): Said => ({
+  message: `This file is empty: ${nounOf(name)} begins with \`lanewright: 1\`.`,
+  fixes: [{ title: 'Add `lanewright: 1`', edits: [{ op: 'set', path: [], key: 'lanewright', text: '1' }] }],
+});
 
 function wanted(wrong: Wrong): Said {
   const { node, actual } = wrong;

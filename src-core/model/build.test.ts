@@ -236,3 +236,14 @@ test('a file that could not be read says why, and a text that is too large says 
   expect(reportsOf({ kind: 'missing' })).toEqual([['missing-file', 'This file is not there.']]);
   expect(reportsOf({ kind: 'text', text: `#${' '.repeat(2 ** 20)}` }).map(([rule]) => rule)).toEqual(['limit']);
 });
+
+test.each([
+  ['rules:\n  skew: off\n', ['schema «rules»']],
+  ['lanewright: 1\nrule:\n  skew: off\n', ['schema «rule»']],
+  ['lanewright: 1\nrules: off\n', ['schema «off»']],
+  ['lanewright: 2\n', ['format-version «2»']],
+  ['', ['schema «»']],
+  ['lanewright: 1\nx-team: 3\nrules: { skew: off }\n', []],
+])('the configuration %j is held against its schema', (text, findings) => {
+  expect(findingsOf({ 'lanewright.config.yaml': text })).toEqual(findings);
+});

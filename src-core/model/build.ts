@@ -12,7 +12,7 @@ import { nameTable } from './name-table';
 import { readParts } from './parts';
 import { isMapping, listAt, mappingAt } from './raw';
 import { formatReports, type ModelReport, placeIn } from './reports';
-import { gatherSources, type Sources, unreadable } from './sources';
+import { gatherSources, type Source, type Sources, unreadable } from './sources';
 import { openShelves } from './stackups';
 import type { Model } from './types';
 
@@ -28,6 +28,7 @@ export function buildModel(inputs: Inputs, parsed: ReadonlyMap<FilePath, ParsedF
   if (!parsed.has(inputs.file)) return emptyModel(inputs, unreadReports(inputs));
   const sources = gatherSources(inputs, parsed);
   const { own } = sources;
+  if (own.parsed.kind === 'config') return emptyModel(inputs, withoutEchoes(configReports(own), parsed));
   if (own.parsed.kind !== 'channel' && own.parsed.kind !== 'parts') return emptyModel(inputs, []);
   if (own.newer) return emptyModel(inputs, versionReports(sources));
   const reports: ModelReport[] = [...sources.reports];
@@ -174,6 +175,10 @@ function versionReports({ own }: Sources): readonly ModelReport[] {
     [],
   );
 }
+
+/** What the schema says of a configuration; the names of its rules and options are the judge's. */
+const configReports = ({ file, parsed }: Source) =>
+  formatReports(readValues('config', parsed.value).problems, file, []);
 
 /** Why the file itself has no text. */
 function unreadReports(inputs: Inputs): readonly ModelReport[] {

@@ -53,3 +53,9 @@ test('names that objects inherit are names like any other', () => {
     expect.stringContaining('`constructor` is not an option'),
   ]);
 });
+
+test('of a newer version nothing is read', () => {
+  const config = read({ lanewright: 2, rules: { 'stub-resonance': 'off', 'stub-resonanse': 'off' } });
+  expect(config.severityOf(rule('stub-resonance'))).toBe('warning');
+  expect(config.reports).toEqual([]);
+});

@@ -1,4 +1,5 @@
 import type { SeveritySetting } from '../../schemas/format/types';
+import { FORMAT_VERSION } from '../../schemas/format/version';
 import { quoted } from '../model/reports';
 import { nearest } from '../quantity/nearest';
 import type { ParsedFile } from '../text/parsed';
@@ -68,13 +69,17 @@ function readRule(rule: AnyRule, value: unknown, at: Place, reports: Report[]) {
   return { severity, options };
 }
 
+const isNewer = (version: unknown) =>
+  typeof version === 'number' && Number.isInteger(version) && version > FORMAT_VERSION;
+
 const isSensible = (value: unknown) => typeof value !== 'number' || (Number.isFinite(value) && value > 0);
 
 /** Reads a configuration; without a file every rule has its defaults. */
 export function readConfig(rules: readonly AnyRule[], parsed: ParsedFile | undefined): Config {
   const reports: Report[] = [];
   const settings = new Map<string, ReturnType<typeof readRule>>();
-  const written = isRecord(parsed?.value) ? parsed.value.rules : undefined;
+  // of a newer version nothing is read; its own finding says so
+  const written = isRecord(parsed?.value) && !isNewer(parsed.value.lanewright) ? parsed.value.rules : undefined;
   if (parsed && isRecord(written)) {
     for (const [name, value] of Object.entries(written)) {
       const at: Place = { file: parsed.file, path: ['rules', name] };
