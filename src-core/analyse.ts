@@ -159,7 +159,7 @@ function parseFiles({ files }: Inputs, previous: Analysis | undefined, run: Run)
       continue;
     }
     run.count('parsed', 1);
-    const read = run.attempt(file, () => parseCached(file, content.text));
+    const read = run.attempt(file, () => parseCached(file, content.text, before));
     parsed.set(file, read ?? { file, kind, text: content.text, value: null, reports: [], syntax: undefined });
   }
   return parsed;

@@ -103,7 +103,7 @@ export async function gatherInputs(
   };
   const parse = (path: FilePath, text: string): ParsedFile => {
     const before = parsedBefore?.get(path);
-    return before?.text === text ? before : parseCached(path, text);
+    return before?.text === text ? before : parseCached(path, text, before);
   };
   const waiting: FilePath[] = [file];
   const touchstones = new Set<FilePath>();
@@ -151,11 +151,14 @@ function same(content: FileContent, before: FileContent | undefined): FileConten
 const recent = new Map<FilePath, ParsedFile>();
 const MOST_RECENT = 32;
 
-/** `parseFile`, which keeps the result of a few texts: the same text gives the same object. */
-export function parseCached(file: FilePath, text: string): ParsedFile {
+/**
+ * `parseFile`, which keeps the result of a few texts: the same text gives the same object.
+ * @param before an earlier state of this file, where it is known
+ */
+export function parseCached(file: FilePath, text: string, before?: ParsedFile): ParsedFile {
   const kept = recent.get(file);
   if (kept?.text === text) return kept;
-  const parsed = parseFile(file, text, fileKind(file));
+  const parsed = parseFile(file, text, fileKind(file), before ?? kept);
   recent.delete(file);
   recent.set(file, parsed);
   if (recent.size > MOST_RECENT) recent.delete(recent.keys().next().value!);

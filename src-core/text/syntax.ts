@@ -59,6 +59,8 @@ export interface Syntax {
   readonly root: SyntaxNode;
   /** Line ending to write in edits. */
   readonly lineEnd: '\n' | '\r\n';
+  /** Read as a whole without a report, and nothing in it refers to anything else: an entry can be read again by itself. */
+  readonly clean?: boolean;
 }
 
 export const emptyScalar = (offset: number): ScalarNode => ({
