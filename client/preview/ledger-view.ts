@@ -1,4 +1,4 @@
-import { ledgerLines } from '../../src-core/plots/ledger-lines';
+import { LOSS_SO_FAR, ledgerLines } from '../../src-core/plots/ledger-lines';
 import type { LedgerTable, PreviewData } from '../../src-core/plots/preview-data';
 import type { Actions } from './app';
 import { element, setAttribute, setText } from './dom';
@@ -108,7 +108,7 @@ const svgNamespace = 'http://www.w3.org/2000/svg';
 
 /** A thin bar under the loss so far: how much of what the path may lose is spent. The text says it too. */
 function showShare(row: HTMLTableRowElement, share: number | undefined): void {
-  const cell = row.cells[row.cells.length - 3];
+  const cell = row.cells[LOSS_SO_FAR];
   const known = cell?.querySelector('svg');
   if (!cell || share === undefined) {
     known?.remove();
