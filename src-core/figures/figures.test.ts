@@ -33,6 +33,10 @@ describe('measures', () => {
   test('the phase is unwrapped over several turns', () => {
     expect(phaseDelay(linear, grid, 10e9)).toBeCloseTo(0.45e-9, 18);
   });
+  test('more delay than the grid can tell is told with the help of what is known of it', () => {
+    const long = networkThat({ lossDb: () => 1, delaySeconds: 7.3e-9 }).differential;
+    expect(phaseDelay(long, grid, 10e9, 7.1e-9)).toBeCloseTo(7.3e-9, 18);
+  });
   test('the worst return loss is told with its frequency and end', () => {
     const s = networkThat({ returnLossDb: () => 20, returnLossAtReceiverDb: (f) => (f === 6e9 ? 9 : 30) }).differential;
     expect(worstReturnLoss(s, grid, 10e9)).toMatchObject({ frequencyHz: 6e9, end: 'receiver' });

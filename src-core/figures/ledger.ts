@@ -45,7 +45,7 @@ export const rowFigureKinds: readonly RowFigureKind[] = [
     unit: 'dB',
     worse: 'lower',
     value: (m) => m.worstReturnLossDb,
-    text: show.loss,
+    text: show.returnLoss,
   },
   {
     name: 'first-resonance',

@@ -1,3 +1,4 @@
+import type { Networks } from '../networks/types';
 import { show } from '../quantity/show';
 import type { Computed } from './computed';
 import { insertionLossAt, phaseDelay, worstReturnLoss } from './measures';
@@ -19,6 +20,9 @@ export const parameterName = (pair: string, singleEnded: boolean) => (singleEnde
 
 const worstReflection = ({ model, networks, cascade }: Computed) =>
   networks && cascade && worstReturnLoss(cascade.total.differential, networks.grid, model.nyquistFrequency);
+
+const declaredDelay = ({ elements }: Networks) =>
+  elements.reduce((sum, { through, prepared }) => sum + (through ? 0 : (prepared?.facts.delaySeconds ?? 0)), 0);
 
 const conversionDb = ({ model, networks, cascade }: Computed) => {
   const full = cascade?.total.full;
@@ -47,10 +51,13 @@ export const figureKinds: readonly FigureKind[] = [
     unit: 'dB',
     worse: 'lower',
     value: (computed) => worstReflection(computed)?.lossDb,
-    text: show.loss,
+    text: show.returnLoss,
     note: (computed) => {
       const worst = worstReflection(computed);
-      return worst && `at ${show.frequency(worst.frequencyHz)}, seen from the ${worst.end}`;
+      // of what hardly reflects the place is a matter of rounding
+      return worst && worst.lossDb <= 60
+        ? `at ${show.frequency(worst.frequencyHz)}, seen from the ${worst.end}`
+        : undefined;
     },
   },
   {
@@ -59,7 +66,9 @@ export const figureKinds: readonly FigureKind[] = [
     unit: 's',
     worse: 'neither',
     value: ({ model, networks, cascade }) =>
-      networks && cascade && phaseDelay(cascade.total.differential, networks.grid, model.nyquistFrequency),
+      networks &&
+      cascade &&
+      phaseDelay(cascade.total.differential, networks.grid, model.nyquistFrequency, declaredDelay(networks)),
     text: show.time,
   },
   {
@@ -95,7 +104,7 @@ export const figureKinds: readonly FigureKind[] = [
     unit: 'dB',
     worse: 'lower',
     value: conversionDb,
-    text: show.loss,
+    text: show.returnLoss,
     note: () => 'below the incident differential wave',
   },
   {

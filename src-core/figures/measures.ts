@@ -80,15 +80,18 @@ export function worstReturnLoss(
 }
 
 /**
- * Phase delay of the transmission at a frequency, seconds: the phase unwrapped from 0 Hz on. The grid is fine enough for that: its
- * step turns the phase of the whole channel by a quarter of a turn at most.
+ * Phase delay of the transmission at a frequency, seconds: the phase unwrapped from 0 Hz on, after it was turned back by a delay that is
+ * known. A grid that holds the response turns by a quarter of a turn a step at most; one that is too coarse needs that delay.
  */
-export function phaseDelay(s: TwoPort, grid: Grid, frequencyHz: number): number {
+export function phaseDelay(s: TwoPort, grid: Grid, frequencyHz: number, knownSeconds = 0): number {
+  const known = 2 * Math.PI * grid.stepHz * knownSeconds;
+  const [cos, sin] = [Math.cos(known), Math.sin(known)];
   const last = Math.min(grid.points - 1, Math.max(1, Math.round(frequencyHz / grid.stepHz)));
   let phase = 0;
   for (let i = 1; i <= last; i++) {
     const [a, b, c, d] = [s[8 * i + S21], s[8 * i + S21 + 1], s[8 * i - 8 + S21], s[8 * i - 8 + S21 + 1]];
-    phase += Math.atan2(b * c - a * d, a * c + b * d);
+    const [re, im] = [a * c + b * d, b * c - a * d];
+    phase += Math.atan2(im * cos + re * sin, re * cos - im * sin);
   }
-  return -phase / (2 * Math.PI * last * grid.stepHz) + 0;
+  return knownSeconds - phase / (2 * Math.PI * last * grid.stepHz) + 0;
 }

@@ -24,7 +24,7 @@ export function returnLossOutcome(limit: Limit<'return-loss'>, computed: Compute
   if (!worst) return undefined;
   const { atHz, lossDb, end } = worst;
   const figure = (name: string, title: string, value: number, note?: string) =>
-    ({ name, title, value, unit: 'dB', text: show.loss(value), worse: 'lower', ...(note && { note }) }) as const;
+    ({ name, title, value, unit: 'dB', text: show.returnLoss(value), worse: 'lower', ...(note && { note }) }) as const;
   const where = `at ${show.frequency(atHz)}, seen from the ${end}`;
   return {
     name: limit.name,
@@ -33,7 +33,7 @@ export function returnLossOutcome(limit: Limit<'return-loss'>, computed: Compute
     limit: figure('limit', 'Least return loss', min.value),
     actual: figure('return-loss', 'Return loss', lossDb, where),
     marginShare: min.value > 0 ? (lossDb - min.value) / min.value : 0,
-    text: `return loss ${show.loss(lossDb)}, at least ${show.loss(min.value)}, ${where}`,
+    text: `return loss ${show.returnLoss(lossDb)}, at least ${show.returnLoss(min.value)}, ${where}`,
     atHz,
     end,
   };

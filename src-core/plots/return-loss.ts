@@ -33,8 +33,10 @@ export const returnLossPlot: Plot = {
       guides: nyquistGuide(model),
       marks: [],
       summary:
-        `Least ${show.loss(worst.lossDb)} up to Nyquist, at ${show.frequency(worst.frequencyHz)}, ` +
-        `seen from the ${worst.end}.${namesOf(limits)}`,
+        (worst.lossDb > 60
+          ? `Hardly anything comes back: ${show.returnLoss(worst.lossDb)} up to Nyquist.`
+          : `Least ${show.returnLoss(worst.lossDb)} up to Nyquist, at ${show.frequency(worst.frequencyHz)}, seen from the ${worst.end}.`) +
+        namesOf(limits),
     };
   },
 };

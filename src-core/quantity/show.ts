@@ -128,6 +128,10 @@ export function count(amount: number | { readonly length: number }, singular: st
   return `${number} ${number === 1 ? singular : plural}`;
 }
 
+/** Decibels up to where more of them say nothing; computed zeros would read as a figure. */
+const decibels = (most: number) => (value: number) =>
+  value > most && Number.isFinite(value) ? `above ${most} dB` : inDimension(value, 'loss');
+
 const of = (dimension: Dimension) => (value: number) => inDimension(value, dimension);
 
 /**
@@ -142,7 +146,9 @@ export const show = {
   capacitance: of('capacitance'),
   inductance: of('inductance'),
   voltage: of('voltage'),
-  loss: of('loss'),
+  loss: decibels(120),
+  /** Of what comes back or converts: further below than anyone measures reads `above 60 dB`. */
+  returnLoss: decibels(60),
   lossPerLength: of('lossPerLength'),
   delayPerLength: of('delayPerLength'),
   velocity: of('velocity'),

@@ -20,7 +20,7 @@ function reflectsMost(judged: Judged, limit: Limit, atHz: number): readonly Rela
   return [
     {
       at: nameOf(element),
-      message: `${quoted(element.name)} reflects the most there: ${show.loss(lossDb)} of return loss by itself.`,
+      message: `${quoted(element.name)} reflects the most there: ${show.returnLoss(lossDb)} of return loss by itself.`,
     },
   ];
 }
