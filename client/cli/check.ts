@@ -5,7 +5,7 @@ import type { FileContent, FilePath } from '../../src-core/text/types';
 import { type Command, Refusal } from './command';
 import { findFiles, openWorkspace, type Workspace } from './files';
 import { fixFile } from './fix';
-import { inputsFor } from './inputs';
+import { dependentsAmong, inputsFor } from './inputs';
 import { concise } from './printers/concise';
 import { json } from './printers/json';
 import { text } from './printers/text';
@@ -83,14 +83,16 @@ export const check: Command = {
     let failed = false;
     let timedOut = false;
     let previous: Analysis | undefined;
+    const withThoseWhoUse = dependentsAmong(workspace, files, paths);
     for (const [index, file] of files.entries()) {
-      const inputs = await inputsFor(workspace, file, options);
+      const read = async () => withThoseWhoUse(await inputsFor(workspace, file, options));
+      const inputs = await read();
       let analysis = analyse(inputs, previous, { until: 'link', outOfTime: fiveSeconds() });
       analysis = await fixFile(analysis, {
         workspace,
         options,
         terminal,
-        analyseAgain: async () => analyse(await inputsFor(workspace, file, options), undefined, { until: 'link' }),
+        analyseAgain: async () => analyse(await read(), undefined, { until: 'link' }),
       });
       const shown = told.once(analysis);
       print.file(shown);

@@ -13,6 +13,8 @@ const ORDER: readonly StageName[] = ['model', 'networks', 'cascade', 'time', 'li
 function stagesOf(rule: AnyRule, judged: Judged): readonly unknown[] {
   const names = ORDER.slice(0, ORDER.indexOf(rule.reads) + 1);
   const stages: unknown[] = names.map((name) => judged[name]);
+  const { dependents = [] } = judged.inputs;
+  if (rule.reads === 'model') for (const file of dependents) stages.push(judged.parsed.get(file));
   return rule.reads === 'link' ? [...stages, judged.linkIsStale] : stages;
 }
 
@@ -32,7 +34,12 @@ export function keptReports(rule: AnyRule, judged: Judged, options: Record<strin
   const byRule = kept.get(judged.model) ?? new Map<string, Kept>();
   kept.set(judged.model, byRule);
   const before = byRule.get(rule.name);
-  if (before && before.optionsText === optionsText && before.stages.every((stage, i) => stage === stages[i]))
+  if (
+    before &&
+    before.optionsText === optionsText &&
+    before.stages.length === stages.length &&
+    before.stages.every((stage, i) => stage === stages[i])
+  )
     return before.reports;
   const reports = [...rule.check(judged, options)];
   byRule.set(rule.name, { stages, optionsText, reports });

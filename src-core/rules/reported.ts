@@ -11,6 +11,8 @@ export function reportsOf({ inputs, parsed, model, networks }: Judged): readonly
   const texts = [...parsed.values()]
     // A configuration is judged where it stands, not in each channel below it.
     .filter(({ file, kind }) => file === inputs.file || (isChannel && kind !== 'config') || kind === 'parts')
+    // What uses a parts file is judged there.
+    .filter(({ file }) => !inputs.dependents?.includes(file) || model.files.includes(file))
     .flatMap(({ reports }) => reports);
   const elements = networks?.elements.flatMap(({ element, prepared }) =>
     (prepared?.notes ?? []).map((note) => ({ ...note, subject: element.name })),

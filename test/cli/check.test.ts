@@ -151,6 +151,25 @@ describe('text for people', () => {
   });
 });
 
+describe('parts that no lane uses', () => {
+  test('are told where a folder is checked, not where single files are named', async () => {
+    const folder = copy();
+    const board = join(folder, 'boards', 'controller.parts.yaml');
+    const text = readFileSync(board, 'utf8');
+    writeFileSync(
+      board,
+      text.replace('parts:\n', 'parts:\n  spare: { kind: connector, delay: 45 ps, impedance: 84 ohm }\n'),
+    );
+    const unused = async (...paths: string[]) =>
+      (await json(...paths, '--root', folder)).files
+        .flatMap(({ findings }) => findings)
+        .filter(({ rule }) => rule === 'unused-part')
+        .map(({ subject }) => subject);
+    expect(await unused(folder)).toEqual(['spare']);
+    expect(await unused(board, join(folder, 'lanes', 'blade.channel.yaml'))).toEqual([]);
+  });
+});
+
 describe('files that are not read', () => {
   test('too large, or a link that leads out: one finding each, and status 1', async () => {
     const folder = emptyFolder();

@@ -88,7 +88,9 @@ describe('report', () => {
     expect(html).toContain('<svg');
     expect(html).not.toMatch(/<script|src="http|href="http/);
     expect((await lanewright(['report', LANE, '--format', 'md'])).stdout).toContain('| ');
-    expect((await lanewright(['report', LANE, '--format', 'svg', '--plot', 'insertion-loss'])).stdout).toMatch(/^<svg/);
+    expect((await lanewright(['report', LANE, '--format', 'svg', '--plot', 'insertion-loss'])).stdout).toMatch(
+      /^<\?xml [^>]*\?>\n<svg /,
+    );
     expect(existsSync(`${page}.${process.pid}.tmp`)).toBe(false);
   });
 });
