@@ -53,29 +53,33 @@ export const limitSchemas = {
     ),
     note: Type.Optional(Type.String({ description: 'Free text.' })),
   }),
-  eye: mapping('eye', 'Least opening of the eye at the target BER: a rhombus of height and width.', {
-    eye: declares('limit', 'Its own name.'),
-    height: Type.Optional(
-      quantity('voltage', {
-        description: 'Least height, peak to peak.',
-        examples: ['40 mV'],
-        tolerance: false,
-        valid: [0, 100],
-        plausible: [1e-4, 2],
-      }),
-    ),
-    width: Type.Optional(
-      quantity('unitInterval', {
-        description: 'Least width.',
-        examples: ['0.35 UI'],
-        or: ['time'],
-        tolerance: false,
-        valid: [0, 1],
-        plausible: [0.01, 0.99],
-      }),
-    ),
-    note: Type.Optional(Type.String({ description: 'Free text.' })),
-  }),
+  eye: mapping(
+    'eye',
+    'Least opening of the eye at the target BER: a rhombus of height and width, at the phase where it fits best, at most a quarter of its width from the sampling instant.',
+    {
+      eye: declares('limit', 'Its own name.'),
+      height: Type.Optional(
+        quantity('voltage', {
+          description: 'Least height, peak to peak.',
+          examples: ['40 mV'],
+          tolerance: false,
+          valid: [0, 100],
+          plausible: [1e-4, 2],
+        }),
+      ),
+      width: Type.Optional(
+        quantity('unitInterval', {
+          description: 'Least width.',
+          examples: ['0.35 UI'],
+          or: ['time'],
+          tolerance: false,
+          valid: [0, 1],
+          plausible: [0.01, 0.99],
+        }),
+      ),
+      note: Type.Optional(Type.String({ description: 'Free text.' })),
+    },
+  ),
 };
 
 export type LimitKindName = keyof typeof limitSchemas;

@@ -4,17 +4,39 @@ import { show } from '../quantity/show';
 import type { Computed } from './computed';
 import type { Figure, LimitOutcome } from './types';
 
+/** Where the rhombus of a limit fits best. */
+export interface MaskFit {
+  /** By how much it may grow until it touches the contour of the eye; below 1 it does not fit. */
+  readonly scale: number;
+  /** Its middle from the sampling instant. */
+  readonly shiftUi: number;
+}
+
 /**
- * By how much the rhombus of height and width may grow until it touches the contour of the eye (below 1: it does not fit).
- * It stands on the sampling instant, in the middle of each opening.
+ * The rhombus of height and width in the eye. Its middle voltage is that of each opening at the sampling instant, where the threshold stands.
+ * In time it stands where it fits best, at most a quarter of its width from the sampling instant: an eye need not be even about that,
+ * but some of the width wanted has to be on either side of it. All eyes of PAM4 share one instant.
  */
-function rhombusScale({ phases, openings }: EyeDensity, heightVolts: number, widthUi: number): number {
+export function maskFit(density: EyeDensity, heightVolts: number, widthUi: number): MaskFit {
+  const { phases } = density;
+  const most = Math.floor((widthUi / 4) * phases + 1e-9);
+  let best: MaskFit = { scale: scaleAt(density, heightVolts, widthUi, 0), shiftUi: 0 };
+  for (let shift = 1; shift <= most; shift++) {
+    for (const shifted of [-shift, shift]) {
+      const scale = scaleAt(density, heightVolts, widthUi, shifted);
+      if (scale > best.scale + 1e-9) best = { scale, shiftUi: shifted / phases };
+    }
+  }
+  return best;
+}
+
+function scaleAt({ phases, openings }: EyeDensity, heightVolts: number, widthUi: number, shift: number): number {
   let scale = Number.POSITIVE_INFINITY;
   const centre = Math.floor(phases / 2);
   for (const { lower, upper } of openings) {
     const middle = (lower[centre] + upper[centre]) / 2;
     for (let i = 0; i < phases; i++) {
-      const distanceUi = Math.abs(i - centre) / phases;
+      const distanceUi = Math.abs(i - centre - shift) / phases;
       const room = Math.max(0, Math.min(upper[i] - middle, middle - lower[i]));
       scale = Math.min(scale, room / (heightVolts / 2) + distanceUi / (widthUi / 2));
     }
@@ -40,7 +62,7 @@ function tightest({ heightVolts, widthUi }: Wanted, link: Link): { of: 'height' 
   const least = width < height ? ({ of: 'width', share: width } as const) : ({ of: 'height', share: height } as const);
   // A rhombus of half the eye's size fits into anything that is called an eye; the contour is computed when it is read.
   if (!heightVolts || !widthUi || least.share < SAME || least.share >= 2) return least;
-  const corners = rhombusScale(link.density, heightVolts, widthUi);
+  const corners = maskFit(link.density, heightVolts, widthUi).scale;
   return corners < least.share ? { of: 'corners', share: corners } : least;
 }
 

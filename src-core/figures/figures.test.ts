@@ -107,6 +107,17 @@ describe('limits', () => {
       text: 'eye 50 mV × 0.4 UI, at least 45 mV × 0.38 UI, whose corners cut the contour',
     });
   });
+  test('an eye that is late passes a rhombus that is late with it, up to a quarter of its width', () => {
+    const values = { height: quantity(0.02, 'voltage'), width: quantity(0.24, 'unitInterval') };
+    const lateBy = (columns: number) => {
+      const link = linkWithEye(0.05, 0.4);
+      const [{ upper }] = link.density.openings;
+      const moved = upper.map((_, i) => upper[i - columns] ?? 0);
+      const openings = [{ upper: moved, lower: moved.map((edge) => -edge) }];
+      return outcome('eye', values, {}, { link: { ...link, density: { ...link.density, openings } } }).met;
+    };
+    expect([3, 6, 9].map(lateBy)).toEqual([true, true, false]);
+  });
   test('a width may be a time', () => {
     const values = { width: quantity(21e-12, 'time') };
     expect(outcome('eye', values, {}, { link: linkWithEye(0.05, 0.4) })).toMatchObject({

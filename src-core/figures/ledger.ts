@@ -114,12 +114,24 @@ function ownersOf(computed: Computed): Ledger['owners'] {
 function figuresOfRow(element: ElementNetwork, computed: Computed): readonly Figure[] {
   if (element.through) return [];
   const measures = measuresOf(element, computed.networks!.grid, computed.model.nyquistFrequency);
-  return rowFigureKinds.flatMap(({ name, title, unit, worse, ...kind }) => {
+  const before = writtenFigures.get(measures);
+  const figures: Figure[] = [];
+  for (const kind of rowFigureKinds) {
     const value = kind.value(measures, element, computed);
-    if (value === undefined || !Number.isFinite(value)) return [];
-    const note = kind.note?.(value);
-    return [{ name, title, unit, worse, value, text: kind.text(value), ...(note && { note }) }];
-  });
+    if (value === undefined || !Number.isFinite(value)) continue;
+    const kept = before?.find((figure) => figure.name === kind.name && Object.is(figure.value, value));
+    figures.push(kept ?? writtenFigure(kind, value));
+  }
+  writtenFigures.set(measures, figures);
+  return figures;
+}
+
+/** By what was measured: most edits leave most elements as they are, and writing numbers is most of the work. */
+const writtenFigures = new WeakMap<ElementMeasures, readonly Figure[]>();
+
+function writtenFigure({ name, title, unit, worse, text, note: noteOf }: RowFigureKind, value: number): Figure {
+  const note = noteOf?.(value);
+  return { name, title, unit, worse, value, text: text(value), ...(note && { note }) };
 }
 
 /** What each element spends and may spend, along the path. undefined where nothing could be computed. */

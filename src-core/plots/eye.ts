@@ -1,4 +1,5 @@
 import type { Analysis } from '../analysis';
+import { maskFit } from '../figures/eye-limit';
 import type { EyeDensity, Link } from '../link/types';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
@@ -80,7 +81,7 @@ function contoursOf({ phases, openings }: EyeDensity, ratio: string): Series[] {
 
 const isEyeLimit = (limit: Analysis['model']['limits'][number]): limit is Limit<'eye'> => limit.kind === 'eye';
 
-/** The rhombus of height and width in the middle of each opening; a lone height or width is a line. */
+/** The rhombus of height and width where it fits best into each opening; a lone height or width is a line at the sampling instant. */
 function masksOf({ model, limits }: Analysis, { density }: Link): PlotLimit[] {
   const centre = Math.floor(density.phases / 2);
   return model.limits.filter(isEyeLimit).flatMap((limit) => {
@@ -88,6 +89,7 @@ function masksOf({ model, limits }: Analysis, { density }: Link): PlotLimit[] {
     const width = limit.values.width;
     const widthUi = width ? (width.dimension === 'time' ? width.value / model.unitInterval : width.value) : 0;
     if (!(height > 0 || widthUi > 0)) return [];
+    const at = height > 0 && widthUi > 0 ? maskFit(density, height, widthUi).shiftUi : 0;
     const met = limits.find(({ name }) => name === limit.name)?.met ?? true;
     return density.openings.map(({ lower, upper }, index) => {
       const middle = (lower[centre] + upper[centre]) / 2;
@@ -96,7 +98,7 @@ function masksOf({ model, limits }: Analysis, { density }: Link): PlotLimit[] {
           density.openings.length > 1
             ? `${limit.name} (${names[3]?.[index]?.toLowerCase() ?? `eye ${index + 1}`})`
             : limit.name,
-        x: [-widthUi / 2, 0, widthUi / 2, 0],
+        x: [at - widthUi / 2, at, at + widthUi / 2, at],
         y: [middle, middle + height / 2, middle, middle - height / 2],
         met,
         forbidden: 'inside' as const,

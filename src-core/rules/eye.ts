@@ -8,7 +8,7 @@ export const eye: Rule = {
   reads: 'link',
   options: {},
   doc: `The eye at the target bit error ratio is smaller than its limit: in height, in width, or in the rhombus between them, which must
-lie inside the contour. Equalisers, noise and jitter as declared; nominal values. The ledger and the resonances say what closes it:
+lie inside the contour: at the voltage of the threshold, at the phase where it fits best, but at most a quarter of its width from the sampling instant. Equalisers, noise and jitter as declared; nominal values. The ledger and the resonances say what closes it:
 loss, a notch, reflections; so do the cursors of the pulse.`,
   bad: 'limits: [{ eye: main, height: 790 mV, width: 0.3 UI }]',
   good: 'limits: [{ eye: main, height: 40 mV, width: 0.3 UI }]',
