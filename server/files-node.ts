@@ -2,41 +2,17 @@ import { constants } from 'node:fs';
 import { lstat, open, readdir, realpath } from 'node:fs/promises';
 import { sep } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { diskOf } from '../src-core/disk';
 import { type Disk, sandboxedFiles } from '../src-core/sandbox';
 import type { FolderEntry, RootFiles } from './files';
 import { refusalOf } from './files';
 
-const SYSTEM_FOLDERS = ['/proc/', '/dev/', '/sys/'];
-/** Opening a pipe must not wait for a writer, and a link put there after the look-up must not be followed. */
-const OPEN_FLAGS = constants.O_RDONLY | (constants.O_NONBLOCK ?? 0) | (constants.O_NOFOLLOW ?? 0);
-
-const absent = (error: unknown): undefined => {
-  if (['ENOENT', 'ENOTDIR', 'ELOOP', 'ENAMETOOLONG'].includes((error as NodeJS.ErrnoException).code ?? ''))
-    return undefined;
-  throw error;
-};
-
-export const nodeDisk: Disk = {
-  separator: sep as '/' | '\\',
-  realPath: (path) => realpath(path).catch(absent),
-  async status(path) {
-    const facts = await lstat(path).catch(absent);
-    const isOrdinary = facts?.isFile() && !SYSTEM_FOLDERS.some((folder) => path.startsWith(folder));
-    return facts && { kind: isOrdinary ? 'file' : 'other', bytes: facts.size };
-  },
-  async readText(path) {
-    const handle = await open(path, OPEN_FLAGS);
-    try {
-      if (!(await handle.stat()).isFile()) throw new Error('not an ordinary file');
-      return withoutMark(await handle.readFile('utf8'));
-    } finally {
-      await handle.close();
-    }
-  },
-};
+const ordinary = diskOf({ separator: sep, realpath, lstat, open, constants });
 
 /** An editor hands out a text without its byte order mark; so does this. */
 const withoutMark = (text: string) => (text.charCodeAt(0) === 0xfeff ? text.slice(1) : text);
+
+export const nodeDisk: Disk = { ...ordinary, readText: async (path) => withoutMark(await ordinary.readText(path)) };
 
 /** Files of a disk below `rootUri` (`file:`). */
 export function nodeFiles(rootUri: string): RootFiles {

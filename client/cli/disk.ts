@@ -1,19 +1,6 @@
-import { lstat, readFile, realpath } from 'node:fs/promises';
+import { constants } from 'node:fs';
+import { lstat, open, realpath } from 'node:fs/promises';
 import { sep } from 'node:path';
-import type { Disk } from '../../src-core/sandbox';
+import { diskOf } from '../../src-core/disk';
 
-const absent = (error: unknown) => {
-  if (['ENOENT', 'ENOTDIR', 'ELOOP', 'ENAMETOOLONG'].includes((error as NodeJS.ErrnoException).code ?? ''))
-    return undefined;
-  throw error;
-};
-
-export const nodeDisk: Disk = {
-  separator: sep as '/' | '\\',
-  realPath: (path) => realpath(path).catch(absent),
-  status: (path) =>
-    lstat(path)
-      .then((found) => ({ kind: found.isFile() ? ('file' as const) : ('other' as const), bytes: found.size }))
-      .catch(absent),
-  readText: (path) => readFile(path, 'utf8'),
-};
+export const nodeDisk = diskOf({ separator: sep, realpath, lstat, open, constants });
