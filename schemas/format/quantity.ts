@@ -107,8 +107,6 @@ export const band = (description: string) =>
 
 /** A name of our own: `[a-z][a-z0-9-]*`, not a YAML 1.1 boolean. */
 export const NAME_PATTERN = '^(?!(?:true|false|null|yes|no|on|off)$)[a-z][a-z0-9-]*$';
-/** A name that may carry the prefix of a `use` entry. */
-export const QUALIFIED_NAME_PATTERN = '^[a-z][a-z0-9-]*(\\.[a-z][a-z0-9-]*)?$';
 export const LAYER_PATTERN = '^[A-Za-z0-9][A-Za-z0-9_.-]*$';
 
 /** What a name refers to; drives completion, jumps and rename. */

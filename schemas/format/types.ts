@@ -1,6 +1,6 @@
 /** Types of values as read; the single place that src-core imports them from. */
-export type { ChannelValues, ReceiverValues, TransmitterValues } from './channel';
-export type { ConfigValues, SeveritySetting } from './config';
+export type { ReceiverValues, TransmitterValues } from './channel';
+export type { SeveritySetting } from './config';
 export type { ElementKindName, ElementValues } from './elements/index';
 export type { EntryListName, SchemaName } from './index';
 export type { LimitKindName, LimitValues } from './limits';
@@ -10,8 +10,6 @@ export type {
   FoilValues,
   MaterialValues,
   PartsValues,
-  StackupRowKind,
-  StackupRowValues,
 } from './parts';
 export type { Band, Dimension, NameRole, Quantity } from './quantity';
 export type { ValuesOf } from './values';

@@ -21,5 +21,3 @@ export const elementKinds: Record<ElementKindName, ElementKind> = {
   stub: reversible(stubKind) as ElementKind,
   block: reversible(blockKind) as ElementKind,
 };
-
-export { stubNotch } from './open-stub';

@@ -28,10 +28,6 @@ export interface Draft {
   sourceOf: (key: string) => FilePath;
 }
 
-/** Where a key's value stands, or the element's name where it is not written. */
-export const placeOf = (draft: Draft, key: string): Place =>
-  key in draft.values || Object.hasOwn(draft.raw, key) ? (draft.places[key] ?? draft.place) : headOf(draft);
-
 /** The element's first line: its kind and name. */
 export const headOf = (draft: Draft): Place => ({
   file: draft.place.file,

@@ -8,8 +8,6 @@ import { type Cursor, isAtEnd, type NumberToken, scanNumber, scanUnit, skipSpace
 import { wantedUnit } from './unit-problems';
 import { inSi, type Unit, wantedAny } from './units';
 
-export type { QuantityCode, QuantityFix, QuantityProblem } from './problem';
-
 export interface QuantityContext {
   /** Half the symbol rate, where it is known: lets a fix write the frequency in place of `nyquist`. */
   readonly nyquistHz?: number;

@@ -2,4 +2,3 @@ export { applyEdits, resolveEdits } from './edits';
 export { parseFile } from './parse';
 export type { ParsedFile } from './parsed';
 export { rangeOf } from './range';
-export { placeAt, type Spot } from './spot';

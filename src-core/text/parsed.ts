@@ -9,6 +9,6 @@ export interface ParsedFile {
   readonly value: unknown;
   /** What the reader of the text found: syntax, tabs, duplicate keys, limits. */
   readonly reports: readonly (Report & { readonly rule: string })[];
-  /** Opaque to other folders; `rangeOf`, `placeAt`, `resolveEdits` in this folder read it. */
+  /** Opaque to other folders; `rangeOf`, `resolveEdits` in this folder read it. */
   readonly syntax: unknown;
 }

@@ -1,1 +1,0 @@
-export { buildModel, MAX_ELEMENTS } from './build';
