@@ -1,9 +1,9 @@
-// What one types on a fresh machine: `npm run demo`, `npm start`. Needs Node alone; installs and builds what is missing.
+// What one types on a fresh machine: `npm run demo`, `npm start`; and `npm run references`. Needs Node alone; installs and builds what is missing.
 import { spawnSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
 import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
-import { fileURLToPath } from 'node:url';
+import { fileURLToPath, pathToFileURL } from 'node:url';
 
 const here = dirname(fileURLToPath(import.meta.url));
 const stamp = join(here, 'node_modules', '.lanewright-lock');
@@ -54,7 +54,18 @@ async function start() {
   await openExamples();
 }
 
-const tasks = { demo, start, install: async () => install(), setup: () => setUp() };
+/** Writes what is generated and committed: the schemas and the format's reference, then the rules' reference. */
+async function references() {
+  const { bundleForNode } = await import('./build.mjs');
+  const { buildSchemas } = await import('./schemas/build.mjs');
+  await buildSchemas();
+  const bundle = join(here, 'dist', 'test', 'rules-reference.mjs');
+  await bundleForNode('src-core/rules/build.ts', bundle);
+  const { rulesReference } = await import(pathToFileURL(bundle).href);
+  writeFileSync(join(here, 'src-core', 'rules', 'README.md'), rulesReference());
+}
+
+const tasks = { demo, start, references, install: async () => install(), setup: () => setUp() };
 if (process.argv[1] === fileURLToPath(import.meta.url)) {
   const task = tasks[process.argv[2]];
   if (!task) {

@@ -27,7 +27,7 @@ function paragraph(rule: AnyRule): readonly string[] {
 
 const HEAD = `# Rules
 
-<!-- Written by \`npm run build\` from the list in \`src-core/rules/list.ts\`; do not edit. -->
+<!-- Written by \`npm run references\` from the list in \`src-core/rules/list.ts\`; do not edit. -->
 
 Each finding stands under the name of a rule. Severities and options are set in \`lanewright.config.yaml\`, the nearest one upwards:
 
@@ -39,7 +39,7 @@ rules:
 \`\`\`
 
 A finding is accepted only by an entry in the channel's \`waivers\`, with reason, date and, where it has one, value; beyond them it
-returns. The examples are laid over one complete channel (\`src-core/rules/testing.ts\`), entries of the same name in place of its own.
+returns. The examples are laid over one complete channel (\`src-core/rules/testing-base.ts\`), entries of the same name in place of its own.
 `;
 
 /** The reference of all rules as Markdown: `src-core/rules/README.md`, which rule links open. */
