@@ -1,7 +1,7 @@
 import { NotificationType, type Position, type Range, RequestType, type WorkspaceEdit } from 'vscode-languageclient';
 import type { FileContent, Place } from '../../src-core/text/types';
 
-/** The server's own requests and notifications; `server/protocol.ts` says what each means. A test compares the two lists. */
+/** The server's own requests and notifications; `server/protocol.ts` says what each means. `test/unit/own-protocol.test.ts` compares the two lists. */
 export const readFileRequest = new RequestType<{ uri: string; root: string; limit: number }, FileContent, void>(
   'lanewright/readFile',
 );

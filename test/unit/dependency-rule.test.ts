@@ -12,8 +12,26 @@ const mayImport: Record<string, readonly string[]> = {
   client: ['src-core', 'schemas'],
 };
 
-/** The stages of src-core in the order in which data flows; none imports a later one's code (types may be named). */
-const stages = ['text', 'model', 'networks', 'cascade', 'time', 'link', 'figures', 'rules'];
+/**
+ * The folders of src-core in the order in which data flows, what all use (`quantity`, `format`, `physics`) before its first user;
+ * none imports a later one's code (types may be named).
+ */
+const stages = [
+  'quantity',
+  'format',
+  'text',
+  'model',
+  'physics',
+  'elements',
+  'networks',
+  'cascade',
+  'time',
+  'link',
+  'figures',
+  'rules',
+  'plots',
+  'assist',
+];
 
 const sources = (folder: string): string[] =>
   readdirSync(join(root, folder), { withFileTypes: true }).flatMap((entry) => {
@@ -79,6 +97,39 @@ test('no stage imports the code of a later one', () => {
     }
   }
   expect(wrong).toEqual([]);
+});
+
+test('every folder of src-core has its place in that order', () => {
+  const folders = readdirSync(join(root, 'src-core'), { withFileTypes: true }).filter((entry) => entry.isDirectory());
+  // `stages` is not one: it holds the pieces of `analyse.ts`, which composes all of them.
+  expect(folders.map(({ name }) => name).filter((name) => !stages.includes(name))).toEqual(['stages']);
+});
+
+test('no file needs, by whatever way round, one that needs it', () => {
+  const files = Object.keys(mayImport).flatMap(sources);
+  const needs = new Map(
+    files.map((file) => [
+      file,
+      importsOf(file)
+        .filter(({ typesOnly }) => !typesOnly)
+        .flatMap(({ to }) => files.filter((other) => other === `${to}.ts` || other === `${to}/index.ts`)),
+    ]),
+  );
+  expect([...needs.values()].flat().length).toBeGreaterThan(files.length);
+  /** The way from a file back to itself, if there is one. */
+  const circle = (start: string) => {
+    const seen = new Set<string>();
+    const ways = [[start]];
+    for (let way = ways.pop(); way; way = ways.pop()) {
+      for (const next of needs.get(way[way.length - 1]) ?? []) {
+        if (next === start) return [...way, next].join(' → ');
+        if (!seen.has(next)) ways.push([...way, next]);
+        seen.add(next);
+      }
+    }
+    return undefined;
+  };
+  expect(files.map(circle).filter((way) => way !== undefined)).toEqual([]);
 });
 
 test('protocol types stop in the server, and nothing runs a program or opens a socket', () => {
