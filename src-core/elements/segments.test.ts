@@ -205,12 +205,18 @@ describe('trace geometry', () => {
     );
     const { facts } = prepared(of);
     const { differential } = networkOf(of, Float64Array.of(10e9, 20e9), model({ referenceOhms: facts.impedanceOhms }));
-    expect(s21(differential, 1).db / s21(differential, 0).db).toBeCloseTo(Math.SQRT2, 2);
+    // A little more than √2: the internal inductance falls, and the line's impedance with it.
+    const growth = s21(differential, 1).db / s21(differential, 0).db / Math.SQRT2;
+    expect(growth).toBeGreaterThan(1);
+    expect(growth).toBeLessThan(1.002);
   });
 
   test('declared loss takes the layer’s delay where none is written', () => {
     const { facts } = prepared(trace('L3', { impedance: ohms(100), loss: [dbPerMeter(30, 12.9e9)] }));
-    expect((facts.delaySeconds ?? 0) / ((0.1 * Math.sqrt(3.6)) / 299792458)).toBeCloseTo(1, 1);
+    // A little more than the layer's: the loss comes with its own phase.
+    const share = facts.delaySeconds! / ((0.1 * Math.sqrt(3.6)) / 299792458);
+    expect(share).toBeGreaterThan(1);
+    expect(share).toBeLessThan(1.005);
   });
 
   test('without stackup it is what it declares', () => {
