@@ -35,7 +35,7 @@ export function readArguments(command: Command, args: readonly string[]): { path
         table.map(({ name }) => name),
       );
       throw new Refusal(
-        `\`${token.rawName}\` is not an option of \`lanewright ${command.name}\`${near ? `; did you mean \`--${near}\`?` : ''} See \`lanewright ${command.name} --help\`.`,
+        `\`${token.rawName}\` is not an option of \`lanewright ${command.name}\`${near ? `; did you mean \`--${near}\`?` : '.'} See \`lanewright ${command.name} --help\`.`,
       );
     }
     if (option.value && token.value === undefined)

@@ -42,7 +42,9 @@ export function commandHelp(command: Command): string {
     'Examples',
     rows(command.examples),
     '',
-    'Exit status: 0, no finding that --fail-on names; 1, some; 2, it could not be carried out.',
+    command.options.some(({ name }) => name === 'fail-on')
+      ? 'Exit status: 0, no finding that --fail-on names; 1, some; 2, it could not be carried out.'
+      : 'Exit status: 0, done; 2, it could not be carried out.',
     '',
   ].join('\n');
 }
