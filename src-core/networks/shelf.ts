@@ -4,10 +4,13 @@ import type { Recipe } from './recipe';
 import { straightThrough } from './through';
 import type { ElementNetwork, Network, NetworkContext } from './types';
 
-/** What one analysis used, by content. */
+/** By what they were evaluated on, then by content. A recipe that is kept brings the same text, which is found without being read. */
+type ByContext<T> = Map<string, Map<string, T>>;
+
+/** What one analysis used. */
 interface Used {
-  readonly networks: Map<string, Network>;
-  readonly probes: Map<string, Probe>;
+  readonly networks: ByContext<Network>;
+  readonly probes: ByContext<Probe>;
 }
 
 /** What this analysis and the one before used; older networks are let go. */
@@ -23,7 +26,14 @@ export interface Kept {
 export function openShelf(previous: Kept | undefined) {
   const current: Used = { networks: new Map(), probes: new Map() };
   const shelves = [current, previous?.current, previous?.last];
+  const contextKeys = new Map<NetworkContext, string>();
   let computed = 0;
+
+  const keyOf = (context: NetworkContext) => {
+    let key = contextKeys.get(context);
+    if (key === undefined) contextKeys.set(context, (key = contextKey(context)));
+    return key;
+  };
 
   return {
     recipesFor: (basis: unknown) => (previous && sameValue(previous.basis, basis) ? previous.recipes : undefined),
@@ -39,31 +49,37 @@ export function openShelf(previous: Kept | undefined) {
     probe(recipe: Recipe, context: NetworkContext, nyquist: number): Probe | undefined {
       const { key } = recipe;
       if (key === undefined) return undefined;
-      const id = `${key} ${contextKey(context)}`;
-      let probe = find(shelves, (used) => used?.probes.get(id));
+      const on = keyOf(context);
+      let probe = find(shelves, (used) => used?.probes.get(on)?.get(key));
       if (!probe) {
         const network = attempt(recipe, context).network;
         probe = network && probeOf(network, recipe.prepared?.facts, nyquist);
       }
-      if (probe) current.probes.set(id, probe);
+      if (probe) put(current.probes, on, key, probe);
       return probe;
     },
 
     element(recipe: Recipe, context: NetworkContext): ElementNetwork & { failure?: unknown } {
       const { element, prepared, key } = recipe;
       if (key === undefined) return { ...throughOf(recipe, context), failure: recipe.failure };
-      const id = `${key} ${contextKey(context)}`;
-      let network = find(shelves, (used) => used?.networks.get(id));
+      const on = keyOf(context);
+      let network = find(shelves, (used) => used?.networks.get(on)?.get(key));
       if (!network) {
         const attempted = attempt(recipe, context);
         if (!attempted.network) return { ...throughOf(recipe, context), failure: attempted.failure };
         network = attempted.network;
         computed++;
       }
-      current.networks.set(id, network);
+      put(current.networks, on, key, network);
       return { element, prepared, network, through: false, evaluate: recipe.evaluate };
     },
   };
+}
+
+function put<T>(shelf: ByContext<T>, context: string, key: string, item: T): void {
+  const there = shelf.get(context);
+  if (there) there.set(key, item);
+  else shelf.set(context, new Map([[key, item]]));
 }
 
 const throughOf = ({ element, prepared }: Recipe, context: NetworkContext): ElementNetwork => ({

@@ -17,13 +17,24 @@ const record = (value: unknown): Record<string, unknown> =>
 
 /** Names as they are used, by the key that takes them: `material main.core`, and `material core` without its prefix. */
 function collect(value: unknown, into: Set<string>): Set<string> {
-  if (Array.isArray(value)) for (const one of value) collect(one, into);
-  else
-    for (const [key, one] of Object.entries(record(value))) {
-      if (typeof one !== 'string') collect(one, into);
-      else if (ROLES.has(key)) into.add(`${key} ${one}`).add(`${key} ${one.slice(one.lastIndexOf('.') + 1)}`);
-    }
+  for (const name of namesUsedIn(value)) into.add(name);
   return into;
+}
+
+/** By the value, which stays the same object while its text does. */
+const known = new WeakMap<object, readonly string[]>();
+
+function namesUsedIn(value: unknown): readonly string[] {
+  if (typeof value !== 'object' || value === null) return [];
+  const before = known.get(value);
+  if (before) return before;
+  const names: string[] = [];
+  for (const [key, one] of Object.entries(value)) {
+    if (typeof one !== 'string') for (const name of namesUsedIn(one)) names.push(name);
+    else if (ROLES.has(key)) names.push(`${key} ${one}`, `${key} ${one.slice(one.lastIndexOf('.') + 1)}`);
+  }
+  known.set(value, names);
+  return names;
 }
 
 const unused = (

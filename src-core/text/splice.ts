@@ -54,13 +54,21 @@ function movedChild(child: Child, by: number): Child {
   if (by === 0) return child;
   const range = movedRange(child.range, by);
   const value = moved(child.value, by);
-  return 'keyRange' in child ? { ...child, keyRange: movedRange(child.keyRange, by), value, range } : { value, range };
+  if (!('keyRange' in child)) return { value, range };
+  const { key, bare } = child;
+  return { key, keyRange: movedRange(child.keyRange, by), value, range, ...(bare && { bare }) };
 }
 
+/** Written out by kinds: a copy by `...` costs several times as much, and this runs over a whole text at each key stroke. */
 function moved(node: SyntaxNode, by: number): SyntaxNode {
   const range = movedRange(node.range, by);
-  if (node.type === 'list')
-    return { ...node, range, items: node.items.map((item) => movedChild(item, by) as ItemNode) };
-  if (node.type === 'map') return { ...node, range, pairs: node.pairs.map((pair) => movedChild(pair, by) as PairNode) };
-  return { ...node, range };
+  if (node.anchor !== undefined || node.type === 'alias') return { ...node, range }; // never in a text that is read on
+  if (node.type === 'scalar') return { type: 'scalar', value: node.value, style: node.style, range };
+  const { flow, column } = node;
+  if (node.type === 'list') {
+    const items = node.items.map((item) => movedChild(item, by) as ItemNode);
+    return { type: 'list', flow, column, items, range };
+  }
+  const pairs = node.pairs.map((pair) => movedChild(pair, by) as PairNode);
+  return { type: 'map', flow, column, pairs, range };
 }

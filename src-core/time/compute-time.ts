@@ -1,9 +1,10 @@
 import type { Cascade } from '../cascade/types';
 import type { Model } from '../model/types';
 import type { Networks } from '../networks/types';
+import { sameValue } from '../same-value';
 import { automaticCtle, type Complex, ctleResponse, ratioOfDb, receiverFilter } from './filters';
 import { inverseReal } from './fourier';
-import { symbolSpectrum } from './symbol-spectrum';
+import { type SymbolShape, symbolSpectrum } from './symbol-spectrum';
 import { tdr } from './tdr';
 import { type ModeEnds, transfer } from './terminations';
 import type { Time } from './types';
@@ -26,34 +27,50 @@ export function computeTime(model: Model, cascade: Pick<Cascade, 'total'>, { gri
   const riseTimeSeconds = transmitter?.riseTimeSeconds ?? 0.25 / symbolRate;
   const bandwidthHz = receiver?.bandwidthHz ?? 0.75 * symbolRate;
   const H = transfer(cascade.total, grid.frequencies, ...modeEnds(model));
-  const symbol = symbolSpectrum(
-    { symbolRate, riseTimeSeconds, taps: transmitter?.taps ?? [1], mainTap: transmitter?.mainTap ?? 0 },
-    grid.frequencies,
-  );
+  const shape = { symbolRate, riseTimeSeconds, taps: transmitter?.taps ?? [1], mainTap: transmitter?.mainTap ?? 0 };
+  const sent = filteredSymbol(shape, bandwidthHz, grid.frequencies);
   const uis = Math.round(symbolRate / grid.stepHz);
   // one line of the grid is 1/uis of the symbol rate, so that the Fourier sum times 1/uis is the pulse
   const spectrum = new Float64Array(H.length);
-  const filter: Complex = { re: 0, im: 0 };
-  for (let i = 0; i < grid.points; i++) {
-    receiverFilter(grid.frequencies[i], bandwidthHz, filter);
-    multiplyInto(spectrum, i, H[2 * i] / uis, H[2 * i + 1] / uis, symbol[2 * i], symbol[2 * i + 1]);
-    multiplyInto(spectrum, i, spectrum[2 * i], spectrum[2 * i + 1], filter.re, filter.im);
-  }
+  for (let i = 0; i < grid.points; i++)
+    multiplyInto(spectrum, i, H[2 * i] / uis, H[2 * i + 1] / uis, sent[2 * i], sent[2 * i + 1]);
   const perUi = samplesFor(uis, grid.points);
   const through = (dcGain: number, zeroShare: number, shape = automaticCtle(symbolRate)) =>
     inverseReal(equalised(spectrum, grid.frequencies, shape, dcGain, zeroShare), perUi * uis);
   const ctle = receiver?.ctle ?? 'none';
   const declared = typeof ctle === 'object';
   let pictured: Time['tdr'];
+  let parts: Time['ctleParts'];
   return {
     sampleSeconds: 1 / (symbolRate * perUi),
     samplesPerUi: perUi,
     pulse: declared ? through(ratioOfDb(ctle.dcGainDb), 1, ctle) : inverseReal(spectrum, perUi * uis),
-    ...(ctle === 'auto' ? { ctleParts: { flat: through(1, 0), rising: through(0, 1) } } : {}),
+    // Only the eye asks for them.
+    get ctleParts() {
+      return ctle === 'auto' ? (parts ??= { flat: through(1, 0), rising: through(0, 1) }) : undefined;
+    },
     get tdr() {
       return (pictured ??= tdr(cascade.total, grid, model.referenceOhms, riseTimeSeconds));
     },
   };
+}
+
+/** By frequencies: an edit of the path leaves both ends as they are. */
+const filteredSymbols = new WeakMap<Float64Array, { readonly from: unknown; readonly spectrum: Float64Array }>();
+
+/** What the transmitter sends for one symbol, through the receiver's filter. */
+function filteredSymbol(shape: SymbolShape, bandwidthHz: number, frequencies: Float64Array): Float64Array {
+  const from = { shape, bandwidthHz };
+  const kept = filteredSymbols.get(frequencies);
+  if (kept && sameValue(kept.from, from)) return kept.spectrum;
+  const spectrum = symbolSpectrum(shape, frequencies);
+  const filter: Complex = { re: 0, im: 0 };
+  for (let i = 0; i < frequencies.length; i++) {
+    receiverFilter(frequencies[i], bandwidthHz, filter);
+    multiplyInto(spectrum, i, spectrum[2 * i], spectrum[2 * i + 1], filter.re, filter.im);
+  }
+  filteredSymbols.set(frequencies, { from, spectrum });
+  return spectrum;
 }
 
 /** Terminations of both modes. Two legs in series halve a leg's capacitance for the differential mode, in parallel double it for the common. */
