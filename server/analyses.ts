@@ -1,5 +1,6 @@
 import { type CancellationToken, LSPErrorCodes, ResponseError } from 'vscode-languageserver';
 import type { AnalyseOptions, Analysis, Inputs } from '../src-core/analysis';
+import { fileKind } from '../src-core/inputs';
 import type { FilePath, Files } from '../src-core/text/types';
 import { idOf, type Located, type Root } from './roots';
 
@@ -10,6 +11,8 @@ const rank = (stage: Until | undefined) => (stage ? STAGES.indexOf(stage) : -1);
 /** Milliseconds. A burst of key strokes is one analysis; the eye waits until typing rests. */
 const EDIT_PAUSE = 5;
 const REST_BEFORE_LINK = 15;
+/** Whether somebody uses a part is told when typing rests: it changes no figure. */
+const REST_BEFORE_DEPENDENTS = 300;
 const TIME_FOR_ONE_FILE = 5000;
 
 /** What the server hands in: the core's functions, files, a clock. Tests hand in their own. */
@@ -75,6 +78,12 @@ interface Entry {
   timer?: ReturnType<typeof setTimeout>;
   closed: boolean;
 }
+
+/** Whether its figures or findings may depend on the file, not only whether it is one that uses it. */
+const isRead = ({ inputs }: Analysis, file: FilePath) => inputs.files.has(file) && !inputs.dependents?.includes(file);
+
+const mayUse = (user: FilePath, parts: FilePath) =>
+  fileKind(parts) === 'parts' && ['channel', 'parts'].includes(fileKind(user));
 
 export function keepAnalyses(parts: AnalysesParts): Analyses {
   const entries = new Map<string, Entry>();
@@ -197,7 +206,8 @@ export function keepAnalyses(parts: AnalysesParts): Analyses {
       for (const entry of entries.values()) {
         if (entry.located.root.key !== located.root.key) continue;
         if (entry.located.file === located.file) renew(entry, 'own', soon);
-        else if (!entry.analysis || entry.analysis.inputs.files.has(located.file)) renew(entry, 'used', soon);
+        else if (!entry.analysis || isRead(entry.analysis, located.file)) renew(entry, 'used', soon);
+        else if (mayUse(located.file, entry.located.file)) renew(entry, 'used', Math.max(soon, REST_BEFORE_DEPENDENTS));
       }
     },
     allChanged(root, soon = EDIT_PAUSE) {

@@ -1,5 +1,6 @@
 import type { CancellationToken, Diagnostic } from 'vscode-languageserver';
 import type { AnalyseOptions, Analysis, Inputs } from '../src-core/analysis';
+import { fileKind } from '../src-core/inputs';
 import type { FilePath, Files } from '../src-core/text/types';
 import { type ResultIds, toDiagnostic } from './diagnostics';
 import { idOf, type Located } from './roots';
@@ -41,7 +42,10 @@ export function keepClosedFiles({
   pause,
   announce,
 }: ClosedFilesParts): ClosedFiles {
-  const kept = new Map<string, { report: ClosedReport; root: string; dependsOn: ReadonlySet<FilePath> }>();
+  const kept = new Map<
+    string,
+    { report: ClosedReport; root: string; isParts: boolean; dependsOn: ReadonlySet<FilePath> }
+  >();
   const quiet = async (token: CancellationToken) => {
     while (services.analyses.busy() && !token.isCancellationRequested) await rest();
   };
@@ -55,7 +59,8 @@ export function keepClosedFiles({
       await quiet(token);
       if (token.isCancellationRequested) return undefined;
       const inputs = await gather(services.filesOf(located.root), located.file, today());
-      if (inputs.files.get(located.file)?.kind !== 'text') return undefined;
+      const content = inputs.files.get(located.file);
+      if (!content || content.kind === 'missing') return undefined;
       await announce(located, true);
       let items: Diagnostic[];
       try {
@@ -77,12 +82,22 @@ export function keepClosedFiles({
         await announce(located, false);
       }
       const report = { resultId: ids.idFor(`closed ${id}`, items), items };
-      kept.set(id, { report, root: located.root.key, dependsOn: new Set(inputs.files.keys()) });
+      kept.set(id, {
+        report,
+        root: located.root.key,
+        isParts: fileKind(located.file) === 'parts',
+        dependsOn: new Set(inputs.files.keys()),
+      });
       await pause();
       return report;
     },
     changed({ root, file }) {
-      for (const [id, entry] of kept) if (entry.root === root.key && entry.dependsOn.has(file)) kept.delete(id);
+      // Of a parts file's names this one may now use others, or some for the first time.
+      const mayUse = ['channel', 'parts'].includes(fileKind(file));
+      for (const [id, entry] of kept) {
+        if (entry.root !== root.key) continue;
+        if (entry.dependsOn.has(file) || (mayUse && entry.isParts)) kept.delete(id);
+      }
     },
     clear: () => kept.clear(),
   };

@@ -7,9 +7,10 @@ import {
 } from 'vscode-languageserver';
 import { analyse } from '../src-core/analyse';
 import { fileKind, gatherInputs } from '../src-core/inputs';
-import { keepAnalyses } from './analyses';
+import { type AnalysesParts, keepAnalyses } from './analyses';
 import { abilitiesFrom, NO_ABILITIES } from './client-abilities';
 import { keepClosedFiles } from './closed-files';
+import { gatherDependents } from './dependents';
 import { keepResultIds } from './diagnostics';
 import { followDocuments } from './documents';
 import { codeActions, FIX_ALL, resolveAction } from './features/actions';
@@ -79,12 +80,12 @@ export function startServer(connection: Connection, host: Host): void {
   };
 
   // Clients that cannot watch files: what was read holds for a second.
-  const kept = new Map<string, { disk: KeptFiles; files: RootFiles }>();
+  const kept = new Map<string, { root: Root; disk: KeptFiles; files: RootFiles }>();
   const keptOf = (root: Root) => {
     let entry = kept.get(root.key);
     if (!entry) {
       const disk = keepFiles(host.files(root), now, () => (client.watchFiles ? Number.POSITIVE_INFINITY : 1000));
-      entry = { disk, files: unsavedFirst(disk, (file) => documents.at({ root, file })?.text) };
+      entry = { root, disk, files: unsavedFirst(disk, (file) => documents.at({ root, file })?.text) };
       kept.set(root.key, entry);
     }
     return entry;
@@ -97,9 +98,14 @@ export function startServer(connection: Connection, host: Host): void {
     await connection.sendNotification(analysing, { uri, running });
     if (!running && !analyses.busy()) progress.idle();
   };
+  const gather: AnalysesParts['gather'] = async (files, file, day, previous, parsed) => {
+    const inputs = await gatherInputs(files, file, day, previous, parsed);
+    const root = [...kept.values()].find((entry) => entry.files === files)?.root;
+    return root ? gatherDependents(inputs, files, () => workspace.files(root)) : inputs;
+  };
   const analyses = keepAnalyses({
     analyse,
-    gather: (files, file, day, previous, parsed) => gatherInputs(files, file, day, previous, parsed),
+    gather,
     filesOf,
     today,
     now,
@@ -125,7 +131,16 @@ export function startServer(connection: Connection, host: Host): void {
     version: typeof LANEWRIGHT_VERSION === 'string' ? LANEWRIGHT_VERSION : '0',
     rulesReference: () => options.rulesReference ?? host.rulesReference ?? '',
   };
-  const closed = keepClosedFiles({ services, ids, analyse, gather: gatherInputs, today, now, pause, announce });
+  const closed = keepClosedFiles({
+    services,
+    ids,
+    analyse,
+    gather: (files, file, day) => gather(files, file, day, undefined, undefined),
+    today,
+    now,
+    pause,
+    announce,
+  });
   const publish = publishRenewed(connection, services, ids);
   analyses.onRenewed(publish.renewed);
 

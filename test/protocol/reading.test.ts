@@ -109,6 +109,22 @@ describe('other files', () => {
     expect(list.items.map(({ label }) => label)).toContain('return-loss');
     await open.client.close(config);
   });
+  test('what no lane uses is told in an open parts file, as the lanes stand on screen', async () => {
+    const { client, folder } = open;
+    const spare = PARTS.replace('materials:\n', 'materials:\n  spare: { dk: 3.1, df: 0.002 }\n');
+    const uri = folder.uri('boards/main.parts.yaml');
+    const part = 'parts:\n  mate: { kind: connector, delay: 40 ps, impedance: 100 ohm }\n';
+    await client.open(uri, spare + part);
+    const messages = async () => (await client.findings(uri)).map(({ message }) => message);
+    expect(await messages()).toEqual([
+      'The material `spare` is not used by any file at hand.',
+      'The part `mate` is not used by any file at hand.',
+    ]);
+    await client.change(open.lane, LANE.replace('limits:', '  - connector: mate\n    part: board.mate\nlimits:'));
+    expect(await messages()).toEqual(['The material `spare` is not used by any file at hand.']);
+    await client.change(open.lane, LANE);
+    await client.close(uri);
+  });
   test('an open configuration changes severities at once, unsaved', async () => {
     const config = open.folder.uri('lanewright.config.yaml');
     const text = LANE.replace('max: 12 dB', 'max: 0.5 dB');
