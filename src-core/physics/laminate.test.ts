@@ -1,11 +1,30 @@
 import { expect, test } from 'vitest';
 import { checkValues } from '../../test/check-values';
 import { DB_PER_NEPER, SPEED_OF_LIGHT } from './constants';
-import { debyeThrough, jointPoint, permittivity } from './laminate';
+import { debyeThrough, jointPoint, permittivity, wideBandLogarithm } from './laminate';
 import { lineConstants } from './transmission-line';
 
 const DJORDJEVIC = 'Djordjević, Biljić, Likar-Smiljanić, Sarkar, IEEE Trans. EMC 43(4), 2001, 662-667';
 const point = { dk: 4.2, df: 0.02, atHz: 1e9 };
+
+checkValues({
+  id: 'M-14',
+  what: 'a band so narrow that it is one pole, ε∞ 3.8, step 0.5: ε′, ε″, Df at the pole; ε′, ε″ at ten times that',
+  source: 'Debye, exact',
+  absoluteTolerance: 1e-6,
+  compute: ({ byPole }) => {
+    const [pole, width] = [1e9, 1e-4];
+    const band = [pole * (1 - width), pole * (1 + width)] as const;
+    const slope = 0.5 / Math.log(band[1] / band[0]);
+    const [re, im] = wideBandLogarithm([byPole * pole], band);
+    const [real, loss] = [3.8 + slope * re, -slope * im];
+    return byPole === 1 ? [real, loss, loss / real] : [real, loss];
+  },
+  rows: [
+    { byPole: 1, expected: [4.05, 0.25, 0.061728] },
+    { byPole: 10, expected: [3.80495, 0.049505] },
+  ],
+});
 
 checkValues({
   id: 'M-15',

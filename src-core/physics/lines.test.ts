@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest';
 import { checkValues } from '../../test/check-values';
 import { coaxCapacitance, coaxImpedance, coaxInductance } from './coax';
-import { DB_PER_NEPER, MU_0 } from './constants';
+import { DB_PER_NEPER, MU_0, SPEED_OF_LIGHT } from './constants';
 import { surfaceResistance } from './copper';
 import { wallFactor } from './incremental-inductance';
 import { lineConstants, scatterLine } from './transmission-line';
@@ -93,6 +93,23 @@ checkValues({
   printedWithin: 5e-6,
   compute: () => lineConstants(20, 350e-9, 0.02, 140e-12, 2 * Math.PI * 1e9),
   rows: [{ expected: [0.699984, 43.9833, 49.9934, 0.34092] }],
+});
+
+checkValues({
+  id: 'T-05',
+  what: 'that stripline from its conductor loss of 0.1219 Np/m, 50 ohm, ε 2.2, Df 0.001 at 10 GHz: dielectric loss in Np/m, total dB/m, wavelength in cm, dB in one',
+  source: 'Pozar, Microwave Engineering, Example 3.5',
+  relativeTolerance: 1e-3,
+  printedWithin: 5e-5,
+  compute: () => {
+    const omega = 2 * Math.PI * 10e9;
+    const c = Math.sqrt(2.2) / (SPEED_OF_LIGHT * 50);
+    const of = (r: number, df: number) => lineConstants(r, c * 50 ** 2, omega * c * df, c, omega);
+    const [alpha, beta] = of(2 * 50 * 0.1219, 0.001);
+    const meters = (2 * Math.PI) / beta;
+    return [of(0, 0.001)[0], DB_PER_NEPER * alpha, 100 * meters, DB_PER_NEPER * alpha * meters];
+  },
+  rows: [{ expected: [0.1554, 2.409, 2.021, 0.0487] }],
 });
 
 const scattered = (ohms: number, radians: number, nepers = 0) => {
