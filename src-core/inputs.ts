@@ -1,4 +1,5 @@
 import type { Inputs } from './analysis';
+import { isMapping } from './raw';
 import { parseFile } from './text/parse';
 import type { ParsedFile } from './text/parsed';
 import type { FileContent, FileKind, FilePath, Files } from './text/types';
@@ -54,9 +55,6 @@ function refusal(path: string): string | undefined {
   if (path.split('/').some((step) => DEVICES.test(step))) return 'is the name of a device';
   return undefined;
 }
-
-const isMapping = (value: unknown): value is Record<string, unknown> =>
-  typeof value === 'object' && value !== null && !Array.isArray(value);
 
 /** The parts files that a channel or parts file names, as written. */
 export function usesOf(parsed: ParsedFile): readonly { readonly name: string; readonly path: string }[] {

@@ -1,4 +1,5 @@
 import type { PreviewData } from '../../src-core/plots/preview-data';
+import { isMapping } from '../../src-core/raw';
 import type { Place } from '../../src-core/text/types';
 
 /** Host to page. */
@@ -35,8 +36,6 @@ export interface PageState {
   readonly scrollTop?: number;
 }
 
-const isRecord = (value: unknown): value is Record<string, unknown> =>
-  typeof value === 'object' && value !== null && !Array.isArray(value);
 const isText = (value: unknown, most = 4096): value is string => typeof value === 'string' && value.length <= most;
 
 /** A saved picture or table is not larger than this. */
@@ -44,7 +43,7 @@ export const mostSavedCharacters = 16 * 1024 * 1024;
 
 function isPlace(value: unknown): value is Place {
   return (
-    isRecord(value) &&
+    isMapping(value) &&
     isText(value.file) &&
     Array.isArray(value.path) &&
     value.path.length <= 64 &&
@@ -55,7 +54,7 @@ function isPlace(value: unknown): value is Place {
 
 /** A message from the page as the host may trust it; undefined for anything else. */
 export function readFromPage(message: unknown): FromPage | undefined {
-  if (!isRecord(message)) return undefined;
+  if (!isMapping(message)) return undefined;
   const { type, at, element, format, name, content } = message;
   if (type === 'ready') return { type };
   if (type === 'select' && isPlace(at) && (element === undefined || isText(element))) {
@@ -72,7 +71,7 @@ const themeKinds: readonly unknown[] = ['light', 'dark', 'high-contrast', 'high-
 
 /** A message from the host as the page may trust it: shape of the envelope; the data is the core's own. */
 export function readToPage(message: unknown): ToPage | undefined {
-  if (!isRecord(message)) return undefined;
+  if (!isMapping(message)) return undefined;
   const { type } = message;
   const valid =
     (type === 'data' && isText(message.uri) && isPreviewData(message.data)) ||
@@ -85,9 +84,9 @@ export function readToPage(message: unknown): ToPage | undefined {
 
 function isPreviewData(value: unknown): value is PreviewData {
   return (
-    isRecord(value) &&
+    isMapping(value) &&
     isText(value.file) &&
-    isRecord(value.verdict) &&
+    isMapping(value.verdict) &&
     Array.isArray(value.plots) &&
     Array.isArray(value.findings)
   );

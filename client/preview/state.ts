@@ -1,7 +1,6 @@
+import { isMapping } from '../../src-core/raw';
 import type { PageState } from './messages';
 
-const isRecord = (value: unknown): value is Record<string, unknown> =>
-  typeof value === 'object' && value !== null && !Array.isArray(value);
 const isText = (value: unknown): value is string => typeof value === 'string' && value.length < 4096;
 const isRange = (value: unknown): value is [number, number] =>
   Array.isArray(value) &&
@@ -10,7 +9,7 @@ const isRange = (value: unknown): value is [number, number] =>
 
 /** What an earlier page kept, as far as it makes sense; anything else is left out. */
 export function readState(kept: unknown): PageState {
-  if (!isRecord(kept)) return {};
+  if (!isMapping(kept)) return {};
   const { uri, selected, tables, scrollTop } = kept;
   return {
     ...(isText(uri) && { uri }),
@@ -22,10 +21,10 @@ export function readState(kept: unknown): PageState {
 }
 
 function readZooms(value: unknown): PageState['zooms'] {
-  if (!isRecord(value)) return {};
+  if (!isMapping(value)) return {};
   return Object.fromEntries(
     Object.entries(value).flatMap(([name, zoom]) => {
-      if (!isRecord(zoom)) return [];
+      if (!isMapping(zoom)) return [];
       const ranges = { ...(isRange(zoom.x) && { x: zoom.x }), ...(isRange(zoom.y) && { y: zoom.y }) };
       return Object.keys(ranges).length > 0 ? [[name, ranges]] : [];
     }),

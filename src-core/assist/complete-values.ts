@@ -4,12 +4,12 @@ import type { Analysis } from '../analysis';
 import { freeName, type KeyInfo, keySchemaAt } from '../format/index';
 import { exactly, show } from '../quantity/show';
 import { unitsOf } from '../quantity/units';
+import { isMapping } from '../raw';
 import { rules } from '../rules/list';
 import type { ParsedFile } from '../text/parsed';
 import type { Completion, Surroundings } from './completions';
 import type { Cursor } from './cursor';
 import { likelyLayer, stackupAt } from './likely';
-import { isRecord } from './shape';
 import { kindOfEntry } from './subject';
 import { unusedNames } from './unused-names';
 
@@ -147,16 +147,16 @@ function namesIn(
   cursor: Cursor,
   known: readonly (readonly string[])[] | undefined,
 ): Completion[] {
-  const value = isRecord(parsed.value) ? parsed.value[section] : undefined;
-  const own = isRecord(value) ? Object.keys(value) : [];
+  const value = isMapping(parsed.value) ? parsed.value[section] : undefined;
+  const own = isMapping(value) ? Object.keys(value) : [];
   return [...new Set([...own, ...(known ?? []).flat()])].map((name, rank) => plain(cursor, name, 'name', rank));
 }
 
 function ownersOf(parsed: ParsedFile, analysis: Analysis | undefined): string[] {
-  const value = isRecord(parsed.value) ? parsed.value.owners : undefined;
+  const value = isMapping(parsed.value) ? parsed.value.owners : undefined;
   return [
     ...new Set([
-      ...(isRecord(value) ? Object.keys(value) : []),
+      ...(isMapping(value) ? Object.keys(value) : []),
       ...(analysis?.model.elements ?? []).flatMap(({ owner }) => (owner === undefined ? [] : [owner])),
     ]),
   ];

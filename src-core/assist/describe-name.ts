@@ -1,12 +1,12 @@
 import type { Analysis } from '../analysis';
 import type { StackupLayer } from '../model/types';
 import { show } from '../quantity/show';
+import { isMapping } from '../raw';
 import type { FilePath } from '../text/types';
 import { describeElement } from './describe-element';
 import { code, page, plainText, type Row } from './markdown';
 import { occurrenceAt } from './names';
 import { type Identity, sharedValue } from './occurrences';
-import { isRecord } from './shape';
 
 /** What a name stands for: an element, layer, stackup, material, foil, part, file. */
 export function describeName(analysis: Analysis, file: FilePath, offset: number): string | undefined {
@@ -116,7 +116,7 @@ function describeShared(
           .join(' '),
       ]);
     }
-  } else if (isRecord(value)) {
+  } else if (isMapping(value)) {
     for (const [key, one] of Object.entries(value).slice(0, 7))
       if (typeof one === 'string' || typeof one === 'number') rows.push([plainText(key), code(String(one))]);
     if (role === 'part') {

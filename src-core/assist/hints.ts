@@ -4,9 +4,9 @@ import { keySchemaAt } from '../format/index';
 import type { AnyElement } from '../model/types';
 import type { ElementNetwork } from '../networks/types';
 import { show } from '../quantity/show';
+import { isMapping } from '../raw';
 import { rangeOf } from '../text/index';
 import type { FilePath, Place, TextRange } from '../text/types';
-import { isRecord } from './shape';
 
 /** `derived`: what follows from the neighbours; `defaults`: what holds since nothing is written, where that changes a figure. */
 export type HintClass = 'loss' | 'stub' | 'derived' | 'defaults';
@@ -115,7 +115,7 @@ function defaultsOfChannel({ model, parsed }: Analysis, range: (place: Place) =>
   const { file } = model;
   const written = (...path: string[]) =>
     path.reduce<unknown>(
-      (value, key) => (isRecord(value) && Object.hasOwn(value, key) ? value[key] : undefined),
+      (value, key) => (isMapping(value) && Object.hasOwn(value, key) ? value[key] : undefined),
       parsed.get(file)?.value,
     ) !== undefined;
   const hint = (path: string[], on: 'key' | 'value', texts: readonly (string | false)[]): Hint[] => {

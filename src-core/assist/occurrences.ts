@@ -1,9 +1,9 @@
 import type { NameRole } from '../../schemas/format/types';
 import { entryLists } from '../../schemas/generated/format';
 import { joinPath } from '../inputs';
+import { asList, isMapping } from '../raw';
 import type { ParsedFile } from '../text/parsed';
 import type { FilePath, Place, ValuePath } from '../text/types';
-import { isRecord } from './shape';
 
 /** What a name stands for, wherever it is written: one key for declaration and uses. */
 export interface Identity {
@@ -44,8 +44,8 @@ export const sameIdentity = (a: Identity, b: Identity) =>
 /** The `use` entries of a file: prefix to file. */
 export function usesOf(parsed: ParsedFile): ReadonlyMap<string, FilePath> {
   const uses = new Map<string, FilePath>();
-  const written = isRecord(parsed.value) ? parsed.value.use : undefined;
-  if (!isRecord(written)) return uses;
+  const written = isMapping(parsed.value) ? parsed.value.use : undefined;
+  if (!isMapping(written)) return uses;
   for (const [prefix, path] of Object.entries(written)) {
     const file = typeof path === 'string' ? joinPath(parsed.file, path).file : undefined;
     if (file !== undefined) uses.set(prefix, file);
@@ -59,8 +59,8 @@ const isShared = (role: NameRole): role is SharedRole => role in SECTIONS;
 
 /** The value that a shared name is declared with in this very file. */
 export function sharedValue(parsed: ParsedFile | undefined, role: SharedRole, name: string): unknown {
-  const section = parsed && isRecord(parsed.value) ? parsed.value[SECTIONS[role]] : undefined;
-  return isRecord(section) && Object.hasOwn(section, name) ? section[name] : undefined;
+  const section = parsed && isMapping(parsed.value) ? parsed.value[SECTIONS[role]] : undefined;
+  return isMapping(section) && Object.hasOwn(section, name) ? section[name] : undefined;
 }
 
 /**
@@ -82,7 +82,7 @@ export function resolveShared(library: Library, file: FilePath, role: SharedRole
 /** Every name written in one file, declared or used, in the order of the text. */
 export function occurrencesIn(library: Library, file: FilePath): readonly Occurrence[] {
   const parsed = library.get(file);
-  if (!parsed || !isRecord(parsed.value)) return [];
+  if (!parsed || !isMapping(parsed.value)) return [];
   const found: Occurrence[] = [];
   const value = parsed.value;
   const own = (role: NameRole, name: string): Identity => ({ role, file, name });
@@ -122,15 +122,15 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
     if (typeof keys.part === 'string') {
       const part = resolveShared(library, file, 'part', keys.part);
       const partValue = sharedValue(library.get(part.file), 'part', part.name);
-      if (isRecord(partValue) && typeof partValue.stackup === 'string')
+      if (isMapping(partValue) && typeof partValue.stackup === 'string')
         return resolveShared(library, part.file, 'stackup', partValue.stackup);
     }
-    const all = isRecord(value.stackups)
+    const all = isMapping(value.stackups)
       ? Object.keys(value.stackups).map((name) => ({ role: 'stackup' as const, file, name }))
       : [];
     for (const used of new Set(usesOf(parsed).values())) {
       const stackups = library.get(used)?.value;
-      if (isRecord(stackups) && isRecord(stackups.stackups))
+      if (isMapping(stackups) && isMapping(stackups.stackups))
         all.push(...Object.keys(stackups.stackups).map((name) => ({ role: 'stackup' as const, file: used, name })));
     }
     return all.length === 1 ? all[0] : undefined;
@@ -147,7 +147,7 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
   };
   const keysDeclare = (role: NameRole, section: string) => {
     const names = value[section];
-    if (!isRecord(names)) return [];
+    if (!isMapping(names)) return [];
     for (const name of Object.keys(names)) add(own(role, name), [section, name], { declares: true, on: 'key' });
     return Object.entries(names);
   };
@@ -162,7 +162,7 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
   for (const [name, rows] of keysDeclare('stackup', 'stackups')) {
     if (!Array.isArray(rows)) continue;
     rows.forEach((row, index) => {
-      if (!isRecord(row)) return;
+      if (!isMapping(row)) return;
       const path = ['stackups', name, index];
       for (const kind of entryLists['stackup-rows'].kinds) {
         if (kind !== 'mask' && typeof row[kind] === 'string')
@@ -172,18 +172,18 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
       shared('foil', row.foil, [...path, 'foil']);
     });
   }
-  for (const [name, keys] of keysDeclare('part', 'parts')) if (isRecord(keys)) element(keys, ['parts', name]);
+  for (const [name, keys] of keysDeclare('part', 'parts')) if (isMapping(keys)) element(keys, ['parts', name]);
 
-  list(value.path).forEach((entry, index) => {
-    if (!isRecord(entry)) return;
+  asList(value.path).forEach((entry, index) => {
+    if (!isMapping(entry)) return;
     const kind = entryLists.elements.kinds.find((name) => Object.hasOwn(entry, name));
     if (kind && typeof entry[kind] === 'string')
       add(own('element', entry[kind]), ['path', index, kind], { declares: true });
     element(entry, ['path', index]);
   });
   const limitNames = new Set<string>();
-  list(value.limits).forEach((entry, index) => {
-    if (!isRecord(entry)) return;
+  asList(value.limits).forEach((entry, index) => {
+    if (!isMapping(entry)) return;
     const kind = Object.keys(entry)[0];
     if (kind !== undefined && typeof entry[kind] === 'string') {
       limitNames.add(entry[kind]);
@@ -191,17 +191,15 @@ export function occurrencesIn(library: Library, file: FilePath): readonly Occurr
     }
     refer('element', entry.between, ['limits', index, 'between'], undefined);
   });
-  list(value.waivers).forEach((entry, index) => {
-    if (!isRecord(entry)) return;
+  asList(value.waivers).forEach((entry, index) => {
+    if (!isMapping(entry)) return;
     if (typeof entry.rule === 'string') add({ role: 'rule', file: '', name: entry.rule }, ['waivers', index, 'rule']);
     if (typeof entry.at === 'string')
       add(own(limitNames.has(entry.at) ? 'limit' : 'element', entry.at), ['waivers', index, 'at']);
   });
-  if (parsed.kind === 'config' && isRecord(value.rules)) {
+  if (parsed.kind === 'config' && isMapping(value.rules)) {
     for (const rule of Object.keys(value.rules))
       add({ role: 'rule', file: '', name: rule }, ['rules', rule], { on: 'key' });
   }
   return found;
 }
-
-const list = (value: unknown): readonly unknown[] => (Array.isArray(value) ? value : []);

@@ -1,8 +1,8 @@
 import type { Analysis } from '../analysis';
+import { asList, isMapping } from '../raw';
 import { rangeOf } from '../text/index';
 import type { ParsedFile } from '../text/parsed';
 import type { TextRange, ValuePath } from '../text/types';
-import { asList, isRecord } from './shape';
 
 export type OutlineKind = 'section' | 'element' | 'limit' | 'waiver' | 'name' | 'layer' | 'key' | 'rule';
 
@@ -25,7 +25,7 @@ const KINDS_OF_SECTIONS: Readonly<Record<string, OutlineKind>> = {
 
 /** The file as a tree, two or three levels; details are figures where there are some, else what is written. */
 export function outlineOf(parsed: ParsedFile, analysis?: Analysis): readonly OutlineItem[] {
-  if (!isRecord(parsed.value)) return [];
+  if (!isMapping(parsed.value)) return [];
   const own = analysis?.model.file === parsed.file ? analysis : undefined;
   return Object.entries(parsed.value).map(([key, value]) => {
     const item = (
@@ -59,7 +59,7 @@ export function outlineOf(parsed: ParsedFile, analysis?: Analysis): readonly Out
         '',
         asList(value).map((entry, index) => waiverItem(parsed, entry, index)),
       );
-    if (key === 'stackups' && isRecord(value)) {
+    if (key === 'stackups' && isMapping(value)) {
       return item(
         [key],
         key,
@@ -76,12 +76,12 @@ export function outlineOf(parsed: ParsedFile, analysis?: Analysis): readonly Out
         ),
       );
     }
-    const children = isRecord(value)
+    const children = isMapping(value)
       ? Object.entries(value).map(([name, one]) =>
           item([key, name], name, KINDS_OF_SECTIONS[key] ?? 'name', detailOf(one)),
         )
       : [];
-    return item([key], key, isRecord(value) ? 'section' : 'key', isRecord(value) ? '' : detailOf(value), children);
+    return item([key], key, isMapping(value) ? 'section' : 'key', isMapping(value) ? '' : detailOf(value), children);
   });
 }
 
@@ -113,7 +113,7 @@ function itemOf(
 }
 
 function elementItem(parsed: ParsedFile, entry: unknown, index: number, analysis: Analysis | undefined): OutlineItem {
-  const [kind, written] = isRecord(entry) ? (Object.entries(entry)[0] ?? ['entry', '']) : ['entry', entry];
+  const [kind, written] = isMapping(entry) ? (Object.entries(entry)[0] ?? ['entry', '']) : ['entry', entry];
   const row = analysis?.ledger?.rows.find((one) => one.index === index);
   const figures =
     row?.figures.filter(({ name }) => name === 'own-loss-at-nyquist' || name === 'impedance').map(({ text }) => text) ??
@@ -129,14 +129,14 @@ function elementItem(parsed: ParsedFile, entry: unknown, index: number, analysis
 }
 
 function limitItem(parsed: ParsedFile, entry: unknown, index: number, analysis: Analysis | undefined): OutlineItem {
-  const [kind, written] = isRecord(entry) ? (Object.entries(entry)[0] ?? ['limit', '']) : ['limit', entry];
+  const [kind, written] = isMapping(entry) ? (Object.entries(entry)[0] ?? ['limit', '']) : ['limit', entry];
   const name = nameOf(written, `limit ${index + 1}`);
   const outcome = analysis?.limits.find((one) => one.name === name);
   return itemOf(parsed, ['limits', index], name, 'limit', outcome ? `${kind} · ${outcome.text}` : kind, []);
 }
 
 function waiverItem(parsed: ParsedFile, entry: unknown, index: number): OutlineItem {
-  const { rule, at, until } = isRecord(entry) ? entry : {};
+  const { rule, at, until } = isMapping(entry) ? entry : {};
   return itemOf(
     parsed,
     ['waivers', index],
@@ -148,8 +148,8 @@ function waiverItem(parsed: ParsedFile, entry: unknown, index: number): OutlineI
 }
 
 function rowItem(parsed: ParsedFile, stackup: string, row: unknown, index: number): OutlineItem {
-  const [kind, written] = isRecord(row) ? (Object.entries(row)[0] ?? ['row', '']) : ['row', row];
-  const thickness = isRecord(row) && typeof row.thickness === 'string' ? ` · ${row.thickness}` : '';
+  const [kind, written] = isMapping(row) ? (Object.entries(row)[0] ?? ['row', '']) : ['row', row];
+  const thickness = isMapping(row) && typeof row.thickness === 'string' ? ` · ${row.thickness}` : '';
   return itemOf(
     parsed,
     ['stackups', stackup, index],
@@ -167,6 +167,6 @@ const nameOf = (written: unknown, otherwise: string) =>
 function detailOf(value: unknown): string {
   if (typeof value === 'string' || typeof value === 'number' || typeof value === 'boolean')
     return String(value).slice(0, 60);
-  if (isRecord(value) && typeof value.kind === 'string') return value.kind;
+  if (isMapping(value) && typeof value.kind === 'string') return value.kind;
   return '';
 }

@@ -1,11 +1,11 @@
 import { fileKind } from '../inputs';
+import { asList, isMapping } from '../raw';
 import type { ParsedFile } from '../text/parsed';
 import type { FilePath, TextEdit } from '../text/types';
 import type { Completion, Surroundings } from './completions';
 import type { Cursor } from './cursor';
 import { relativePath } from './names';
 import { usesOf } from './occurrences';
-import { asList, isRecord } from './shape';
 
 /** Stackups or parts of parts files that this file does not use yet; taking one adds the `use` entry too. */
 export async function unusedNames(
@@ -19,12 +19,12 @@ export async function unusedNames(
   const used = new Set(usesOf(parsed).values());
   const found: Completion[] = [];
   for (const [file, other] of await library()) {
-    if (file === parsed.file || used.has(file) || fileKind(file) !== 'parts' || !isRecord(other.value)) continue;
+    if (file === parsed.file || used.has(file) || fileKind(file) !== 'parts' || !isMapping(other.value)) continue;
     const names = other.value[role === 'part' ? 'parts' : 'stackups'];
-    if (!isRecord(names)) continue;
+    if (!isMapping(names)) continue;
     const prefix = prefixFor(parsed, file);
     for (const [name, value] of Object.entries(names).slice(0, 100)) {
-      if (role === 'part' && kind && isRecord(value) && value.kind !== kind) continue;
+      if (role === 'part' && kind && isMapping(value) && value.kind !== kind) continue;
       if (role === 'stackup' && asList(value).length === 0) continue;
       const text = `${prefix}.${name}`;
       found.push({

@@ -1,9 +1,10 @@
 import type { EntryListName, SchemaName } from '../../schemas/format/types';
 import { entryLists, schemas } from '../../schemas/generated/format';
 import { nearest } from '../quantity/nearest';
+import { isMapping } from '../raw';
 import { freeName } from './free-name';
 import type { FormatFix, FormatProblem } from './problem';
-import { isMapping, kindOfValue, listed, quote } from './say';
+import { kindOfValue, listed, quote } from './say';
 
 export type EntryKind =
   | { readonly kind: string; readonly schema: SchemaName; readonly problem?: undefined }

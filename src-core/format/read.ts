@@ -4,10 +4,10 @@ import { schemas } from '../../schemas/generated/format';
 import type { QuantityProblem } from '../quantity/problem';
 import { readQuantity } from '../quantity/read';
 import { readBand } from '../quantity/read-band';
+import { isMapping } from '../raw';
 import type { ValuePath } from '../text/types';
 import { childOf, mappingOf } from './node-at';
 import type { FormatProblem } from './problem';
-import { isMapping } from './say';
 import { validateEntry } from './validate';
 
 export interface ReadOptions {

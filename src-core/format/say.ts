@@ -38,6 +38,3 @@ export function kindOfValue(value: unknown): string {
   if (typeof value === 'number' && !Number.isFinite(value)) return 'no finite number';
   return quote(String(value));
 }
-
-export const isMapping = (value: unknown): value is Record<string, unknown> =>
-  typeof value === 'object' && value !== null && !Array.isArray(value);

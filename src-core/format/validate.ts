@@ -1,9 +1,9 @@
 import type { SchemaName } from '../../schemas/format/types';
 import { schemas } from '../../schemas/generated/format';
 import { type SchemaError, validators } from '../../schemas/generated/validators';
+import { isMapping } from '../raw';
 import { pathOf, valueAt } from './node-at';
 import type { FormatProblem } from './problem';
-import { isMapping } from './say';
 import { problemOf } from './schema-error';
 import { wrongType } from './wanted';
 

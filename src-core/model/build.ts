@@ -1,5 +1,6 @@
 import type { Inputs } from '../analysis';
 import { readValues } from '../format/index';
+import { isMapping, listAt, mappingAt } from '../raw';
 import type { ParsedFile } from '../text/parsed';
 import type { FilePath } from '../text/types';
 import { type Draft, finish } from './draft';
@@ -10,7 +11,6 @@ import { resolveLayers } from './layers';
 import { readLimits, readWaivers } from './limits';
 import { nameTable } from './name-table';
 import { readParts } from './parts';
-import { isMapping, listAt, mappingAt } from './raw';
 import { formatReports, type ModelReport, placeIn } from './reports';
 import { gatherSources, type Source, type Sources, unreadable } from './sources';
 import { openShelves } from './stackups';

@@ -1,10 +1,10 @@
 import type { LimitKindName, Quantity, QuantitySpec } from '../../schemas/format/types';
 import { entryKind, readValues } from '../format/index';
 import { readQuantity } from '../quantity/read';
+import { isMapping, listAt } from '../raw';
 import type { Fix } from '../rules/types';
 import type { Place } from '../text/types';
 import type { ElementContext } from './elements';
-import { isMapping, listAt } from './raw';
 import { formatReports, type ModelReport, nameFixes, nameHint, placeIn, quoted } from './reports';
 import type { AnyElement, AnyLimit, Limit, Waiver } from './types';
 

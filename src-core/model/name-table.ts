@@ -1,6 +1,6 @@
 import type { ElementKindName } from '../../schemas/format/types';
+import { isMapping, mappingAt } from '../raw';
 import { namesAtHand, type Shared, type WritableName } from './names';
-import { isMapping, mappingAt } from './raw';
 import { placeIn } from './reports';
 import type { Sources } from './sources';
 import type { Shelves } from './stackups';

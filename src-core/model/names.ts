@@ -1,5 +1,5 @@
+import { mappingAt } from '../raw';
 import type { FilePath, Place } from '../text/types';
-import { mappingAt } from './raw';
 import { type ModelReport, nameFixes, nameHint, placeIn, quoted } from './reports';
 import type { Source, Sources } from './sources';
 

@@ -1,7 +1,7 @@
 import { entryKind, readValues } from '../format/index';
+import { isMapping, mappingAt } from '../raw';
 import type { ElementContext } from './elements';
 import { lookUp } from './names';
-import { isMapping, mappingAt } from './raw';
 import { formatReports, placeIn } from './reports';
 import type { Source } from './sources';
 import { touchstoneFile } from './touchstone';

@@ -1,9 +1,9 @@
 import type { Inputs } from '../analysis';
 import { readValues } from '../format/index';
 import { fileKind, joinPath } from '../inputs';
+import { isMapping, mappingAt, type RawMapping } from '../raw';
 import type { ParsedFile } from '../text/parsed';
 import type { FilePath } from '../text/types';
-import { isMapping, mappingAt, type RawMapping } from './raw';
 import { formatReports, type ModelReport, placeIn, quoted } from './reports';
 
 /** A channel or parts file, and which files its `use` names. */

@@ -1,8 +1,8 @@
 import type { FoilValues, MaterialValues, PartsValues, Quantity } from '../../schemas/format/types';
 import { entryKind, readValues } from '../format/index';
+import { mappingAt } from '../raw';
 import type { FilePath, ValuePath } from '../text/types';
 import { lookUp } from './names';
-import { mappingAt } from './raw';
 import { formatReports, type ModelReport, placeIn, quoted } from './reports';
 import { readPartsFile, type Sources } from './sources';
 import type { Foil, Material, Point, Roughness, Stackup, StackupLayer } from './types';

@@ -2,6 +2,7 @@ import type { SeveritySetting } from '../../schemas/format/types';
 import { FORMAT_VERSION } from '../../schemas/format/version';
 import { quoted } from '../model/reports';
 import { nearest } from '../quantity/nearest';
+import { isMapping } from '../raw';
 import type { ParsedFile } from '../text/parsed';
 import type { Place } from '../text/types';
 import type { AnyRule, Fix, Report } from './types';
@@ -15,8 +16,6 @@ export interface Config {
 }
 
 const SEVERITIES: readonly SeveritySetting[] = ['error', 'warning', 'info', 'hint', 'off'];
-const isRecord = (value: unknown): value is Record<string, unknown> =>
-  typeof value === 'object' && value !== null && !Array.isArray(value);
 const isSeverity = (value: unknown): value is SeveritySetting => SEVERITIES.includes(value as SeveritySetting);
 
 /** `; did you mean …?` and the fix that writes it, where one of the names is near. */
@@ -42,7 +41,7 @@ const severityFrom = (value: unknown) => (value === false ? 'off' : value);
 
 /** Reads the settings of one rule. */
 function readRule(rule: AnyRule, value: unknown, at: Place, reports: Report[]) {
-  if (!isRecord(value)) {
+  if (!isMapping(value)) {
     const severity = severityFrom(value);
     if (!isSeverity(severity)) reports.push(wrongSeverity(at, value));
     return { severity: isSeverity(severity) ? severity : undefined, options: {} };
@@ -79,8 +78,8 @@ export function readConfig(rules: readonly AnyRule[], parsed: ParsedFile | undef
   const reports: Report[] = [];
   const settings = new Map<string, ReturnType<typeof readRule>>();
   // of a newer version nothing is read; its own finding says so
-  const written = isRecord(parsed?.value) && !isNewer(parsed.value.lanewright) ? parsed.value.rules : undefined;
-  if (parsed && isRecord(written)) {
+  const written = isMapping(parsed?.value) && !isNewer(parsed.value.lanewright) ? parsed.value.rules : undefined;
+  if (parsed && isMapping(written)) {
     for (const [name, value] of Object.entries(written)) {
       const at: Place = { file: parsed.file, path: ['rules', name] };
       const rule = rules.find((one) => one.name === name);
