@@ -42,6 +42,17 @@ export const insertionLossOf = (s: TwoPort, point: number) => attenuationDb(powe
 export const returnLossAt = (s: TwoPort, grid: Grid, end: End, frequencyHz: number) =>
   attenuationAt(s, grid, reflectionOffset(end), frequencyHz);
 
+/** Return loss at a point of the data itself. */
+export const returnLossOf = (s: TwoPort, end: End, point: number) =>
+  attenuationDb(power(s, point, reflectionOffset(end)));
+
+/** What of a band lies above the grid, at equal steps; empty where nothing does. */
+export function frequenciesBeyond(grid: Grid, fromHz: number, toHz: number, points = 401): Float64Array {
+  const from = Math.max(fromHz, grid.stepHz * (grid.points - 1));
+  if (toHz <= from * (1 + 1e-9)) return new Float64Array(0);
+  return Float64Array.from({ length: points }, (_, i) => from + ((toHz - from) * i) / (points - 1));
+}
+
 /** Both ends of a band and every grid point between them, Hz, ascending; within the grid. */
 export function* frequenciesWithin(grid: Grid, fromHz: number, toHz: number): Generator<number> {
   const last = grid.stepHz * (grid.points - 1);

@@ -1,8 +1,9 @@
+import { networkAt } from '../cascade/network-at';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
 import type { Computed } from './computed';
 import { networkWithin, ROUNDING_DB } from './insertion-loss-limit';
-import { type End, frequenciesWithin, returnLossAt } from './measures';
+import { type End, frequenciesBeyond, frequenciesWithin, returnLossAt, returnLossOf } from './measures';
 import type { LimitOutcome } from './types';
 
 /** Return loss in a band, looked at from the named end or from both: the point with the least. */
@@ -14,12 +15,15 @@ export function returnLossOutcome(limit: Limit<'return-loss'>, computed: Compute
   const grid = networks.grid;
   // Without a band it is judged from the first point above 0 Hz, where nothing reflects, to Nyquist.
   const [fromHz, toHz] = band ? [band.fromHz, band.toHz] : [grid.stepHz, computed.model.nyquistFrequency];
+  const beyond = frequenciesBeyond(grid, fromHz, toHz);
+  const above = beyond.length > 0 ? networkAt(networks, beyond, limit.between).differential : undefined;
   let worst: { atHz: number; lossDb: number; end: End } | undefined;
   for (const end of at ? [at] : (['transmitter', 'receiver'] as const)) {
-    for (const atHz of frequenciesWithin(grid, fromHz, toHz)) {
-      const lossDb = returnLossAt(s, grid, end, atHz);
+    const judge = (atHz: number, lossDb: number) => {
       if (!worst || lossDb < worst.lossDb) worst = { atHz, lossDb, end };
-    }
+    };
+    for (const atHz of frequenciesWithin(grid, fromHz, toHz)) judge(atHz, returnLossAt(s, grid, end, atHz));
+    if (above) for (let i = 0; i < beyond.length; i++) judge(beyond[i], returnLossOf(above, end, i));
   }
   if (!worst) return undefined;
   const { atHz, lossDb, end } = worst;

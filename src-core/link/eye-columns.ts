@@ -57,7 +57,7 @@ export function eyeColumns(
   const atCentre = cursors(centre);
   const interference = atCentre.reduce((sum, value, m) => (m === 0 ? sum : sum + Math.abs(value)), 0) / 2;
   // the last two bound the bins of the noise where next to no signal arrives
-  const span = Math.max(interference, Math.abs(atCentre[0]) / 2, noiseVolts / 100, 1e-12);
+  const span = Math.max(interference, Math.abs(atCentre[0]) / 2, noiseVolts / 4, 1e-12);
   const binVolts = Math.max(span / mostBins, Math.min(span / fewestBins, noiseVolts / binsPerSigma));
   const noiseBins = noiseVolts / binVolts;
   const noisy = noiseBins >= binsPerSigma / 2;

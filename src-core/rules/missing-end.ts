@@ -1,11 +1,21 @@
 import { quoted } from '../model/reports';
+import { isMapping } from '../raw';
+import type { Fix } from '../report';
 import { limitName } from './places';
-import type { Fix, Judged, Rule } from './types';
+import type { Judged, Rule } from './types';
 
 const missing = ({ transmitter, receiver }: Judged['model']) => [
   ...(transmitter?.swingVolts === undefined ? (['transmitter'] as const) : []),
   ...(receiver === undefined ? (['receiver'] as const) : []),
 ];
+
+/** Written, though not so that it can be read: the finding at its place says all. */
+function isWritten({ model, parsed }: Judged, end: 'transmitter' | 'receiver'): boolean {
+  const root = parsed.get(model.file)?.value;
+  const written = isMapping(root) ? root[end] : undefined;
+  if (end === 'transmitter' && model.transmitter) return isMapping(written) && Object.hasOwn(written, 'swing');
+  return written !== undefined && written !== null;
+}
 
 const ROOT_TEXT = { transmitter: '{ swing: 800 mV }', receiver: '{ impedance: 100 ohm }' } as const;
 
@@ -36,6 +46,7 @@ export const missingEnd: Rule = {
     const limit = model.limits.find(({ kind }) => kind === 'eye');
     if (!limit || !model.computable) return;
     for (const end of missing(model)) {
+      if (isWritten(judged, end)) continue;
       const what = end === 'transmitter' && model.transmitter ? 'the `swing` of the transmitter' : `a \`${end}\``;
       yield {
         at: limitName(limit),

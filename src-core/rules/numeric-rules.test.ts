@@ -107,6 +107,22 @@ describe('limits on what was computed', () => {
   });
 });
 
+test('a band beyond the grid is judged at just its frequencies', () => {
+  const { limits, findings, networks } = analyseFiles(
+    filesWith('limits: [{ return-loss: match, band: 300 GHz to 500 GHz, min: 60 dB }]').files,
+    { until: 'time' },
+  );
+  const grid = networks!.grid;
+  expect(grid.stepHz * (grid.points - 1)).toBeLessThan(300e9);
+  expect(limits.find(({ name }) => name === 'match')?.atHz).toBeGreaterThanOrEqual(300e9);
+  expect(findings.map(({ rule }) => rule)).toContain('return-loss');
+});
+test('a swing that cannot be read is one finding, not also a missing one', () => {
+  for (const swing of ['800', '1e-30 mV', '8 ohm']) {
+    const { findings } = analyseFiles(filesWith(`transmitter: { swing: ${swing} }`).files);
+    expect(findings.map(({ rule }) => rule)).toEqual(['quantity']);
+  }
+});
 test('an impedance step shows both ends of the tolerance and names the neighbour', () => {
   expectFindings(`
     path:

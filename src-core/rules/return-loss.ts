@@ -2,13 +2,15 @@ import { returnLossAt } from '../figures/measures';
 import { quoted } from '../model/reports';
 import type { Limit } from '../model/types';
 import { show } from '../quantity/show';
+import type { Related } from '../report';
 import { elementsWithin } from './blame';
 import { limitValue, nameOf } from './places';
-import type { Judged, Related, Rule } from './types';
+import type { Judged, Rule } from './types';
 
 /** The element that reflects the most by itself where the whole does its worst. */
 function reflectsMost(judged: Judged, limit: Limit, atHz: number): readonly Related[] {
   const grid = judged.networks!.grid;
+  if (atHz > grid.stepHz * (grid.points - 1)) return []; // the elements' own networks end there
   const reflections = elementsWithin(judged, limit).map(({ element, network }) => ({
     element,
     lossDb: Math.min(
