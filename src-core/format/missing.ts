@@ -59,8 +59,15 @@ export function missingKeys(kind: ElementKindName, values: object, singleEnded: 
   return has('touchstone') ? [] : needs[kind](has, singleEnded);
 }
 
-/** The missing keys as one problem of the entry, with a fix for each that adds its example. */
-export function missingKeyProblems(kind: ElementKindName, missing: readonly MissingKey[]): FormatProblem[] {
+/**
+ * The missing keys as one problem of the entry, with a fix for each that adds its example.
+ * @param namesFor what is at hand for a key that names something, in place of the example; undefined for any other key
+ */
+export function missingKeyProblems(
+  kind: ElementKindName,
+  missing: readonly MissingKey[],
+  namesFor: (key: string) => readonly string[] | undefined = () => undefined,
+): FormatProblem[] {
   if (missing.length === 0) return [];
   const keys = missing.map(({ anyOf }) =>
     listed(
@@ -69,18 +76,16 @@ export function missingKeyProblems(kind: ElementKindName, missing: readonly Miss
     ),
   );
   const fixes = missing.flatMap(({ anyOf }) =>
-    anyOf.flatMap((key) => {
-      const example = schemas[kind].properties?.[key]?.examples?.[0];
-      return example === undefined
-        ? []
-        : [
-            {
-              title: `Add \`${key}: ${example}\``,
-              edits: [{ op: 'set' as const, path: [], key, text: String(example) }],
-            },
-          ];
-    }),
+    anyOf.flatMap((key) =>
+      (namesFor(key) ?? exampleOf(kind, key)).map((text) => ({
+        title: `Add \`${key}: ${text}\``,
+        edits: [{ op: 'set' as const, path: [], key, text }],
+      })),
+    ),
   );
   const message = `This ${kind} lacks ${listed(keys)}; until then it counts as a straight through.`;
   return [{ rule: 'schema', path: [kind], on: 'entry', message, fixes }];
 }
+
+const exampleOf = (kind: ElementKindName, key: string): readonly string[] =>
+  (schemas[kind].properties?.[key]?.examples ?? []).slice(0, 1).map(String);

@@ -5,7 +5,7 @@ import { show } from '../quantity/show';
 import { isMapping, mappingAt, type RawMapping } from '../raw';
 import type { Place } from '../text/types';
 import { type Draft, headOf } from './draft';
-import { lookUp } from './names';
+import { lookUp, namesAtHand } from './names';
 import { formatReports, type ModelReport, placeIn, quoted } from './reports';
 import type { Sources } from './sources';
 import type { Shelves } from './stackups';
@@ -229,7 +229,8 @@ function isMeant({ kind, raw }: Draft, keys: readonly string[]): boolean {
 }
 
 /** What the element's own model needs and is not there; keys that are written and bad have their own finding. */
-export function checkMissing({ reports, singleEnded }: ElementContext, draft: Draft): void {
+export function checkMissing(context: ElementContext, draft: Draft): void {
+  const { reports, singleEnded } = context;
   if (draft.unknownKind || draft.includedIn !== undefined) return;
   const lacking = missingKeys(draft.kind, draft.values, singleEnded);
   if (lacking.length === 0) return;
@@ -240,7 +241,23 @@ export function checkMissing({ reports, singleEnded }: ElementContext, draft: Dr
     : missingKeys(draft.kind, draft.raw, singleEnded).filter(({ anyOf }) => !isMeant(draft, anyOf));
   draft.incomplete = true;
   const { file, path } = headOf(draft);
-  reports.push(...formatReports(missingKeyProblems(draft.kind, unwritten), file, path.slice(0, -1), draft.name));
+  const problems = missingKeyProblems(draft.kind, unwritten, (key) => namesFor(context, draft, key));
+  reports.push(...formatReports(problems, file, path.slice(0, -1), draft.name));
+}
+
+const MOST_OFFERED = 3;
+
+/** Stackups at hand, and the layers of this element's on which a signal runs: an example's names would be unknown here. */
+function namesFor({ sources, shelves }: ElementContext, draft: Draft, key: string): readonly string[] | undefined {
+  if (key !== 'stackup' && key !== 'layer') return undefined;
+  const source = sources.all.get(draft.place.file);
+  const stackups = source ? namesAtHand(sources, source, 'stackups') : [];
+  if (key === 'stackup') return stackups.slice(0, MOST_OFFERED).map(({ writtenAs }) => writtenAs[0]);
+  const only = stackups.length === 1 ? shelves.stackup(stackups[0].file, stackups[0].name) : undefined;
+  const layers = (draft.stackup ?? only)?.layers ?? [];
+  return layers
+    .flatMap((layer) => (layer.type === 'copper' && !layer.plane ? [layer.name] : []))
+    .slice(0, MOST_OFFERED);
 }
 
 /** `includes`: neighbours that the file already holds; their network is a straight through. */

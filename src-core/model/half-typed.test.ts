@@ -79,3 +79,12 @@ test('the first entry without its dash', () => {
   const { model: whole } = exampleModel();
   expect(model.elements.slice(1)).toEqual(whole.elements.slice(1));
 });
+
+test('names that are missing are offered as they are at hand, not as an example has them', () => {
+  const titles = (entry: string) =>
+    reportsIn(exampleTexts({ channel: changed(stub, entry) })).flatMap(({ fixes = [] }) =>
+      fixes.map(({ title }) => title),
+    );
+  const offered = titles('  - trace: tail\n    length: 1 mm\n    impedance: 100 ohm\n');
+  expect(offered).toEqual(['Add `stackup: sled.main`', 'Add `layer: L1`', 'Add `layer: L3`', 'Add `layer: L6`']);
+});
