@@ -1,6 +1,6 @@
 import { type Diagnostic, DiagnosticSeverity, DiagnosticTag } from 'vscode-languageserver';
 import type { Analysis } from '../src-core/analysis';
-import type { Finding, Severity } from '../src-core/rules/types';
+import type { Finding, Severity } from '../src-core/report';
 import { rangeOf } from '../src-core/text/index';
 import type { FilePath, TextRange } from '../src-core/text/types';
 import { toRange } from './convert';

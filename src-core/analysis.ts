@@ -3,7 +3,7 @@ import type { Figure, Ledger, LimitOutcome, Verdict } from './figures/types';
 import type { Link } from './link/types';
 import type { Model } from './model/types';
 import type { Networks } from './networks/types';
-import type { Finding } from './rules/types';
+import type { Finding } from './report';
 import type { ParsedFile } from './text/parsed';
 import type { FileContent, FilePath } from './text/types';
 import type { Time } from './time/types';

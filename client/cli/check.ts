@@ -1,6 +1,6 @@
 import { analyse } from '../../src-core/analyse';
 import type { Analysis } from '../../src-core/analysis';
-import type { Finding } from '../../src-core/rules/types';
+import type { Finding } from '../../src-core/report';
 import type { FileContent, FilePath } from '../../src-core/text/types';
 import { type Command, Refusal } from './command';
 import { findFiles, openWorkspace, type Workspace } from './files';

@@ -1,6 +1,6 @@
 import type { Analysis } from '../../src-core/analysis';
+import type { Finding, Fix } from '../../src-core/report';
 import { addWaivers } from '../../src-core/rules/add-waivers';
-import type { Finding, Fix } from '../../src-core/rules/types';
 import { applyEdits, resolveEdits } from '../../src-core/text/edits';
 import type { FilePath, TextEdit } from '../../src-core/text/types';
 import { type OptionValues, Refusal, type Terminal } from './command';

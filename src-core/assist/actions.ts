@@ -1,8 +1,8 @@
 import type { Analysis } from '../analysis';
+import type { Finding } from '../report';
 import { isAcceptable } from '../rules/add-waivers';
 import { rules } from '../rules/list';
 import { reportedByStages } from '../rules/reported';
-import type { Finding } from '../rules/types';
 import { resolveEdits } from '../text/edits';
 import { rangeOf } from '../text/index';
 import type { FilePath, PlaceEdit, TextEdit, TextRange } from '../text/types';

@@ -1,6 +1,6 @@
 import type { Analysis } from '../analysis';
 import { show } from '../quantity/show';
-import type { Finding } from '../rules/types';
+import type { Finding } from '../report';
 import type { Computed } from './computed';
 import type { Figure, LimitOutcome, Verdict } from './types';
 

@@ -1,4 +1,4 @@
-import type { Report } from '../rules/types';
+import type { Report } from '../report';
 import type { FilePath, Place, PlaceEdit, TextRange, ValuePath } from '../text/types';
 
 export type FormatRule = 'schema' | 'quantity' | 'implausible-quantity' | 'reserved-key' | 'format-version';

@@ -1,4 +1,4 @@
-import type { Fix } from '../rules/types';
+import type { Fix } from '../report';
 import type { Place } from '../text/types';
 import { type Draft, headOf } from './draft';
 import { type ModelReport, nameFixes, nameHint, quoted } from './reports';

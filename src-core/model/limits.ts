@@ -2,7 +2,7 @@ import type { LimitKindName, Quantity, QuantitySpec } from '../../schemas/format
 import { entryKind, readValues } from '../format/index';
 import { readQuantity } from '../quantity/read';
 import { isMapping, listAt } from '../raw';
-import type { Fix } from '../rules/types';
+import type { Fix } from '../report';
 import type { Place } from '../text/types';
 import type { ElementContext } from './elements';
 import { formatReports, type ModelReport, nameFixes, nameHint, placeIn, quoted } from './reports';

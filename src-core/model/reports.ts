@@ -1,6 +1,6 @@
 import { type FormatProblem, reportOf } from '../format/index';
 import { nearest } from '../quantity/nearest';
-import type { Fix, Report } from '../rules/types';
+import type { Fix, Report } from '../report';
 import type { FilePath, Place, ValuePath } from '../text/types';
 
 export type ModelReport = Report & { readonly rule: string; readonly subject?: string };

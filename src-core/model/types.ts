@@ -8,7 +8,7 @@ import type {
   ReceiverValues,
   TransmitterValues,
 } from '../../schemas/format/types';
-import type { Report } from '../rules/types';
+import type { Report } from '../report';
 import type { FilePath, Place } from '../text/types';
 
 export interface Point {

@@ -1,4 +1,5 @@
 import type { AnyElement, Model } from '../model/types';
+import type { Fix } from '../report';
 import type { Place } from '../text/types';
 
 /**
@@ -77,7 +78,7 @@ export interface ElementNote {
   readonly rule: string;
   readonly at: Place;
   readonly message: string;
-  readonly fixes?: readonly import('../rules/types').Fix[];
+  readonly fixes?: readonly Fix[];
   readonly value?: number;
   /** Default: higher. */
   readonly worse?: 'higher' | 'lower';

@@ -2,7 +2,7 @@ import type { Analysis } from '../analysis';
 import { rowFigureKinds } from '../figures/ledger';
 import type { Figure, LedgerRow } from '../figures/types';
 import { show } from '../quantity/show';
-import type { Finding, Severity } from '../rules/types';
+import type { Finding, Severity } from '../report';
 import type { Place } from '../text/types';
 import { plots } from './list';
 import { plainDescription } from './plain';

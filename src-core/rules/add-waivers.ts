@@ -1,8 +1,8 @@
 import type { Analysis } from '../analysis';
+import type { Finding } from '../report';
 import type { PlaceEdit } from '../text/types';
 import { rules } from './list';
 import { reportedByStages } from './reported';
-import type { Finding } from './types';
 import { acceptedText } from './waivers';
 
 /** Who accepts, until when and why: asked for by each surface. */

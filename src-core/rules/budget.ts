@@ -4,8 +4,9 @@ import { quoted } from '../model/reports';
 import type { Model } from '../model/types';
 import type { ElementNetwork } from '../networks/types';
 import { show } from '../quantity/show';
+import type { Related, Report } from '../report';
 import { keyOf, nameOf } from './places';
-import type { Judged, Related, Report, Rule } from './types';
+import type { Judged, Rule } from './types';
 
 /** What is spent is a logarithm of a computed number: its last digits are no finding. */
 const ROUNDING_DB = 1e-9;

@@ -3,9 +3,10 @@ import { FORMAT_VERSION } from '../../schemas/format/version';
 import { quoted } from '../model/reports';
 import { nearest } from '../quantity/nearest';
 import { isMapping } from '../raw';
+import type { Fix, Report } from '../report';
 import type { ParsedFile } from '../text/parsed';
 import type { Place } from '../text/types';
-import type { AnyRule, Fix, Report } from './types';
+import type { AnyRule } from './types';
 
 /** Severities and options of rules as `lanewright.config.yaml` sets them; what it does not name is the default. */
 export interface Config {

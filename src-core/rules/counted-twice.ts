@@ -1,7 +1,8 @@
 import { quoted } from '../model/reports';
 import type { AnyElement } from '../model/types';
+import type { Fix } from '../report';
 import { nameOf } from './places';
-import type { Fix, Rule } from './types';
+import type { Rule } from './types';
 
 const mayHoldVias = (element: AnyElement) =>
   (element.kind === 'connector' || element.kind === 'block') && element.file !== undefined;

@@ -2,8 +2,9 @@ import { droopOf } from '../link/droop';
 import { quoted } from '../model/reports';
 import type { AnyElement, Element, Model } from '../model/types';
 import { show } from '../quantity/show';
+import type { Fix } from '../report';
 import { keyOf } from './places';
-import type { Fix, Rule } from './types';
+import type { Rule } from './types';
 import { changed, modelWith } from './what-if';
 
 type Capacitor = Element<'capacitor'>;

@@ -5,9 +5,10 @@ import type { Figure } from '../figures/types';
 import { computeLink } from '../link/compute-link';
 import type { AnyElement } from '../model/types';
 import type { Networks } from '../networks/types';
+import type { Fix } from '../report';
 import { computeTime } from '../time/compute-time';
 import { latestOf } from './kept';
-import type { Fix, Judged } from './types';
+import type { Judged } from './types';
 import { modelWith, prepareChanged } from './what-if';
 
 /** The channel's networks with one element changed, on the grid that they have. undefined where it cannot be computed. */

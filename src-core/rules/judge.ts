@@ -1,10 +1,11 @@
 import type { SeveritySetting } from '../../schemas/format/types';
+import type { Finding, Report } from '../report';
 import { rangeOf } from '../text/range';
 import { type Config, readConfig } from './config';
 import { keptReports } from './kept';
 import { rules } from './list';
 import { type NamedReport, reportsOf } from './reported';
-import type { AnyRule, Finding, Judged, Report, StageName } from './types';
+import type { AnyRule, Judged, StageName } from './types';
 import { applyWaivers } from './waivers';
 
 /** More findings than this help nobody: the rest is counted. */

@@ -1,4 +1,5 @@
-import type { AnyRule, Judged, Report, StageName } from './types';
+import type { Report } from '../report';
+import type { AnyRule, Judged, StageName } from './types';
 
 type Reports = readonly (Report & { readonly subject?: string })[];
 interface Kept {

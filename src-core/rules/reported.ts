@@ -1,4 +1,5 @@
-import type { Judged, Report } from './types';
+import type { Report } from '../report';
+import type { Judged } from './types';
 
 export type NamedReport = Report & { readonly rule: string; readonly subject?: string };
 

@@ -1,9 +1,9 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
+import type { Finding } from '../report';
 import { rulesReference } from './build';
 import { rules } from './list';
 import { analyseExample, analyseFiles, applyFix } from './testing';
-import type { Finding } from './types';
 
 const told = (findings: readonly Finding[]) =>
   findings.filter(({ waivedBy }) => !waivedBy).map(({ rule, message }) => `${rule}: ${message}`);

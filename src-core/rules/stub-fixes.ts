@@ -3,8 +3,9 @@ import { quoted } from '../model/reports';
 import type { AnyElement, Element } from '../model/types';
 import type { StubFact } from '../networks/types';
 import { show } from '../quantity/show';
+import type { Fix } from '../report';
 import { withGain } from './gain';
-import type { Fix, Judged } from './types';
+import type { Judged } from './types';
 import { changed, prepareChanged } from './what-if';
 
 /** Fabricators quote remainders in steps of this size. */

@@ -1,5 +1,6 @@
 import { show } from '../quantity/show';
-import type { Fix, Rule } from './types';
+import type { Fix } from '../report';
+import type { Rule } from './types';
 
 /** Six digits are more than any register of taps has: noise of the sum's last bits is no finding. */
 const ROUNDING = 1e-6;

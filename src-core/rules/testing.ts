@@ -1,12 +1,12 @@
 import { expect } from 'vitest';
 import { analyse } from '../analyse';
 import type { Analysis } from '../analysis';
+import type { Finding, Fix } from '../report';
 import { applyEdits, resolveEdits } from '../text/edits';
 import { rangeOf } from '../text/index';
 import type { FileContent, FilePath } from '../text/types';
 import { BOARD, CHANNEL, CONFIG, files } from './testing-base';
 import { lay } from './testing-overlay';
-import type { Finding, Fix } from './types';
 
 /** The day on which every example is judged. */
 export const TODAY = '2026-06-30';

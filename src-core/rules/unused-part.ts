@@ -1,7 +1,8 @@
 import { joinPath } from '../inputs';
 import { quoted } from '../model/reports';
+import type { Report } from '../report';
 import type { ParsedFile } from '../text/parsed';
-import type { Judged, Report, Rule } from './types';
+import type { Judged, Rule } from './types';
 
 /** What a file declares under names: each list of names, and the key under which one is used. */
 const DECLARED = [

@@ -1,8 +1,9 @@
 import { expect, test } from 'vitest';
 import type { Quantity } from '../../schemas/format/types';
 import type { Waiver } from '../model/types';
+import type { Finding } from '../report';
 import { acceptanceOf, addWaivers } from './add-waivers';
-import type { Finding, Judged } from './types';
+import type { Judged } from './types';
 import { acceptedText, applyWaivers } from './waivers';
 
 const place = { file: 'lane.channel.yaml', path: ['limits', 0, 'min'] };

@@ -2,7 +2,8 @@ import { quoted } from '../model/reports';
 import type { Waiver } from '../model/types';
 import { nearest } from '../quantity/nearest';
 import { inSi, unitNamed } from '../quantity/units';
-import type { Finding, Fix, Judged, Report } from './types';
+import type { Finding, Fix, Report } from '../report';
+import type { Judged } from './types';
 
 /** What waivers did to findings, and what is wrong with the waivers themselves. */
 export interface Waived {

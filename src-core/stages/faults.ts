@@ -1,5 +1,5 @@
 import type { Inputs } from '../analysis';
-import type { Finding } from '../rules/types';
+import type { Finding } from '../report';
 import type { Place } from '../text/types';
 
 /** A stage of ours that threw, which none should. */

@@ -1,4 +1,4 @@
-import type { Report } from '../rules/types';
+import type { Report } from '../report';
 import type { FileKind, FilePath } from './types';
 
 /** A YAML file as read: plain values (null-prototype objects) beside what is needed to look up ranges. */

@@ -1,3 +1,3 @@
-import type { Report } from '../rules/types';
+import type { Report } from '../report';
 
 export type TextReport = Report & { readonly rule: string; readonly subject?: string };

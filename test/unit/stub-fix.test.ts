@@ -3,7 +3,7 @@ import { describe, expect, test } from 'vitest';
 import { analyse } from '../../src-core/analyse';
 import type { Analysis } from '../../src-core/analysis';
 import { gatherInputs } from '../../src-core/inputs';
-import type { Fix } from '../../src-core/rules/types';
+import type { Fix } from '../../src-core/report';
 import { applyEdits, resolveEdits } from '../../src-core/text/edits';
 import { rangeOf } from '../../src-core/text/index';
 import type { FileContent, FilePath } from '../../src-core/text/types';

@@ -3,7 +3,7 @@ import type { Analysis } from '../../../src-core/analysis';
 import { resonanceText } from '../../../src-core/figures/index';
 import type { Figure } from '../../../src-core/figures/types';
 import { fileKind } from '../../../src-core/inputs';
-import type { Finding, Fix } from '../../../src-core/rules/types';
+import type { Finding, Fix } from '../../../src-core/report';
 import { resolveEdits } from '../../../src-core/text/edits';
 import { locate, positionsIn } from './positions';
 

@@ -2,7 +2,7 @@ import { styleText } from 'node:util';
 import type { Analysis } from '../../../src-core/analysis';
 import { fileKind } from '../../../src-core/inputs';
 import { show } from '../../../src-core/quantity/show';
-import type { Finding } from '../../../src-core/rules/types';
+import type { Finding } from '../../../src-core/report';
 import { countFindings } from './counts';
 import { plain } from './plain';
 import { locate } from './positions';
