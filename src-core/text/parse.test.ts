@@ -121,6 +121,11 @@ test('a bracket that closes nothing', () => {
   expect(reportsOf('a: [1, 2]]\nb: 1\n')).toEqual(['yaml «]»']);
 });
 
+test('a number without a unit is one, whichever half its comma cut it into', () => {
+  const text = 'ffe: { pre: [-0,06], main: 0,82, post: [-0,12, 0.02] }\nports: [0,12]\n';
+  expect(reportsOf(text)).toEqual(['quantity «-0,06»', 'quantity «0,82»', 'quantity «-0,12»']);
+  expect(read(text)).toEqual({ ffe: { pre: [-0.06], main: 0.82, post: [-0.12, 0.02] }, ports: [0, 12] });
+});
 test.each(['{ width: 0,11 mm, gap: 0,14 mm }', '[1,6 dB/m @ 1.5 GHz, 5,1 dB/m @ 12.9 GHz]'])(
   'a decimal comma in `%s` is one finding for both halves, and meant as a point',
   (flow) => {

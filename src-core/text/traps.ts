@@ -87,13 +87,17 @@ function isCommaDecimal(before: PairNode, pair: PairNode, text: string): boolean
 
 function joined(before: PairNode, end: number, text: string): PairNode {
   const { start } = before.value.range;
-  const value = text.slice(start, end).replace(',', '.');
+  const meant = text.slice(start, end).replace(',', '.');
+  const value = plainValue(meant);
   return {
     ...before,
     value: { type: 'scalar', style: 'plain', value, range: { start, end } },
     range: { start: before.range.start, end },
   };
 }
+
+/** A number where no unit follows, as YAML reads it with a point. */
+const plainValue = (text: string) => (/^[-+]?\d+\.\d+$/.test(text) ? Number(text) : text);
 
 function commaReport(file: FilePath, path: ValuePath, start: number, end: number, text: string): TextReport {
   const written = text.slice(start, end);
@@ -114,7 +118,7 @@ function commaReport(file: FilePath, path: ValuePath, start: number, end: number
   };
 }
 
-/** `[1,6 dB/m @ 1.5 GHz]`: an integer, a comma without space, digits with a unit. */
+/** `[1,6 dB/m @ 1.5 GHz]`: an integer, a comma without space, digits with a unit; `[-0,12]`, since nobody writes minus zero. */
 function mendFlowItems(
   items: readonly ItemNode[],
   text: string,
@@ -126,18 +130,19 @@ function mendFlowItems(
   for (const item of items) {
     const before = result[result.length - 1];
     const written = text.slice(item.range.start, item.range.end);
+    const beforeText = before ? text.slice(before.range.start, before.range.end) : '';
     if (
       before?.value.type === 'scalar' &&
       before.value.style === 'plain' &&
       item.value.type === 'scalar' &&
       item.value.style === 'plain' &&
       item.range.start === before.range.end + 1 &&
-      isIntegerText(text.slice(before.range.start, before.range.end)) &&
+      isIntegerText(beforeText) &&
       isFraction(written) &&
-      !/^\d+$/.test(written)
+      (!/^\d+$/.test(written) || beforeText === '-0')
     ) {
       const range = { start: before.range.start, end: item.range.end };
-      const value = text.slice(range.start, range.end).replace(',', '.');
+      const value = plainValue(text.slice(range.start, range.end).replace(',', '.'));
       result[result.length - 1] = { range, value: { type: 'scalar', style: 'plain', value, range } };
       reports.push(commaReport(file, [...path, result.length - 1], range.start, range.end, text));
     } else result.push(item);
