@@ -5,7 +5,7 @@ import { droopOf } from './droop';
 import { dfeOf, equalise, jitterOf } from './equalise';
 import { eyeColumns } from './eye-columns';
 import { eyeDensity } from './eye-density';
-import { bathtubOf, type Eye, eyeHeight, eyeWidth } from './eye-measures';
+import { bathtubOf, type Eye, eyeHeight } from './eye-measures';
 import { jitterNodes } from './jitter';
 import { levelsOf } from './levels';
 import { shifted } from './resample';
@@ -53,7 +53,7 @@ export function computeLink(model: Model, time: Time): Link {
     droopVolts: droopVolts / 2,
     targetBer: model.targetBer,
   };
-  const bathtub = bathtubOf(eye);
+  const { widthUi, ...bathtub } = bathtubOf(eye);
   const open = mainCursorVolts > 0;
   const listedCursors = significant(at, uis, mainCursorVolts, Math.max(taps, fewestPostcursors));
   return {
@@ -70,7 +70,7 @@ export function computeLink(model: Model, time: Time): Link {
     noiseVolts: setting.noiseVolts,
     droopVolts,
     eyeHeightVolts: open ? eyeHeight(eye) : 0,
-    eyeWidthUi: open ? eyeWidth(bathtub, model.targetBer) : 0,
+    eyeWidthUi: open ? widthUi : 0,
     density: eyeDensity(eye),
     bathtub,
     without: [...(model.transmitter ? [] : ['transmitter']), ...(model.receiver ? [] : ['receiver'])],

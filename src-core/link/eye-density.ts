@@ -1,13 +1,14 @@
 import { type Eye, openingAt, tailLogs } from './eye-measures';
 import { gaussianTail } from './gaussian';
 import { jittered } from './jitter';
-import { lowestLog } from './noisy-tail';
 import type { EyeDensity } from './types';
 
 const rows = 160;
 /** Thresholds between the middle of an eye and its level at which the contour's bit errors are computed. */
 const contourSteps = 32;
 const floorLog10 = -20;
+/** Natural logarithm of a bin that holds nothing. */
+const emptyLog = Math.log(1e-40);
 /** Errors as frequent as this need no better count. */
 const common = 0.02;
 
@@ -58,7 +59,7 @@ function densityOf(eye: Eye, top: number): Float32Array {
   const { centre, perUi, tails, mainCursors, binVolts } = columns;
   const rowBins = (2 * top) / rows / binVolts;
   const all = levels.eyes.flat().filter((level, i, list) => list.indexOf(level) === i);
-  const logs = Array.from({ length: rows / 2 }, () => new Float64Array(tails.length).fill(lowestLog));
+  const logs = Array.from({ length: rows / 2 }, () => new Float64Array(tails.length).fill(emptyLog));
   for (let c = 0; c < tails.length; c++) {
     const { density, sigmaBins } = tails[c];
     const { half } = density;
@@ -149,7 +150,7 @@ function walkOutwards(
     for (let i = 0; i < perUi; i++) {
       if (!open[i]) continue;
       const errors = jittered(logs, centre - perUi / 2 + i, eye.nodes);
-      const log = Math.log(Math.max(errors, 1e-40));
+      const log = Math.log(Math.max(errors, Number.MIN_VALUE));
       if (errors <= wanted) {
         inside[i] = log;
         out[i] = steps[s];

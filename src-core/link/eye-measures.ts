@@ -1,7 +1,9 @@
 import type { EyeColumns } from './eye-columns';
 import { type JitterNodes, jittered } from './jitter';
 import type { Levels } from './levels';
-import { lowestLog } from './noisy-tail';
+
+/** Logarithm of no probability at all. */
+export const never = -1e9;
 
 /** The eye with its jitter and droop, ready to be measured. */
 export interface Eye {
@@ -26,7 +28,7 @@ export function tailLogs(
   [from, to]: readonly [number, number] = [0, columns.tails.length - 1],
   nearer?: { readonly logs: Float64Array; readonly enough: number },
 ): Float64Array {
-  const logs = new Float64Array(columns.tails.length).fill(lowestLog);
+  const logs = new Float64Array(columns.tails.length).fill(never);
   for (let c = Math.max(0, from); c <= Math.min(to, logs.length - 1); c++) {
     if (nearer && nearer.logs[c] > nearer.enough) {
       logs[c] = nearer.logs[c];
@@ -37,7 +39,7 @@ export function tailLogs(
     const falls = logAbove((high * main - droopVolts - thresholdVolts) / columns.binVolts);
     const rises = logAbove((thresholdVolts - low * main - droopVolts) / columns.binVolts);
     const [more, less] = falls > rises ? [falls, rises] : [rises, falls];
-    logs[c] = less <= lowestLog ? more : more + Math.log1p(Math.exp(less - more));
+    logs[c] = more + Math.log1p(Math.exp(less - more));
   }
   return logs;
 }
@@ -77,33 +79,43 @@ export function eyeHeight(eye: Eye): number {
   return Math.min(...heights);
 }
 
-/** Bit error ratio against phase, thresholds fixed in the middles of the eyes at the sampling instant. One UI, both ends included. */
-export function bathtubOf(eye: Eye): { phaseUi: Float64Array; ber: Float64Array } {
+/** Bit error ratio at a phase, UI from the sampling instant; thresholds stay in the middles of the eyes at the sampling instant. */
+function bitErrors(eye: Eye): (phaseUi: number) => number {
   const { columns, nodes, levels } = eye;
   const { centre, perUi } = columns;
   const main = columns.mainCursors[centre];
-  const phaseUi = Float64Array.from({ length: perUi + 1 }, (_, i) => (i - perUi / 2) / perUi);
-  const ber = new Float64Array(perUi + 1);
-  levels.eyes.forEach((pair, index) => {
-    const mirror = levels.eyes.length - 1 - index;
-    if (mirror < index) return;
-    const share = levels.bitErrorShare * (mirror > index ? 2 : 1);
-    const logs = tailLogs(eye, pair, ((pair[0] + pair[1]) / 2) * main);
-    for (let i = 0; i <= perUi; i++) ber[i] += share * jittered(logs, centre - perUi / 2 + i, nodes);
-  });
-  return { phaseUi, ber };
+  // the lower eyes of PAM4 mirror the upper ones
+  const half = levels.eyes.slice(Math.floor(levels.eyes.length / 2));
+  const parts = half.map((pair) => ({
+    share: levels.bitErrorShare * (pair[0] + pair[1] === 0 ? 1 : 2),
+    logs: tailLogs(eye, pair, ((pair[0] + pair[1]) / 2) * main),
+  }));
+  return (phaseUi) =>
+    parts.reduce((sum, { share, logs }) => sum + share * jittered(logs, centre + phaseUi * perUi, nodes), 0);
 }
 
-/** Phases about the sampling instant at which the bathtub stays at or below the target, UI; straight in the logarithm between phases. */
-export function eyeWidth({ phaseUi, ber }: { phaseUi: Float64Array; ber: Float64Array }, targetBer: number): number {
-  const centre = (ber.length - 1) / 2;
-  if (!(ber[centre] <= targetBer)) return 0;
+/** Bit error ratio against phase over one UI, both ends included, and how much of it stays at or below the target. */
+export function bathtubOf(eye: Eye): { phaseUi: Float64Array; ber: Float64Array; widthUi: number } {
+  const { perUi } = eye.columns;
+  const errors = bitErrors(eye);
+  const phaseUi = Float64Array.from({ length: perUi + 1 }, (_, i) => (i - perUi / 2) / perUi);
+  const ber = phaseUi.map(errors);
+  return { phaseUi, ber, widthUi: widthOf(errors, perUi, eye.targetBer) };
+}
+
+/** Walks outwards from the sampling instant, a column a step; the last step is halved 20 times. */
+function widthOf(errors: (phaseUi: number) => number, perUi: number, targetBer: number): number {
+  if (!(errors(0) <= targetBer)) return 0;
   const side = (direction: 1 | -1): number => {
-    for (let i = centre + direction; i >= 0 && i < ber.length; i += direction) {
-      if (ber[i] <= targetBer) continue;
-      const inside = Math.log(Math.max(ber[i - direction], 1e-40));
-      const share = (Math.log(targetBer) - inside) / (Math.log(ber[i]) - inside);
-      return Math.abs(phaseUi[i - direction]) + share * Math.abs(phaseUi[i] - phaseUi[i - direction]);
+    for (let i = 1; i <= perUi / 2; i++) {
+      if (errors((direction * i) / perUi) <= targetBer) continue;
+      let [inside, outside] = [(i - 1) / perUi, i / perUi];
+      for (let n = 0; n < 20; n++) {
+        const middle = (inside + outside) / 2;
+        if (errors(direction * middle) <= targetBer) inside = middle;
+        else outside = middle;
+      }
+      return inside;
     }
     return 0.5;
   };

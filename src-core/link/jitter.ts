@@ -1,12 +1,8 @@
-import { lowestLog } from './noisy-tail';
-
-/** Sampling times that stand for the jitter's distribution, as places between columns. */
+/** Sampling times that stand for the jitter's distribution. */
 export interface JitterNodes {
   readonly probability: Float64Array;
-  /** Whole columns before the place. */
-  readonly column: Int32Array;
-  /** Four a node: weights of the columns at column - 1 … column + 2. */
-  readonly weights: Float64Array;
+  /** Columns from the sampling instant, between them. */
+  readonly place: Float64Array;
   /** Columns that a sampling time may touch, from and to, both included. */
   readonly reach: readonly [number, number];
 }
@@ -22,57 +18,56 @@ const widestSigmas = 9;
 export function jitterNodes(randomUi: number, deterministicUi: number, columnsPerUi: number): JitterNodes {
   const diracs = deterministicUi > 0 ? [-deterministicUi / 2, deterministicUi / 2] : [0];
   const steps = randomUi > 0 ? Math.round(widestSigmas / spacing) : 0;
-  const places: { place: number; weight: number }[] = [];
+  const nodes: { place: number; weight: number }[] = [];
   for (const dirac of diracs) {
     for (let s = -steps; s <= steps; s++) {
       const z = s * spacing;
-      places.push({ place: (dirac + z * randomUi) * columnsPerUi, weight: Math.exp(-0.5 * z * z) });
+      nodes.push({ place: (dirac + z * randomUi) * columnsPerUi, weight: Math.exp(-0.5 * z * z) });
     }
   }
-  const whole = places.reduce((sum, { weight }) => sum + weight, 0);
-  const column = Int32Array.from(places, ({ place }) => Math.floor(place));
-  const weights = new Float64Array(4 * places.length);
-  places.forEach(({ place }, i) => {
-    const t = place - column[i];
-    weights.set(
-      [
-        (-t * (t - 1) * (t - 2)) / 6,
-        ((t + 1) * (t - 1) * (t - 2)) / 2,
-        (-(t + 1) * t * (t - 2)) / 2,
-        ((t + 1) * t * (t - 1)) / 6,
-      ],
-      4 * i,
-    );
-  });
+  const whole = nodes.reduce((sum, { weight }) => sum + weight, 0);
+  const places = nodes.map(({ place }) => Math.floor(place));
   return {
-    probability: Float64Array.from(places, ({ weight }) => weight / whole),
-    column,
-    weights,
-    reach: [Math.min(...column) - 1, Math.max(...column) + 2],
+    probability: Float64Array.from(nodes, ({ weight }) => weight / whole),
+    place: Float64Array.from(nodes, ({ place }) => place),
+    reach: [Math.min(...places) - 1, Math.max(...places) + 2],
   };
 }
 
 /**
- * Probability averaged over the jitter, from its logarithm in columns: a cubic through four columns' logarithms, since probabilities change
- * by decades from column to column; straight where one of them is none. Beyond the first and the last column theirs hold.
+ * Probability averaged over the jitter, from its logarithm in columns, since it changes by decades from column to column: between two
+ * a cubic that overshoots nowhere but where the columns themselves turn. Beyond the first and the last column theirs hold.
+ * @param at column of the sampling instant, or a place between columns
+ * Source: Fritsch and Butland, SIAM J. Sci. Stat. Comput. 5, 1984, harmonic mean of slopes.
  */
-export function jittered(logs: Float64Array, at: number, { probability, column, weights }: JitterNodes): number {
+export function jittered(logs: Float64Array, at: number, { probability, place }: JitterNodes): number {
   const last = logs.length - 1;
   let sum = 0;
   for (let i = 0; i < probability.length; i++) {
-    const c = at + column[i];
-    const b = logs[c < 0 ? 0 : Math.min(c, last)];
-    const d = logs[c + 1 < 0 ? 0 : Math.min(c + 1, last)];
-    const a = logs[c < 1 ? 0 : Math.min(c - 1, last)];
-    const e = logs[c + 2 < 0 ? 0 : Math.min(c + 2, last)];
-    let log: number;
-    if (a <= lowestLog || b <= lowestLog || d <= lowestLog || e <= lowestLog) {
-      const share = weights[4 * i + 2] + 2 * weights[4 * i + 3] - weights[4 * i];
-      log = b + (d - b) * share;
-    } else {
-      log = weights[4 * i] * a + weights[4 * i + 1] * b + weights[4 * i + 2] * d + weights[4 * i + 3] * e;
-    }
+    const here = at + place[i];
+    const c = Math.floor(here);
+    const log = c < 0 ? logs[0] : c >= last ? logs[last] : between(logs, c, here - c, last);
     sum += probability[i] * Math.exp(Math.min(log, 0));
   }
   return sum;
+}
+
+function between(logs: Float64Array, c: number, t: number, last: number): number {
+  const b = logs[c];
+  if (t === 0) return b;
+  const d = logs[c + 1];
+  const rise = d - b;
+  const before = c > 0 ? b - logs[c - 1] : rise;
+  const after = c + 2 <= last ? logs[c + 2] - d : rise;
+  const from = slope(before, rise);
+  const to = slope(rise, after);
+  const u = 1 - t;
+  return b * u * u * (1 + 2 * t) + d * t * t * (1 + 2 * u) + t * u * (u * from - t * to);
+}
+
+/** Harmonic mean of two rises of one sign; where they turn, the parabola's slope, no steeper than either. */
+function slope(before: number, after: number): number {
+  if (before * after > 0) return (2 * before * after) / (before + after);
+  const most = Math.min(Math.abs(before), Math.abs(after));
+  return Math.max(-most, Math.min(most, (before + after) / 2));
 }

@@ -3,12 +3,12 @@ import type { EvenDensity } from './isi-density';
 
 /** Beyond this many sigmas a normal variable has nothing to say: 1e-23. */
 const widest = 10;
-/** Natural logarithm below which a probability counts as none. */
-export const lowestLog = Math.log(1e-40);
+/** Sums of probabilities below this are no longer formed: the logarithm goes on as a parabola. */
+const lowestSum = 1e-32;
 
 /** Probabilities of an even density plus Gaussian noise. */
 export interface NoisyTail {
-  /** Natural logarithm of the probability of more than x bins, at least `lowestLog`. */
+  /** Natural logarithm of the probability of more than x bins; finite to any depth. */
   readonly logAbove: (bins: number) => number;
   /** rms of the noise convolved, bins, excess of the binning taken off. */
   readonly sigmaBins: number;
@@ -17,7 +17,9 @@ export interface NoisyTail {
 
 /**
  * Tail of an even density with normal noise added: Σ p[i] Q((x - i)/σ), terms non-negative, at whole bins, in between straight in the logarithm
- * (an error of (bin/σ)²/8: 0.05 % for σ of 16 bins). Without noise half of what lies exactly at x counts.
+ * (an error of (bin/σ)²/8: 0.05 % for σ of 16 bins). Without noise half of what lies exactly at x counts. Below 1e-32 the logarithm goes
+ * on with its slope and a Gaussian's curvature: such depths count for nothing themselves, but from phase to phase the logarithm must
+ * stay smooth to be interpolated.
  */
 export function noisyTail(density: EvenDensity, noiseBins: number): NoisyTail {
   const { half, excessVariance } = density;
@@ -33,21 +35,37 @@ export function noisyTail(density: EvenDensity, noiseBins: number): NoisyTail {
   const above = (k: number): number => {
     // noise alone carries bins below k over it, and bins just above k back
     let sum = k + reach + 1 < size ? beyond[k + reach + 1] : 0;
-    const last = Math.min(size - 1, k + reach);
-    for (let i = k + 1; i <= last; i++) sum += half[i] * (1 - Q[i - k]);
+    const furthest = Math.min(size - 1, k + reach);
+    for (let i = k + 1; i <= furthest; i++) sum += half[i] * (1 - Q[i - k]);
     for (let i = Math.max(0, k - reach); i <= Math.min(k, size - 1); i++) sum += half[i] * Q[k - i];
     // the mirrored bins -i, i > 0
     for (let i = 1; i <= Math.min(size - 1, reach - k); i++) sum += half[i] * Q[k + i];
     return sum;
   };
+  let last: { readonly at: number; readonly log: number; readonly slope: number } | undefined;
+  /** Where sums end, and how the logarithm falls there. */
+  const end = () => {
+    if (last) return last;
+    let [low, high] = [0, size + reach];
+    while (high - low > 1) {
+      const middle = (low + high) >> 1;
+      if (above(middle) > lowestSum) low = middle;
+      else high = middle;
+    }
+    const log = Math.log(above(low));
+    last = { at: low, log, slope: low > 0 ? Math.min(0, log - Math.log(above(low - 1))) : 0 };
+    return last;
+  };
   const logAt = (k: number) => {
-    const probability = above(k);
-    return probability > 1e-40 ? Math.log(probability) : lowestLog;
+    const probability = k < size + reach ? above(k) : 0;
+    if (probability > lowestSum) return Math.log(probability);
+    const { at, log, slope } = end();
+    const on = k - at;
+    return log + slope * on - (on * on) / (2 * Math.max(1, sigmaBins * sigmaBins));
   };
   const logAbove = (bins: number): number => {
     if (bins < 0) return Math.log1p(-Math.exp(logAbove(-bins)));
     const k = Math.floor(bins);
-    if (k >= size + reach) return lowestLog;
     const share = bins - k;
     return (1 - share) * logAt(k) + share * logAt(k + 1);
   };

@@ -3,6 +3,7 @@ import { expect, test } from 'vitest';
 import { checkValues } from '../../test/check-values';
 import { gaussianTail, gaussianTailInverse } from './gaussian';
 import { evenDensity } from './isi-density';
+import { jittered, jitterNodes } from './jitter';
 import { noisyTail } from './noisy-tail';
 
 checkValues({
@@ -148,4 +149,34 @@ test('without noise the worst pattern is where it is, to half a bin', () => {
     }),
     { seed: 4, numRuns: 100 },
   );
+});
+
+test('far below what can be summed the logarithm goes on as a Gaussian', () => {
+  const { logAbove } = noisyTail(evenDensity(new Float64Array(0), true, space()), 16);
+  for (const q of [12, 20, 40]) {
+    // ln Q(q) = -q²/2 - ln(q √(2π)) + ln(1 - 1/q² + …)
+    const exact = (-q * q) / 2 - Math.log(q * Math.sqrt(2 * Math.PI)) + Math.log1p(-1 / (q * q));
+    expect(Math.abs(logAbove(16 * q) / exact - 1)).toBeLessThan(0.02);
+  }
+});
+
+test('jitter averages probabilities that change by decades from column to column', () => {
+  // a margin in sigmas that falls off to both sides of column 20, slanted
+  const margin = (c: number) => 14 - 0.4 * (c - 20) ** 2 - 0.5 * (c - 20);
+  const log = (c: number) => {
+    const q = margin(c);
+    return q < 8 ? Math.log(gaussianTail(q)) : (-q * q) / 2 - Math.log(q * Math.sqrt(2 * Math.PI)) - 1 / (q * q);
+  };
+  const columns = Float64Array.from({ length: 41 }, (_, c) => log(c));
+  for (const [random, deterministic] of [
+    [0.2, 0],
+    [0, 3.4],
+    [0.3, 2.6],
+  ]) {
+    const nodes = jitterNodes(random / 32, deterministic / 32, 32);
+    const exact = nodes.probability.reduce((sum, p, i) => sum + p * Math.exp(log(20 + nodes.place[i])), 0);
+    // in sigmas of the margin, of which there are 13: probability times margin
+    const sigmas = Math.log(jittered(columns, 20, nodes) / exact) / 13;
+    expect(Math.abs(sigmas)).toBeLessThan(0.02);
+  }
 });
