@@ -201,8 +201,9 @@ async function followCursor(preview: Preview, editor: vscode.TextEditor, { clien
     position: client.code2ProtocolConverter.asPosition(selection.active),
   };
   const found = await client.sendRequest(elementAtRequest, params).catch(() => null);
-  if (editor.selection.active.isEqual(selection.active))
-    post(preview, { type: 'cursorElement', element: found?.element ?? null });
+  // Without an answer the mark stays: a server that starts knows no element yet.
+  if (found && editor.selection.active.isEqual(selection.active))
+    post(preview, { type: 'cursorElement', element: found.element });
 }
 
 async function save({ uri }: Preview, { format, name, content }: Extract<FromPage, { type: 'save' }>): Promise<void> {

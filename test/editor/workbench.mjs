@@ -97,6 +97,7 @@ export async function startWorkbench({ settings = {}, trust = true, installVsix 
   const remote = (path) => `vscode-remote://127.0.0.1:${port}${path}`;
   return {
     port,
+    pid: server.pid,
     data,
     remote,
     /** @param payload pairs as the workbench knows them */
