@@ -1,13 +1,13 @@
 import type { ElementKindName, EntryListName } from '../../schemas/format/types';
 import { entryLists } from '../../schemas/generated/format';
 import type { Analysis } from '../analysis';
-import { freeName, type KeyInfo, keysAt, missingKeys } from '../format/index';
+import { freeName, type KeyInfo, keysAt, likelyKinds, missingKeys } from '../format/index';
 import { rules } from '../rules/list';
 import type { ParsedFile } from '../text/parsed';
 import type { Completion } from './completions';
 import type { Cursor } from './cursor';
 import { likelyLayer } from './likely';
-import { kindOfEntry } from './subject';
+import { kindOfEntry, LISTS } from './subject';
 
 /** Keys that are not written yet; in a list the kinds of its entries, with what each needs. */
 export function completeKeys(
@@ -37,11 +37,23 @@ export function completeKeys(
         ).flatMap(({ anyOf }) => anyOf),
       )
     : new Set();
-  return keysAt(parsed.kind, cursor.path, kind)
+  const keys = keysAt(parsed.kind, cursor.path, kind)
     .filter(({ key }) => !present?.has(key))
     .map((info, index) =>
       keyCompletion(info, cursor, info.required || wanted.has(info.key) ? index : index + 100, kind),
     );
+  const kinds = missingKinds(cursor);
+  return [...kinds, ...keys.filter(({ label }) => !kinds.some((one) => one.label === label))];
+}
+
+/** In an entry of `path` or `limits` that does not say what it is: the kinds that know its keys. */
+function missingKinds(cursor: Cursor): readonly Completion[] {
+  const { path, levels } = cursor;
+  const list = path.length === 2 ? LISTS[String(path[0])] : undefined;
+  const present = [...(levels.at(-1)?.keys.keys() ?? [])];
+  if (!list || present.some((key) => entryLists[list].kinds.includes(key))) return [];
+  const { kinds, misspelt } = likelyKinds(list, present);
+  return misspelt ? [] : kinds.map((kind, index) => keyCompletion({ key: kind }, cursor, index - kinds.length, kind));
 }
 
 /** The list whose entry begins here, if it is one of kinds. */

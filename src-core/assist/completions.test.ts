@@ -162,3 +162,13 @@ test('a stackup of a parts file that is not used yet brings its `use` entry', as
 test('nothing is offered in a comment', async () => {
   expect((await offered(`${HEAD}path: # ‸`)).found).toEqual([]);
 });
+
+test.each([
+  ['an unknown kind', '  - trcae: tail\n    length: 3 mm\n    ‸\n', ['stackup', 'layer'], []],
+  ['no kind', '  - length: 3 mm\n    layer: L1\n    ‸\n', ['trace', 'stackup', 'width'], ['drill']],
+  ['two kinds', '  - trace: tail\n    via: tail\n    ‸\n', ['length', 'stackup'], []],
+])('an entry with %s keeps its completion', async (_, entry, wanted, others) => {
+  const { labels } = await offered(`${HEAD}${START}${entry}`);
+  expect(labels).toEqual(expect.arrayContaining(wanted));
+  for (const other of others) expect(labels).not.toContain(other);
+});

@@ -1,5 +1,5 @@
 import { entryLists } from '../../schemas/generated/format';
-import { type KeyInfo, keySchemaAt } from '../format/index';
+import { type KeyInfo, keySchemaAt, likelyKinds } from '../format/index';
 import type { ParsedFile } from '../text/parsed';
 import type { TextRange, ValuePath } from '../text/types';
 import { type Cursor, cursorAt, type Level } from './cursor';
@@ -18,6 +18,8 @@ export interface Subject {
   readonly kind?: string;
 }
 
+export const LISTS: Readonly<Record<string, 'elements' | 'limits'>> = { path: 'elements', limits: 'limits' };
+
 /** Which kind the entry is that the cursor stands in, read from the keys around it. */
 export function kindOfEntry(levels: readonly Level[]): string | undefined {
   const kinds = [...entryLists.elements.kinds, ...entryLists.limits.kinds, ...entryLists['stackup-rows'].kinds];
@@ -27,6 +29,10 @@ export function kindOfEntry(levels: readonly Level[]): string | undefined {
     const isEntry = typeof path.at(-1) === 'number' && (path.length === 2 || path[0] === 'stackups');
     const kind = isEntry ? kinds.find((name) => keys.has(name)) : undefined;
     if (kind) return kind;
+    // misspelt or left out: the rest of the entry keeps its keys
+    const list = isEntry ? LISTS[String(path[0])] : undefined;
+    const likely = list && likelyKinds(list, [...keys.keys()]).kinds[0];
+    if (likely) return likely;
   }
   return undefined;
 }

@@ -113,6 +113,25 @@ function kindsWith(list: EntryListName, keys: readonly string[]): string[] {
   return kinds.filter((kind) => known.every((key) => knows(kind, key)));
 }
 
+/**
+ * What an entry of `path` or `limits` without a readable kind may become: the kind that is misspelt, else those that know its keys.
+ * @returns none while nothing tells, `misspelt` where a key is nearly a kind's name
+ */
+export function likelyKinds(
+  list: 'elements' | 'limits',
+  keys: readonly string[],
+): { readonly kinds: readonly string[]; readonly misspelt: boolean } {
+  const { kinds, prefix } = entryLists[list];
+  const isKey = (key: string) =>
+    kinds.some((kind) => Object.hasOwn(schemas[`${prefix}${kind}` as SchemaName].properties ?? {}, key));
+  for (const key of keys.filter((one) => !isKey(one)).slice(0, 20)) {
+    const near = nearest(key, kinds);
+    if (near !== undefined) return { kinds: [near], misspelt: true };
+  }
+  const fitting = kindsWith(list, keys);
+  return { kinds: fitting.length < kinds.length ? fitting : [], misspelt: false };
+}
+
 /** No key is a kind: the first is one misspelt or unknown, or the kind was left out. */
 function noKind(list: EntryListName, keys: readonly string[]): FormatProblem {
   const { kinds, noun, prefix } = entryLists[list];
@@ -123,7 +142,9 @@ function noKind(list: EntryListName, keys: readonly string[]): FormatProblem {
   const attributes = kinds.flatMap((kind) => Object.keys(schemas[`${prefix}${kind}` as SchemaName].properties ?? {}));
   const isAttribute = attributes.includes(first) || (!near && nearest(first, attributes) !== undefined);
   if (isAttribute) {
-    const fixes = kindsWith(list, keys).map(
+    const fitting = kindsWith(list, keys);
+    const example = fitting[0] ?? kinds[0];
+    const fixes = fitting.map(
       (kind): FormatFix => ({
         title: `Add \`${kind}: ${freeName(kind)}\``,
         edits: [{ op: 'set', path: [], key: kind, text: freeName(kind) }],
@@ -132,7 +153,7 @@ function noKind(list: EntryListName, keys: readonly string[]): FormatProblem {
     return say(
       [],
       'entry',
-      `This entry does not say what it is: ${noun} begins with its kind and own name, as \`${kinds[0]}: ${freeName(kinds[0])}\`.`,
+      `This entry does not say what it is: ${noun} begins with its kind and own name, as \`${example}: ${freeName(example)}\`.`,
       fixes,
     );
   }

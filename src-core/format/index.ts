@@ -3,7 +3,7 @@
  *
  * - `entryKind(list, entry)` chooses an entry's schema; `freeName(kind, taken)` proposes an own name.
  * - `readValues(schema, raw, options)` checks a mapping against its schema and reads its quantities. Keys that are bad are left
- *   out of `values` and have a problem, the others are kept. (`validateEntry` is its first half: the schema alone.)
+ *   out of `values` and have a problem, the others are kept.
  * - `missingKeys(kind, values, singleEnded)`, after a part was merged in: what the kind's model needs and is not there.
  *   Of an entry whose own name is missing say that alone.
  * - `reportOf(problem, { file, path })` turns a problem, whose paths are relative to the entry, into a `Report` at a place.
@@ -11,11 +11,9 @@
  *
  * Every function takes anything that YAML can make and returns; none throws.
  */
-export { type EntryKind, entryKind, schemaOfKind } from './entry-kind';
+export { entryKind, likelyKinds } from './entry-kind';
 export { freeName } from './free-name';
 export { type KeyInfo, keySchemaAt, keysAt, keysOf } from './keys';
-export { type MissingKey, missingKeyProblems, missingKeys } from './missing';
-export { type FormatFix, type FormatProblem, type FormatRule, type RelativeEdit, reportOf } from './problem';
-export { type ReadOptions, readValues } from './read';
-export { validateEntry } from './validate';
-export { nameProblem } from './wrong-name';
+export { missingKeyProblems, missingKeys } from './missing';
+export { type FormatProblem, reportOf } from './problem';
+export { readValues } from './read';

@@ -181,13 +181,13 @@ test.each<[EntryListName, unknown, string, string[]]>([
   [
     'elements',
     { width: '1 mm' },
-    'This entry does not say what it is: an element begins with its kind and own name, as `package: package-1`.',
+    'This entry does not say what it is: an element begins with its kind and own name, as `trace: trace-1`.',
     ['Add `trace: trace-1`'],
   ],
   [
     'elements',
     { lenght: '1 mm', drill: '1 mm' },
-    'This entry does not say what it is: an element begins with its kind and own name, as `package: package-1`.',
+    'This entry does not say what it is: an element begins with its kind and own name, as `via: via-1`.',
     ['Add `via: via-1`'],
   ],
   ['limits', { eyes: 'a' }, '`eyes` is no kind of limit; did you mean `eye`?', ['Change to `eye`']],
