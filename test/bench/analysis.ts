@@ -1,54 +1,50 @@
 import { analyse } from '../../src-core/analyse';
 import type { Analysis } from '../../src-core/analysis';
 import { gatherInputs } from '../../src-core/inputs';
-import type { FileContent } from '../../src-core/text/types';
+import type { FileContent, FilePath } from '../../src-core/text/types';
 
-/** Milliseconds of `count` cold analyses and of as many one-element edits, each after a warm-up. */
-export async function benchAnalysis(
-  texts: Readonly<Record<string, string>>,
-  variants: readonly string[],
-  count: number,
-) {
-  const inputsOf = (text: string) =>
-    gatherInputs(
-      {
-        read: async (file): Promise<FileContent> =>
-          file === 'lane.channel.yaml'
-            ? { kind: 'text', text }
-            : texts[file] === undefined
-              ? { kind: 'missing' }
-              : { kind: 'text', text: texts[file] },
-      },
-      'lane.channel.yaml',
-      '2026-12-01',
-    );
-  const inputs = await Promise.all(variants.map(inputsOf));
-  const time = (work: () => void) => {
+/**
+ * Milliseconds from texts to results, gathering included: of a channel never seen (cold), and after an edit of one element.
+ * Ten of one and ten of the other in turn, so that what else the machine does weighs on both.
+ *
+ * Cold is a first analysis, of files in a folder of its own: no text, value, network, product or pulse of before is found. What a
+ * process keeps for good is there: compiled code, the tables of Fourier transforms by their length, schemas and units.
+ */
+export async function benchAnalysis(boardText: string, variants: readonly string[], count: number) {
+  const gather = (folder: string, text: string, before?: Analysis) => {
+    const read = async (path: FilePath): Promise<FileContent> => {
+      if (path === `${folder}/lane.channel.yaml`) return { kind: 'text', text };
+      return path === `${folder}/board.parts.yaml` ? { kind: 'text', text: boardText } : { kind: 'missing' };
+    };
+    return gatherInputs({ read }, `${folder}/lane.channel.yaml`, '2026-12-01', before?.inputs, before?.parsed);
+  };
+  let folders = 0;
+  const cold = async (text: string, until: 'time' | 'link') =>
+    analyse(await gather(`cold-${++folders}`, text), undefined, { until });
+  const times = {
+    cold: [] as number[],
+    coldUntilTime: [] as number[],
+    edit: [] as number[],
+    eye: [] as number[],
+  };
+  const time = async <T>(name: keyof typeof times, work: () => T | Promise<T>) => {
     const start = performance.now();
-    work();
-    return performance.now() - start;
+    const result = await work();
+    times[name].push(performance.now() - start);
+    return result;
   };
-  const cold: number[] = [];
-  const coldUntilTime: number[] = [];
+  let kept = await cold(variants[0], 'link');
+  const folder = kept.inputs.file.slice(0, kept.inputs.file.indexOf('/'));
   for (let i = 0; i < count; i++) {
-    coldUntilTime.push(time(() => analyse(inputs[i % inputs.length], undefined, { until: 'time' })));
-    cold.push(time(() => analyse(inputs[i % inputs.length], undefined, { until: 'link' })));
+    const text = variants[(i + 1) % variants.length];
+    if (i % 20 < 10) {
+      await time('coldUntilTime', () => cold(text, 'time'));
+      await time('cold', () => cold(text, 'link'));
+    } else {
+      const before = kept;
+      kept = await time('edit', async () => analyse(await gather(folder, text, before), before, { until: 'time' }));
+      kept = await time('eye', () => analyse(kept.inputs, kept, { until: 'link' }));
+    }
   }
-  let kept: Analysis = analyse(inputs[0], undefined, { until: 'link' });
-  const edit: number[] = [];
-  const eye: number[] = [];
-  for (let i = 0; i < count; i++) {
-    const next = inputs[(i + 1) % inputs.length];
-    edit.push(time(() => void (kept = analyse(next, kept, { until: 'time' }))));
-    eye.push(time(() => void (kept = analyse(next, kept, { until: 'link' }))));
-  }
-  const last = analyse(inputs[0], undefined, { until: 'link' });
-  return {
-    cold,
-    coldUntilTime,
-    edit,
-    eye,
-    points: last.networks?.grid.points ?? 0,
-    elements: last.model.elements.length,
-  };
+  return { ...times, points: kept.networks?.grid.points ?? 0, elements: kept.model.elements.length };
 }
