@@ -37,18 +37,19 @@ export interface ElementContext {
 export function readElement(context: ElementContext, entry: unknown, index: number): Draft {
   const { sources, reports } = context;
   const { file } = sources.own;
-  const path = ['path', index];
-  const place = placeIn(file, path);
   const raw = isMapping(entry) ? entry : {};
   const chosen = entryKind('elements', entry);
   const kind = (chosen.kind as ElementKindName | undefined) ?? likelyKind(entry);
+  const { place, places } = placesIn(file, raw, kind, index);
+  const { path } = place;
   const draft: Draft = {
     kind,
     name: nameOf(raw[kind], kind, index),
     index,
     place,
     values: Object.create(null),
-    places: Object.create(null),
+    // Of its own: keys of a part are added.
+    places: Object.assign(Object.create(null), places),
     derived: {},
     incomplete: false,
     unknownKind: chosen.problem !== undefined,
@@ -56,18 +57,15 @@ export function readElement(context: ElementContext, entry: unknown, index: numb
     raw,
     sourceOf: () => file,
   };
-  for (const { key } of keysOf(kind)) draft.places[key] = place;
   if (chosen.problem) {
     reports.push(...formatReports([chosen.problem], file, path, draft.name));
     draft.incomplete = true;
     draft.values = readValues(kind, raw, context).values as Record<string, unknown>;
-    setOwnPlaces(draft);
     return draft;
   }
   const { values, problems } = readValues(kind, raw, context);
   reports.push(...formatReports(problems, file, path, draft.name));
   draft.values = values as Record<string, unknown>;
-  setOwnPlaces(draft);
   mergePart(context, draft);
   if (context.singleEnded) refusePairKeys(context, draft);
   resolveStackup(context, draft);
@@ -76,9 +74,28 @@ export function readElement(context: ElementContext, entry: unknown, index: numb
   return draft;
 }
 
-function setOwnPlaces(draft: Draft): void {
-  for (const key of Object.keys(draft.raw))
-    draft.places[key] = { file: draft.place.file, path: [...draft.place.path, key] };
+interface Places {
+  readonly file: string;
+  readonly kind: ElementKindName;
+  readonly index: number;
+  readonly place: Place;
+  readonly places: Readonly<Record<string, Place>>;
+}
+
+/** By the entry's value, which stays the same object while its text does. */
+const knownPlaces = new WeakMap<RawMapping, Places>();
+
+/** Where the element and each of its keys stand; one that is not written stands where the element does. */
+function placesIn(file: string, raw: RawMapping, kind: ElementKindName, index: number): Places {
+  const known = knownPlaces.get(raw);
+  if (known && known.file === file && known.kind === kind && known.index === index) return known;
+  const place = placeIn(file, ['path', index]);
+  const places: Record<string, Place> = Object.create(null);
+  for (const { key } of keysOf(kind)) places[key] = place;
+  for (const key of Object.keys(raw)) places[key] = { file, path: [...place.path, key] };
+  const made = { file, kind, index, place, places };
+  knownPlaces.set(raw, made);
+  return made;
 }
 
 /** What an entry without a readable kind was probably meant to be; something without layers where nothing tells. */

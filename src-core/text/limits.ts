@@ -11,6 +11,7 @@ export const MAX_REPORTS = 200;
  * so this runs before every parse.
  */
 export function tooDeepAt(text: string, limit = MAX_NESTING): number | undefined {
+  if (!mayNest(text, limit)) return undefined;
   // Block levels that are open: twice the column, plus one for a list, which may stand at its key's own column.
   const levels: number[] = [];
   let flow = 0;
@@ -48,6 +49,18 @@ export function tooDeepAt(text: string, limit = MAX_NESTING): number | undefined
     if (newline !== -1) lineBegin = offset - token.length + newline + 1;
   }
   return undefined;
+}
+
+/** Each level is begun by a character of its own: a text with few of them, as one entry is, cannot nest deeply. */
+function mayNest(text: string, limit: number): boolean {
+  let left = limit;
+  for (let i = 0; i < text.length; i++) {
+    const character = text[i];
+    const begins =
+      character === ':' || character === '-' || character === '{' || character === '[' || character === '?';
+    if (begins && --left < 0) return true;
+  }
+  return false;
 }
 
 /** Length in UTF-8 without building it. */
