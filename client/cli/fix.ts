@@ -94,7 +94,10 @@ async function write(analysis: Analysis, edits: readonly TextEdit[], workspace: 
   for (const [file, { after }] of textsAfter(analysis, edits)) await writeAtomically(workspace.toDisk(file), after);
 }
 
-/** The lines that change, each file as one hunk a change. */
+/** Lines of a hunk as a unified diff counts them: from 1, and none as standing behind the line before. */
+const span = (top: number, lines: readonly string[]) => `${lines.length > 0 ? top + 1 : top},${lines.length}`;
+
+/** What changes in each file, as one hunk from the first line that changes to the last. */
 function diffOf(analysis: Analysis, edits: readonly TextEdit[], workspace: Workspace): string {
   let output = '';
   for (const [file, { before, after }] of textsAfter(analysis, edits)) {
@@ -112,7 +115,7 @@ function diffOf(analysis: Analysis, edits: readonly TextEdit[], workspace: Works
       bottom++;
     const gone = old.slice(top, old.length - bottom);
     const come = fresh.slice(top, fresh.length - bottom);
-    output += `@@ -${top + 1},${gone.length} +${top + 1},${come.length} @@\n${gone.map((line) => `-${line}\n`).join('')}${come.map((line) => `+${line}\n`).join('')}`;
+    output += `@@ -${span(top, gone)} +${span(top, come)} @@\n${gone.map((line) => `-${line}\n`).join('')}${come.map((line) => `+${line}\n`).join('')}`;
   }
   return output;
 }

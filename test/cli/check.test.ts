@@ -1,3 +1,4 @@
+import { execFileSync } from 'node:child_process';
 import { cpSync, mkdirSync, readFileSync, symlinkSync, truncateSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import Ajv from 'ajv/dist/2020';
@@ -48,7 +49,7 @@ describe('JSON', () => {
     const stub = sled?.findings.find(({ rule }) => rule === 'stub-resonance');
     expect(stub?.subject).toBe('dive');
     const line = readFileSync(SLED, 'utf8').split('\n')[(stub?.location.range.start.line ?? 0) - 1];
-    expect(line).toMatch(/dive|stackup|drill/);
+    expect(line).toContain('- via: dive');
     expect(stub?.fixes[0]?.title).toMatch(/GHz/);
     expect(stub?.fixes[0]?.edits[0]?.text).toMatch(/backdrill/);
   });
@@ -227,6 +228,20 @@ describe('fixes and waivers', () => {
     expect(readFileSync(file, 'utf8')).toBe(broken);
     expect((await lanewright(['check', file, '--fix', '--root', folder])).status).toBe(0);
     expect(readFileSync(file, 'utf8')).toBe(GOOD);
+  });
+  test('what --diff shows is a patch: applied, it leaves what --fix would', async () => {
+    const wanted = copy();
+    const patched = copy();
+    const call = ['check', 'lanes/camera-sled.channel.yaml', '--unsafe-fixes', '--root', '.'];
+    await lanewright([...call, '--fix'], { cwd: wanted });
+    const { stderr } = await lanewright([...call, '--diff'], { cwd: patched });
+    const patch = stderr.slice(stderr.indexOf('--- '));
+    const lane = ['lanes', 'camera-sled.channel.yaml'] as const;
+    const before = readFileSync(join(patched, ...lane), 'utf8');
+    execFileSync('git', ['apply', '--unidiff-zero', '-p0', '-'], { cwd: patched, input: patch });
+    const after = readFileSync(join(patched, ...lane), 'utf8');
+    expect(after).toBe(readFileSync(join(wanted, ...lane), 'utf8'));
+    expect(after).not.toBe(before);
   });
   test('--add-waivers adopts a failing channel; without a reason nothing is written', async () => {
     const folder = copy();
