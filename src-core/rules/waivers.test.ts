@@ -54,6 +54,16 @@ test('a value of another dimension accepts nothing', () => {
   expect(findings[0].waivedBy).toBeUndefined();
   expect(outgrown[0].message).toContain('cannot be compared with the `9 mm`');
 });
+test('a bare number gets its unit by a fix; no waiver that once accepted something goes without a person’s word', () => {
+  const bare = { ...upTo(9, '9', 'ratio'), unit: '' };
+  const { outgrown } = apply(waiver({ upTo: bare }));
+  expect(outgrown[0].fixes?.map(({ title, safe }) => [title, safe])).toEqual([
+    ['Write `9 dB`', undefined],
+    ['Remove this waiver', undefined],
+  ]);
+  const { outdated } = apply(waiver({ until: '2026-06-29' }));
+  expect(outdated[0].fixes?.map(({ safe }) => safe)).toEqual([undefined]);
+});
 test.each([
   ['2026-06-30', true],
   ['2026-06-29', false],

@@ -36,11 +36,21 @@ function covers(waiver: Waiver, finding: Finding): boolean {
 /** The day after `until` is the first on which it does not hold. Both are `YYYY-MM-DD`, which sort as text. */
 const isOver = ({ until }: Waiver, today: string) => until < today;
 
-const remove = (waiver: Waiver): Fix => ({
+/** Safe where it accepts nothing; one that is over or outgrown is a person's to renew or give up. */
+const remove = (waiver: Waiver, { safe = false } = {}): Fix => ({
   title: 'Remove this waiver',
   edits: [{ op: 'remove', at: { ...waiver.place, on: 'entry' } }],
-  safe: true,
+  ...(safe && { safe }),
 });
+
+/** `up-to: 2.4` where the finding is in dB: the unit was left out. */
+function addUnit({ upTo, place }: Waiver, { valueText }: Finding): readonly Fix[] {
+  const unit = partsOf(valueText)?.unit ?? '';
+  if (upTo?.unit !== '' || unit === '') return [];
+  const text = `${upTo.text} ${unit}`;
+  const edit = { op: 'value', at: { ...place, path: [...place.path, 'up-to'] }, text } as const;
+  return [{ title: `Write ${quoted(text)}`, edits: [edit], preferred: true }];
+}
 
 const at = (waiver: Waiver, key: string) => ({ ...waiver.place, path: [...waiver.place.path, key] });
 
@@ -61,7 +71,7 @@ function outgrownReport(waiver: Waiver, finding: Finding): Report {
     at: at(waiver, 'up-to'),
     message: `${quoted(waiver.rule)} at ${quoted(waiver.at)} is now ${finding.valueText ?? finding.value}, ${comparison}; its finding counts again.`,
     related: [{ at: finding.at, message: finding.message }],
-    fixes: [remove(waiver)],
+    fixes: [...(isComparable(waiver, finding) ? [] : addUnit(waiver, finding)), remove(waiver)],
   };
 }
 
@@ -69,14 +79,14 @@ function deadReport(waiver: Waiver, rules: readonly string[]): Report {
   const place = at(waiver, 'rule');
   if (rules.includes(waiver.rule)) {
     const message = `This waiver matches nothing: there is no finding of ${quoted(waiver.rule)} at ${quoted(waiver.at)}.`;
-    return { at: place, message, fixes: [remove(waiver)], tags: ['unnecessary'] };
+    return { at: place, message, fixes: [remove(waiver, { safe: true })], tags: ['unnecessary'] };
   }
   const near = nearest(waiver.rule, rules);
   const message = `This waiver matches nothing: ${quoted(waiver.rule)} is not a rule${near ? `; did you mean \`${near}\`?` : '.'}`;
   const rename: readonly Fix[] = near
     ? [{ title: `Write \`${near}\``, edits: [{ op: 'value', at: place, text: near }], preferred: true, safe: true }]
     : [];
-  return { at: place, message, fixes: [...rename, remove(waiver)] };
+  return { at: place, message, fixes: [...rename, remove(waiver, { safe: true })] };
 }
 
 const returned = (finding: Finding, waiver: Waiver, why: string): Finding => ({
