@@ -95,11 +95,11 @@ function meritOf({ pulse, instant, noiseVolts }: Equalised, model: Model, sample
   const corrected = solveDfe(cursors[0], cursors.subarray(1), taps, limit);
   let interferenceSquared = 0;
   for (let m = 1; m < uis; m++) interferenceSquared += (cursors[m] - (corrected[m - 1] ?? 0)) ** 2;
-  const at = Math.round(instant);
+  // at the instant itself, not at the nearest sample: settings lie close together
   let slopesSquared = 0;
   for (let m = 0; m < uis; m++) {
-    const place = at + m * samplesPerUi;
-    const rise = pulse[(place + 1) % pulse.length] - pulse[(place - 1 + pulse.length) % pulse.length];
+    const place = first + m * samplesPerUi;
+    const rise = weighted(pulse, place + 1, w) - weighted(pulse, place - 1, w);
     slopesSquared += ((rise * samplesPerUi) / 2) ** 2;
   }
   const { randomUi, deterministicUi } = jitterOf(model);
