@@ -122,7 +122,7 @@ function mergePart(context: ElementContext, draft: Draft): void {
     return;
   }
   const at = draft.places.part;
-  const found = lookUp(sources, draft.place.file, 'parts', written, at, reports, draft.name);
+  const found = lookUp(sources, draft.place.file, 'parts', written, at, reports, draft.name, draft.kind);
   const rawPart = found.broken ? undefined : mappingAt(sources.all.get(found.file)?.raw, 'parts')[found.name];
   if (found.broken || !isMapping(rawPart)) {
     draft.partUnread = true;

@@ -140,3 +140,9 @@ test('materials in both directions, foils with spheres', () => {
   expect(foil?.roughness.kind === 'huray' && foil.roughness.radiusMeters * 1e6).toBeCloseTo(0.29893, 5);
   expect(foil?.roughness.kind === 'huray' && 1 + 1.5 * foil.roughness.ratio).toBeCloseTo(8.33038, 5);
 });
+
+test('in place of an unknown part those of the element’s kind are offered', () => {
+  const [report] = reportsIn(exampleTexts({ channel: changed('part: sled.sled-mate', 'part: zebra') }));
+  expect(report.message).toBe('There is no part `zebra`; there is `sled.sled-mate`.');
+  expect(report.fixes?.map(({ title }) => title)).toEqual(['Change to `sled.sled-mate`']);
+});

@@ -1,4 +1,4 @@
-import { mappingAt } from '../raw';
+import { isMapping, mappingAt } from '../raw';
 import type { FilePath, Place } from '../text/types';
 import { type ModelReport, nameFixes, nameHint, placeIn, quoted } from './reports';
 import type { Source, Sources } from './sources';
@@ -25,6 +25,7 @@ const holds = (source: Source | undefined, role: Shared, name: string) =>
 /**
  * Looks a name up as written in a file: in the file itself first, then in the files that it uses, with their prefix or, while only
  * one has it, without. An unknown or ambiguous name is a report, unless a file that could not be read may hold it.
+ * @param kind of the element that names a part: of others none is offered while one of its kind is at hand
  */
 export function lookUp(
   sources: Sources,
@@ -34,6 +35,7 @@ export function lookUp(
   at: Place,
   reports: ModelReport[],
   subject?: string,
+  kind?: string,
 ): Found {
   const source = sources.all.get(file);
   if (!source) return NOT_FOUND;
@@ -56,7 +58,7 @@ export function lookUp(
     }
     if ([...source.uses.values()].some((used) => used === undefined || sources.all.get(used)?.newer)) return NOT_FOUND;
   }
-  const names = writableNames(sources, source, role);
+  const names = writableNames(sources, source, role, kind);
   reports.push({
     rule: 'unknown-name',
     at,
@@ -119,5 +121,12 @@ export function namesAtHand(sources: Sources, source: Source, role: Shared): rea
   });
 }
 
-const writableNames = (sources: Sources, source: Source, role: Shared) =>
-  namesAtHand(sources, source, role).map(({ writtenAs }) => writtenAs[0]);
+function writableNames(sources: Sources, source: Source, role: Shared, kind?: string): readonly string[] {
+  const names = namesAtHand(sources, source, role);
+  const isFitting = ({ file, name }: WritableName) => {
+    const part = mappingAt(sources.all.get(file)?.raw, role)[name];
+    return isMapping(part) && part.kind === kind;
+  };
+  const fitting = kind === undefined ? [] : names.filter(isFitting);
+  return (fitting.length > 0 ? fitting : names).map(({ writtenAs }) => writtenAs[0]);
+}
