@@ -5,7 +5,14 @@ import type { ParsedFile } from '../text/parsed';
 import type { FilePath } from '../text/types';
 import { type Draft, finish } from './draft';
 import { withoutEchoes } from './echoes';
-import { checkMissing, type ElementContext, readElement, reportDuplicateNames, resolveIncludes } from './elements';
+import {
+  checkMissing,
+  checkOwners,
+  type ElementContext,
+  readElement,
+  reportDuplicateNames,
+  resolveIncludes,
+} from './elements';
 import { longestRun, readReceiver, readTransmitter } from './ends';
 import { resolveLayers } from './layers';
 import { readLimits, readWaivers } from './limits';
@@ -89,6 +96,7 @@ function readPath(context: ElementContext): Draft[] {
     });
   }
   const drafts = entries.slice(0, MAX_ELEMENTS).map((entry, index) => readElement(context, entry, index));
+  checkOwners(context, drafts);
   resolveIncludes(context, drafts);
   for (const draft of drafts) checkMissing(context, draft);
   resolveLayers(drafts, reports);

@@ -6,7 +6,7 @@ import { isMapping, mappingAt, type RawMapping } from '../raw';
 import type { Place } from '../text/types';
 import { type Draft, headOf } from './draft';
 import { lookUp, namesAtHand } from './names';
-import { formatReports, type ModelReport, placeIn, quoted } from './reports';
+import { formatReports, type ModelReport, nameFixes, placeIn, quoted } from './reports';
 import type { Sources } from './sources';
 import type { Shelves } from './stackups';
 import { touchstoneFile } from './touchstone';
@@ -306,6 +306,25 @@ export function resolveIncludes({ reports }: ElementContext, drafts: readonly Dr
           : `There is no element ${quoted(String(name))} beside \`${draft.name}\`.`,
         fixes: beside.map((one) => ({ title: `Change to \`${one}\``, edits: [{ op: 'value', at, text: one }] })),
       });
+    });
+  }
+}
+
+/** An owner who is nearly one of those with a budget was meant to be that one; any other name is a label of its own. */
+export function checkOwners({ sources, reports }: ElementContext, drafts: readonly Draft[]): void {
+  const owners = Object.keys(mappingAt(sources.own.raw, 'owners'));
+  for (const { name, values, places } of drafts) {
+    const { owner } = values;
+    if (typeof owner !== 'string' || owners.includes(owner)) continue;
+    const near = nearest(owner, owners);
+    if (near === undefined) continue;
+    const at = places.owner;
+    reports.push({
+      rule: 'unknown-name',
+      at,
+      subject: name,
+      message: `There is no owner ${quoted(owner)} with a budget; did you mean ${quoted(near)}?`,
+      fixes: nameFixes(at, owner, owners),
     });
   }
 }

@@ -32,6 +32,7 @@ test.each([
   ['stackup', 'stackup: sled.main', 'stackup: sled.mian', 'sled.mian'],
   ['part', 'part: sled.sled-mate', 'part: sled.sled-mat', 'sled.sled-mat'],
   ['prefix', 'part: sled.sled-mate', 'part: sle.sled-mate', 'sle.sled-mate'],
+  ['owner', 'owner: sled board', 'owner: sled bord', 'sled bord'],
   ['element of a limit', 'between: [breakout, twinax]', 'between: [breakot, twinax]', 'breakot'],
 ])('an unknown %s: one finding, the near name as fix', (_, from, to, marked) => {
   const reports = reportsIn(exampleTexts({ channel: changed(from, to) }));
