@@ -6,7 +6,7 @@ import { dfeOf, equalise, jitterOf } from './equalise';
 import { eyeColumns } from './eye-columns';
 import { eyeDensity } from './eye-density';
 import { bathtubOf, type Eye, eyeHeight } from './eye-measures';
-import { jitterNodes } from './jitter';
+import { jitterNodes, jitterReach } from './jitter';
 import { levelsOf } from './levels';
 import { shifted } from './resample';
 import type { Link } from './types';
@@ -45,7 +45,12 @@ export function computeLink(model: Model, time: Time): Link {
   const settledVolts = pulse.reduce((sum, value) => sum + value, 0) / samplesPerUi;
   const droopVolts = Math.abs(settledVolts) * (droopOf(model)?.share ?? 0);
   const { randomUi, deterministicUi } = jitterOf(model);
-  const columns = eyeColumns({ pulse, samplesPerUi, mainIndex, dfeTaps }, levels, setting.noiseVolts);
+  const columns = eyeColumns(
+    { pulse, samplesPerUi, mainIndex, dfeTaps },
+    levels,
+    setting.noiseVolts,
+    jitterReach(randomUi, deterministicUi),
+  );
   const eye: Eye = {
     columns,
     levels,

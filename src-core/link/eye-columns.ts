@@ -22,8 +22,8 @@ export interface EqualisedPulse {
 }
 
 const mostPerUi = 32;
-/** Columns beyond half a UI on either side, for jitter that reaches there. */
-const beyond = 4;
+/** Columns beyond half a UI on either side, and beyond what jitter reaches there: a crossing need not lie half a UI from the sampling instant. */
+const beyondReach = 2;
 /** A bin is at most this share of the noise, and within these shares of the half span of the signal. */
 const binsPerSigma = 16;
 const fewestBins = 400;
@@ -32,14 +32,17 @@ const mostBins = 2000;
 /**
  * Interference at each phase of a UI about the sampling instant, with noise. The DFE's feedback is constant over the UI.
  * Volts are those of symbols ±1/2 of full swing.
+ * @param reachUi how early or late jitter may sample
  */
 export function eyeColumns(
   { pulse, samplesPerUi, mainIndex, dfeTaps }: EqualisedPulse,
   levels: Levels,
   noiseVolts: number,
+  reachUi = 0,
 ): EyeColumns {
   const perUi = Math.min(samplesPerUi, mostPerUi);
   const stride = samplesPerUi / perUi;
+  const beyond = beyondReach + Math.ceil(Math.min(reachUi, 1) * perUi);
   const count = perUi + 1 + 2 * beyond;
   const centre = perUi / 2 + beyond;
   const uis = pulse.length / samplesPerUi;

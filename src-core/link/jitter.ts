@@ -11,6 +11,9 @@ export interface JitterNodes {
 const spacing = 0.75;
 const widestSigmas = 9;
 
+/** Latest sampling time that `jitterNodes` holds, UI. */
+export const jitterReach = (randomUi: number, deterministicUi: number) => deterministicUi / 2 + widestSigmas * randomUi;
+
 /**
  * Dual-Dirac and random jitter of the sampling instant: half of the time early and half late by half of `deterministicUi`, plus a normal variable.
  * Source: dual-Dirac model, INCITS T11 MJSQ. Check values D-11, D-12.
@@ -52,10 +55,29 @@ export function jittered(logs: Float64Array, at: number, { probability, place }:
   return sum;
 }
 
+/** A change of the logarithm from column to column, up to a probability as common as this, that no smooth curve follows: an edge lies between. */
+const edge = 8;
+const common = -5;
+
+/**
+ * An edge steeper than the columns are apart. In sigmas a margin falls nearly straight, so it goes on from the deep side as it came there,
+ * and meets the other side's probability where it gets to it: a curve through both columns would put every edge at the outer one.
+ */
+function intoEdge(deep: number, shallow: number, deeper: number, t: number): number {
+  const sigmas = (log: number) => Math.sqrt(Math.max(0, -2 * log));
+  const [from, to] = [sigmas(deep), sigmas(shallow)];
+  const falling = Math.min(from - sigmas(deeper), to - from);
+  const here = Math.max(to, from + falling * t);
+  return (-here * here) / 2;
+}
+
 function between(logs: Float64Array, c: number, t: number, last: number): number {
   const b = logs[c];
   if (t === 0) return b;
   const d = logs[c + 1];
+  if (Math.abs(d - b) > edge && Math.max(b, d) > common) {
+    return b < d ? intoEdge(b, d, c > 0 ? logs[c - 1] : b, t) : intoEdge(d, b, c + 2 <= last ? logs[c + 2] : d, 1 - t);
+  }
   const rise = d - b;
   const before = c > 0 ? b - logs[c - 1] : rise;
   const after = c + 2 <= last ? logs[c + 2] - d : rise;

@@ -3,8 +3,8 @@ import type { EvenDensity } from './isi-density';
 
 /** Beyond this many sigmas a normal variable has nothing to say: 1e-23. */
 const widest = 10;
-/** Sums of probabilities below this are no longer formed: the logarithm goes on as a parabola. */
-const lowestSum = 1e-32;
+/** Sums below this are not formed, as what `widest` leaves out, 1e-23, would show in them: the logarithm goes on as a parabola. */
+const lowestSum = 1e-20;
 
 /** Probabilities of an even density plus Gaussian noise. */
 export interface NoisyTail {
@@ -17,7 +17,7 @@ export interface NoisyTail {
 
 /**
  * Tail of an even density with normal noise added: Σ p[i] Q((x - i)/σ), terms non-negative, at whole bins, in between straight in the logarithm
- * (an error of (bin/σ)²/8: 0.05 % for σ of 16 bins). Without noise half of what lies exactly at x counts. Below 1e-32 the logarithm goes
+ * (an error of (bin/σ)²/8: 0.05 % for σ of 16 bins). Without noise half of what lies exactly at x counts. Below 1e-20 the logarithm goes
  * on with its slope and a Gaussian's curvature: such depths count for nothing themselves, but from phase to phase the logarithm must
  * stay smooth to be interpolated.
  */
