@@ -4,7 +4,7 @@ const Module = require('node:module');
 
 function anything() {
   const answers = new Map();
-  return new Proxy(() => {}, {
+  return new Proxy(class {}, {
     get(target, key) {
       if (key === 'prototype') return target.prototype;
       if (key === 'then') return undefined;
