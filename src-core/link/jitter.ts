@@ -58,6 +58,8 @@ export function jittered(logs: Float64Array, at: number, { probability, place }:
 /** A change of the logarithm from column to column, up to a probability as common as this, that no smooth curve follows: an edge lies between. */
 const edge = 8;
 const common = -5;
+/** Nearly all patterns that can be wrong are: the edge was passed on the way. */
+const crossed = -1.2;
 
 /**
  * An edge steeper than the columns are apart. In sigmas a margin falls nearly straight, so it goes on from the deep side as it came there,
@@ -66,7 +68,8 @@ const common = -5;
 function intoEdge(deep: number, shallow: number, deeper: number, t: number): number {
   const sigmas = (log: number) => Math.sqrt(Math.max(0, -2 * log));
   const [from, to] = [sigmas(deep), sigmas(shallow)];
-  const falling = Math.min(from - sigmas(deeper), to - from);
+  const straight = to - from;
+  const falling = shallow > crossed ? Math.min(from - sigmas(deeper), straight) : straight;
   const here = Math.max(to, from + falling * t);
   return (-here * here) / 2;
 }
