@@ -13,6 +13,8 @@ EPS0 = 1 / (ETA * C0)
 
 def elliptic_k(k):
     """K of the modulus k, by its infinite product (descending Landen steps)."""
+    if k >= 1:
+        return math.inf
     product = 1.0
     while k > 1e-17:
         complement = math.sqrt((1 - k) * (1 + k))
@@ -55,18 +57,30 @@ def fringing(x):
 
 
 def thick_pair(w, s, x):
-    """Cohn 1955, equations 18 to 20."""
+    """Cohn 1955, equations 18 to 20, joined as the program documents it."""
     thin = thin_pair(w, s)
     if x <= 0:
         return thin
     alone, thick = 1 / thin_strip(w), 1 / thick_strip(w, x)
     ratio = fringing(x) / fringing(0)
-    even = thick - ratio * (alone - 1 / thin["even"])
-    if s >= 5 * x:
-        odd = thick + ratio * (1 / thin["odd"] - alone)
-    else:
-        odd = 1 / thin["odd"] + thick - alone - 2 / ETA * (fringing(x) - fringing(0)) + 2 / ETA * x / s
+    # odd: both of Cohn's forms, the larger capacitance, passing smoothly from one to the other
+    wide = thick + ratio * (1 / thin["odd"] - alone)
+    narrow = 1 / thin["odd"] + thick - alone - 2 / ETA * (fringing(x) - fringing(0)) + 2 / ETA * x / s
+    odd = max(wide, narrow) * (1 + max(0, min(wide, narrow) / max(wide, narrow)) ** 64) ** (1 / 64)
+    # even: the mean of Cohn's form and of the thin pair whose strips alone have the thick one's impedance
+    equal = thin_strip_width(1 / thick)
+    pair = thin_pair(equal, s * math.exp(-(equal - w) / s))
+    even = (thick - ratio * (alone - 1 / thin["even"]) + 1 / pair["even"]) / 2
     return {"even": 1 / even, "odd": 1 / odd}
+
+
+def thin_strip_width(ohms):
+    """Width by the distance of the planes of the thin strip that has an impedance, by halving."""
+    low, high = 1e-6, 10.0
+    for _ in range(60):
+        w = math.sqrt(low * high)
+        low, high = (w, high) if thin_strip(w) > ohms else (low, w)
+    return w
 
 
 def hammerstad_z(u):
@@ -120,14 +134,15 @@ def kirschning(u, g, er, mode):
 
 
 def microstrip_pair(u, g, er, t, mode):
-    """With thickness: Jansen 1978. Impedance and effective dielectric constant."""
+    """With thickness: Jansen 1978, odd mode after Cohn 1955. Impedance and effective dielectric constant."""
     def width(dk):
         single = widening(u, t, dk)
         if t <= 0:
             return u
         wall = 2 * t / (g * dk)
-        even = u + single * (1 - 0.5 * math.exp(-0.69 * single / wall))
-        return even if mode == "even" else even + wall
+        if mode == "even":
+            return u + single * (1 - 0.5 * math.exp(-0.69 * single / wall))
+        return u + single / 2 + max(single / 2, wall)  # free edge; the facing walls' plates in place of the other
 
     z = kirschning(width(er), g, er, mode)
     return z, (kirschning(width(1), g, 1, mode) / z) ** 2
@@ -148,8 +163,7 @@ class Section:
             self.plane_above,
         )
 
-    def centred(self, height, mode):
-        b = 2 * height + self.thickness
+    def centred(self, b, mode):
         if self.gap is None:
             return thick_strip(self.width / b, self.thickness / b)
         return thick_pair(self.width / b, self.gap / b, self.thickness / b)[mode]
@@ -162,13 +176,14 @@ class Section:
 
     def air(self, mode):
         if self.plane_above:
-            # each side holds half the capacitance of a centred strip at its height
-            return 2 / (1 / self.centred(self.low, mode) + 1 / self.centred(self.high, mode))
+            # off the middle by e: as if centred between planes b cos(pi e / b) apart, exact for a thin wire
+            b = self.low + self.high + self.thickness
+            return self.centred(b * math.cos(math.pi * (self.high - self.low) / 2 / b), mode)
         return self.in_dielectric(1.0, mode)[0]
 
     def shares(self, mode):
         if self.plane_above:
-            below, above = 1 / self.centred(self.low, mode), 1 / self.centred(self.high, mode)
+            below, above = (1 / self.centred(2 * h + self.thickness, mode) for h in (self.low, self.high))
             return below / (below + above), above / (below + above)
         if self.low_dk <= 1 + 1e-9:
             return 1.0, 0.0
@@ -197,7 +212,7 @@ def width_for(make, pair, ohms, height):
     """Width that gives an impedance, a pair with a gap of 1.5 widths; the wider root, by halving."""
     wanted = ohms / 2 if pair else ohms
     f = lambda w: make(w, 1.5 * w if pair else None).impedance("odd") - wanted
-    wide = 50 * height
+    wide = 8 * height  # as low as 20 ohm
     narrow = wide
     while f(narrow) < 0:
         wide, narrow = narrow, narrow / 1.05

@@ -220,7 +220,8 @@ class Eye:
         for share, cursors in self.nodes:
             amplitudes, sigma = self.disturbance(cursors)
             margin = abs(level * cursors[0] - threshold) - self.droop
-            tails.append((share, cursors[0], tail_function(amplitudes, sigma, max(margin, sigma))))
+            spread = math.sqrt((amplitudes**2).sum() + sigma**2)
+            tails.append((share, cursors[0], tail_function(amplitudes, sigma, max(margin, spread))))
         return tails
 
     def errors(self, tails, level, threshold):

@@ -10,9 +10,10 @@ import sys
 
 import numpy as np
 
+from chains import Setting
 from channel_file import channel, get
 from link import Ends, link
-from networks import Setting, chain_of, transfer
+from networks import chain_of, transfer
 
 UIS = 4096
 LINES_PER_UI = 4  # up to 4 times the symbol rate
