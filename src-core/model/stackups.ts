@@ -1,15 +1,16 @@
 import type { FoilValues, MaterialValues, PartsValues, Quantity } from '../../schemas/format/types';
 import { entryKind, readValues } from '../format/index';
+import { COPPER_CONDUCTIVITY } from '../physics/copper';
+import { cannonball, type Roughness } from '../physics/roughness';
 import { mappingAt } from '../raw';
 import type { FilePath, ValuePath } from '../text/types';
 import { lookUp } from './names';
 import { formatReports, type ModelReport, placeIn, quoted } from './reports';
 import { readPartsFile, type Sources } from './sources';
-import type { Foil, Material, Point, Roughness, Stackup, StackupLayer } from './types';
+import type { Foil, Material, Point, Stackup, StackupLayer } from './types';
 
 const DEFAULT_FREQUENCY = 10e9;
-const DEFAULT_CONDUCTIVITY = 58e6;
-const SMOOTH: Foil = { conductivity: DEFAULT_CONDUCTIVITY, roughness: { kind: 'smooth' } };
+const SMOOTH: Foil = { conductivity: COPPER_CONDUCTIVITY, roughness: { kind: 'smooth' } };
 
 /** Reads stackups, materials and foils of parts files, each once. */
 export interface Shelves {
@@ -164,25 +165,14 @@ function readFoil(
   const raw = mappingAt(mappingAt(sources.all.get(found.file)?.raw, 'foils'), found.name);
   for (const key of ['conductivity', 'roughness'] as const) if (Object.hasOwn(raw, key) && !foil[key]) return undefined;
   const roughness = readRoughness(foil.roughness);
-  return roughness && { conductivity: foil.conductivity?.value ?? DEFAULT_CONDUCTIVITY, roughness };
+  return roughness && { conductivity: foil.conductivity?.value ?? COPPER_CONDUCTIVITY, roughness };
 }
 
-/**
- * `rz`: fourteen equal spheres in a pyramid on a base of 36 radii squared, radius Rz / (4 √3 (1 + √2)).
- * Source: Simonovich, DesignCon 2015.
- */
 function readRoughness(written: FoilValues['roughness']): Roughness | undefined {
   if (!written) return { kind: 'smooth' };
   const { rms, rz, huray } = written;
   if (rms) return rms.value > 0 ? { kind: 'rms', rmsMeters: rms.value } : { kind: 'smooth' };
-  if (rz) {
-    if (rz.value <= 0) return { kind: 'smooth' };
-    return {
-      kind: 'huray',
-      radiusMeters: rz.value / (4 * Math.sqrt(3) * (1 + Math.SQRT2)),
-      ratio: (14 * 4 * Math.PI) / 36,
-    };
-  }
+  if (rz) return rz.value > 0 ? { kind: 'huray', ...cannonball(rz.value) } : { kind: 'smooth' };
   return huray?.radius && huray.ratio
     ? { kind: 'huray', radiusMeters: huray.radius.value, ratio: huray.ratio.value }
     : undefined;

@@ -8,6 +8,7 @@ import type {
   ReceiverValues,
   TransmitterValues,
 } from '../../schemas/format/types';
+import type { Roughness } from '../physics/roughness';
 import type { Report } from '../report';
 import type { FilePath, Place } from '../text/types';
 
@@ -23,12 +24,6 @@ export interface Material {
   readonly dkInPlane: Point;
   readonly df: Point;
 }
-
-export type Roughness =
-  | { readonly kind: 'smooth' }
-  | { readonly kind: 'rms'; readonly rmsMeters: number }
-  /** `ratio`: sphere area over flat area, the sum of N·4πa² over A. */
-  | { readonly kind: 'huray'; readonly radiusMeters: number; readonly ratio: number };
 
 export interface Foil {
   /** At 20 degC. */

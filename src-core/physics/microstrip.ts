@@ -119,7 +119,7 @@ export function thickCoupledMicrostrip(u: number, g: number, er: number, thickne
 
 /**
  * Effective dielectric constant of a microstrip at a frequency. Not part of the computed networks: they use the
- * quasi-TEM value; this tells how far that holds.
+ * quasi-TEM value; the tests tell by this how far that holds.
  * @param frequencyTimesHeight f·h in Hz·m
  * Source: Kirschning and Jansen, Electronics Letters 18, 1982, 272-273; claimed 0.6 %. Check value T-19.
  */

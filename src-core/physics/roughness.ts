@@ -1,6 +1,12 @@
-import type { Roughness } from '../model/types';
 import { MU_0 } from './constants';
 import { skinDepth, slabImpedance } from './copper';
+
+/** How rough a foil is, and by whose measure. */
+export type Roughness =
+  | { readonly kind: 'smooth' }
+  | { readonly kind: 'rms'; readonly rmsMeters: number }
+  /** `ratio`: sphere area over flat area, the sum of N·4πa² over A. */
+  | { readonly kind: 'huray'; readonly radiusMeters: number; readonly ratio: number };
 
 /**
  * Hammerstad's factor on the resistance of a rough surface: 1 + (2/π) atan(1.4 (Δ/δ)²). Saturates at 2.

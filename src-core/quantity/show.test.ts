@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import type { Dimension } from '../../schemas/format/types';
 import { readQuantity } from './read';
-import { conversions, count, exactly, show } from './show';
+import { count, exactly, show } from './show';
 
 test.each<[string, string]>([
   [show.frequency(12.890625e9), '12.9 GHz'],
@@ -53,16 +53,6 @@ test('a tolerance is shown beside its value', () => {
   const { quantity } = readQuantity('0.2 mm +0.1/-0.05 mm', { dimensions: ['length'] });
   expect(show.quantity(quantity!)).toBe('0.2 mm +100 um/-50 um');
   expect(show.quantity(readQuantity('168 mm ± 2 mm', { dimensions: ['length'] }).quantity!)).toBe('168 mm ± 2 mm');
-});
-
-test('a hover gives the units that others think in', () => {
-  const quantity = (text: string, dimension: Dimension) =>
-    readQuantity(text, { dimensions: [dimension], at: 'optional' }).quantity!;
-  expect(conversions(quantity('42 mm', 'length'))).toEqual(['1650 mil']);
-  expect(conversions(quantity('4.5 mil', 'length'))).toEqual(['0.114 mm']);
-  expect(conversions(quantity('0.85 dB/in', 'lossPerLength'))).toEqual(['0.0335 dB/mm']);
-  expect(conversions(quantity('12 ps', 'time'), 40e-12)).toEqual(['0.3 UI']);
-  expect(conversions(quantity('0.3 UI', 'unitInterval'), 40e-12)).toEqual(['12 ps']);
 });
 
 test.each([Number.NaN, Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY])('%s is shown as unknown', (value) => {

@@ -181,26 +181,6 @@ export const show = {
   },
 } as const;
 
-const NAMED: Readonly<Partial<Record<Dimension, readonly string[]>>> = {
-  length: ['mm', 'mil'],
-  lossPerLength: ['dB/mm', 'dB/in'],
-  delayPerLength: ['ps/mm', 'ps/in'],
-};
-
-/**
- * The same value in the units that others think in, for hovers: `42 mm` gives `1650 mil`.
- * @param unitIntervalSeconds turns times into UI and UI into times; without it neither is given
- */
-export function conversions(quantity: Quantity, unitIntervalSeconds?: number): string[] {
-  const { value, dimension, unit } = quantity;
-  const others = (NAMED[dimension] ?? []).filter((name) => name !== unit);
-  const texts = others.map((name) => withUnit(digits(inUnit(value, unitNamed(name))), unitNamed(name)));
-  if (unitIntervalSeconds === undefined) return texts;
-  if (dimension === 'time') texts.push(inDimension(value / unitIntervalSeconds, 'unitInterval'));
-  if (dimension === 'unitInterval') texts.push(inDimension(value * unitIntervalSeconds, 'time'));
-  return texts;
-}
-
 /** All digits, as a file may hold it: `12.890625 GHz`. For edits; `show` is for people. */
 export function exactly(value: number, dimension?: Dimension): string {
   if (!Number.isFinite(value)) return UNKNOWN;

@@ -20,10 +20,11 @@ import {
   secondsPerMeter,
   stackup,
 } from '../../src-core/elements/testing';
-import type { AnyElement, Roughness } from '../../src-core/model/types';
+import type { AnyElement } from '../../src-core/model/types';
 import { toSingleEnded } from '../../src-core/networks/mixed-mode';
 import { largestSingularValue } from '../../src-core/networks/singular-value';
 import type { Network, TwoPort } from '../../src-core/networks/types';
+import type { Roughness } from '../../src-core/physics/roughness';
 
 const board = (dk: number, df: number, roughness: Roughness) =>
   stackup(
