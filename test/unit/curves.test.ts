@@ -118,6 +118,26 @@ checkValues({
   ],
 });
 
+checkValues({
+  id: 'N-13',
+  what: 'skew of 2 ps on a trace and 3 ps on a cable behind it, at 14 GHz: |Scd21|, |Sdd21| in dB; Sdd21 at 1/(2 dt)',
+  source: 'derived: (e^-jωt1 ∓ e^-jωt2)/2, exact',
+  absoluteTolerance: 1e-5,
+  compute: ({ hertz }) => {
+    const skewed = (kind: string, name: string, picoseconds: number) =>
+      `  - ${kind}: ${name}\n    length: 30 mm\n    impedance: 100 ohm\n    delay: 6.5 ps/mm\n    loss: 0 dB/m @ 1 GHz\n    skew: ${picoseconds} ps\n`;
+    const found = curves(skewed('trace', 'a', 2) + skewed('cable', 'b', 3), [hertz], {
+      head: 'reference-impedance: 100 ohm',
+    });
+    const [re, im, db, ddRe] = values(found, 'SCD21_re', 'SCD21_im', 'SDD21_dB', 'SDD21_re');
+    return hertz === 14e9 ? [Math.hypot(re, im), db] : ddRe;
+  },
+  rows: [
+    { hertz: 14e9, expected: [0.218143, -0.211744] },
+    { hertz: 100e9, expected: 0 },
+  ],
+});
+
 describe('a lossless line in 30 unequal pieces', () => {
   const piece = (millimetres: number, i: number) =>
     `  - cable: c${i}\n    length: ${millimetres} mm\n    impedance: 85 ohm\n    delay: 5 ns/m\n    loss: 0 dB/m @ 1 GHz\n`;
