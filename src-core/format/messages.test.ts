@@ -322,7 +322,7 @@ test('a file that lacks a key is marked at its first line, an entry as a whole',
     ['line-rate', 'value'],
     ['path', 'value'],
   ]);
-  expect(readValues('waiver', {}).problems.every(({ on }) => on === 'entry')).toBe(true);
+  expect(new Set(readValues('waiver', {}).problems.map(({ on }) => on))).toEqual(new Set(['entry']));
 });
 test('a temperature below absolute zero', () => {
   const { problems } = readValues('channel', { conditions: { temperature: '-300 degC' } });
