@@ -1,6 +1,8 @@
 import { type Diagnostic, DiagnosticSeverity, DiagnosticTag } from 'vscode-languageserver';
 import type { Analysis } from '../src-core/analysis';
+import { show } from '../src-core/quantity/show';
 import type { Finding, Severity } from '../src-core/report';
+import { MOST_FINDINGS } from '../src-core/rules/judge';
 import { rangeOf } from '../src-core/text/index';
 import type { FilePath, TextRange } from '../src-core/text/types';
 import { toRange } from './convert';
@@ -14,7 +16,6 @@ const SEVERITIES: Readonly<Record<Severity, DiagnosticSeverity>> = {
   hint: DiagnosticSeverity.Hint,
 };
 const TAGS = { unnecessary: DiagnosticTag.Unnecessary, deprecated: DiagnosticTag.Deprecated } as const;
-const MOST_SHOWN = 200;
 
 /** Where a finding stands in the text that its analysis read. */
 export function rangeOfFinding(analysis: Analysis, { at, range }: Pick<Finding, 'at' | 'range'>): TextRange {
@@ -28,14 +29,14 @@ export function diagnosticsOf(services: Services, located: Located): Diagnostic[
   const { analyses, skipped, documents } = services;
   if (skipped.has(idOf(located)))
     return [
-      notAnalysed(
+      fileDiagnostic(
         'Opened without analysis: the server ended twice while it worked on this file. Choose “Analyse this file again” to try.',
         'not-analysed',
       ),
     ];
   const failure = analyses.failure(located);
   if (failure !== undefined)
-    return [notAnalysed(`This text broke the analysis, which is a fault of ours: ${failure}`, 'internal-error')];
+    return [fileDiagnostic(`This text broke the analysis, which is a fault of ours: ${failure}`, 'internal-error')];
   const found = new Map<string, Diagnostic>();
   const open = documents.at(located)?.text;
   for (const { located: source, analysis } of analyses.all()) {
@@ -50,7 +51,15 @@ export function diagnosticsOf(services: Services, located: Located): Diagnostic[
       if (!found.has(key)) found.set(key, diagnostic);
     }
   }
-  return [...found.values()].slice(0, MOST_SHOWN);
+  return countingTheRest([...found.values()]);
+}
+
+/** The judge's two hundred of a channel and the one that counts its rest; many channels may place theirs in one parts file. */
+export function countingTheRest(found: Diagnostic[]): Diagnostic[] {
+  if (found.length <= MOST_FINDINGS + 1) return found;
+  const rest = show.count(found.length - MOST_FINDINGS, 'more finding');
+  const message = `${rest} of other channels that use this file are not shown; ${MOST_FINDINGS} are.`;
+  return [...found.slice(0, MOST_FINDINGS), fileDiagnostic(message, 'limit')];
 }
 
 export function toDiagnostic(
@@ -79,7 +88,7 @@ export function toDiagnostic(
   };
 }
 
-const notAnalysed = (message: string, code: string): Diagnostic => ({
+const fileDiagnostic = (message: string, code: string): Diagnostic => ({
   range: { start: { line: 0, character: 0 }, end: { line: 0, character: 0 } },
   severity: DiagnosticSeverity.Warning,
   code,
