@@ -38,7 +38,7 @@ export function defineServerTests(): void {
   const kill = ({ client }: Running) => {
     const { serverProcess } = client;
     ok(serverProcess?.kill('SIGKILL'), 'the server was killed');
-    return until('a death', () => client.serverProcess?.pid !== serverProcess.pid);
+    return until('a death', () => client.serverProcess?.pid !== serverProcess?.pid);
   };
 
   describe('the server', () => {
