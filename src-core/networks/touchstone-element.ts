@@ -29,8 +29,8 @@ export interface FileElement {
 export function prepareFile(element: AnyElement, model: Model, result: TouchstoneResult | undefined): FileElement {
   const file = element.file as FileReference;
   const data = result?.data;
-  const notes: ElementNote[] = (result?.errors ?? []).slice(0, 3).map(({ line, message }) => ({
-    rule: 'touchstone',
+  const notes: ElementNote[] = (result?.errors ?? []).slice(0, 3).map(({ line, message, rule }) => ({
+    rule: rule ?? 'touchstone',
     at: file.place,
     message: `\`${file.file}\`, line ${line}: ${message}`,
   }));

@@ -28,6 +28,8 @@ export interface TouchstoneError {
   readonly line: number;
   readonly range: TextRange;
   readonly message: string;
+  /** It is more than what is read of a file, not wrong in itself. */
+  readonly rule?: 'limit';
 }
 
 export interface TouchstoneResult {

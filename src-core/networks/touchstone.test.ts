@@ -24,12 +24,12 @@ const matrixOf = ({ ports, s }: TouchstoneData, point = 0) =>
   );
 
 /** The first error, as the text at its range and the message. */
-function errorOf(text: string, name = 'part.s2p'): { at: string; line: number; message: string } {
+function errorOf(text: string, name = 'part.s2p'): { at: string; line: number; message: string; rule?: string } {
   const { errors, data } = readTouchstone(text, name);
   expect(errors).toHaveLength(1);
   expect(data).toBeUndefined();
-  const [{ line, range, message }] = errors;
-  return { at: text.slice(range.start, range.end), line, message };
+  const [{ line, range, message, rule }] = errors;
+  return { at: text.slice(range.start, range.end), line, message, rule };
 }
 
 checkValues({
@@ -214,6 +214,11 @@ describe('each fault is one error at its range', () => {
     expect(errorOf(`${option}2 ${row}2 ${row}`, 'x.s3p')).toMatchObject({ at: '2', line: 3 });
   });
 
+  test('a text that is no such file has one fault, not a missing option line too', () => {
+    expect(readTouchstone('<html>\nnothing here\n', 'x.s2p').errors).toMatchObject([
+      { line: 1, message: '`<html>` is not a number.' },
+    ]);
+  });
   test('data without an option line are read with the default one, and that is told', () => {
     const { data, errors } = readTouchstone('1 0.5 0\n', 'x.s1p');
     expect(data?.s[0]).toBe(0.5);
@@ -226,13 +231,16 @@ describe('limits, at one less, at and beyond', () => {
   test('100,000 frequencies', () => {
     expect(dataOf(file(touchstoneLimits.points - 1), 'x.s1p').frequencies).toHaveLength(99_999);
     expect(dataOf(file(touchstoneLimits.points), 'x.s1p').frequencies).toHaveLength(100_000);
-    expect(errorOf(file(touchstoneLimits.points + 1), 'x.s1p').message).toContain('more than the 100,000 frequencies');
+    const tooMany = errorOf(file(touchstoneLimits.points + 1), 'x.s1p');
+    expect(tooMany.message).toContain('more than the 100,000 frequencies');
+    expect(tooMany.rule).toBe('limit');
   });
   test('four ports', () => {
     const text = (ports: number) => `# GHz S RI\n1 ${'0 0 '.repeat(ports * ports)}\n`;
     expect(dataOf(text(3), 'x.s3p').ports).toBe(3);
     expect(dataOf(text(4), 'x.s4p').ports).toBe(4);
     expect(errorOf(text(5), 'x.s5p').message).toBe('The file has 5 ports; 1 to 4 are read.');
+    expect(errorOf(text(5), 'x.s5p').rule).toBe('limit');
     expect(errorOf(text(40), 'x.s400p').message).toContain('400 ports');
   });
   test('64 MiB of text', () => {

@@ -1,3 +1,4 @@
+import { show } from '../quantity/show';
 import type { TextRange } from '../text/types';
 import { toScattering } from './to-scattering';
 import { defaultOptions, type OptionLine, readOptionLine } from './touchstone-option-line';
@@ -21,7 +22,14 @@ export function readTouchstone(text: string, fileName: string): TouchstoneResult
   const reading = { text, scanner: scanTouchstone(text), errors: [] as TouchstoneError[] };
   if (text.length > touchstoneLimits.characters) {
     return {
-      errors: [{ line: 1, range: { start: 0, end: 0 }, message: 'The file is larger than the 64 MiB that are read.' }],
+      errors: [
+        {
+          line: 1,
+          range: { start: 0, end: 0 },
+          message: 'The file is larger than the 64 MiB that are read.',
+          rule: 'limit',
+        },
+      ],
     };
   }
   const ports = portCount(text, fileName);
@@ -30,7 +38,8 @@ export function readTouchstone(text: string, fileName: string): TouchstoneResult
       ports === undefined
         ? 'How many ports the file has shows neither in its name (`.s2p`, `.s4p`) nor in its rows.'
         : `The file has ${ports} ports; 1 to ${touchstoneLimits.ports} are read.`;
-    return { errors: versionError(reading) ?? [{ line: 1, range: firstLine(text), message }] };
+    const rule = ports === undefined ? {} : { rule: 'limit' as const };
+    return { errors: versionError(reading) ?? [{ line: 1, range: firstLine(text), message, ...rule }] };
   }
   const data = readData(reading, ports);
   return { data, errors: reading.errors };
@@ -51,12 +60,15 @@ function readData(reading: Reading, ports: number): TouchstoneData | undefined {
   let count = 0;
   let recordStart: TextRange = { start: 0, end: 0 };
   let recordLine = 1;
+  /** Where the data begin, if no option line stands before. */
+  let begins: Pick<TouchstoneError, 'line' | 'range'> | undefined;
   const fail = (
     message: string,
     range: TextRange = { start: scanner.start, end: scanner.end },
     line = scanner.line,
+    rule?: 'limit',
   ) => {
-    errors.push({ line, range, message });
+    errors.push({ line, range, message, ...(rule && { rule }) });
     return undefined;
   };
 
@@ -71,7 +83,7 @@ function readData(reading: Reading, ports: number): TouchstoneData | undefined {
     if (code === 91 /* [ */) return fail(version2Message);
     if (!options) {
       options = defaultOptions;
-      fail('The data begin without an option line such as `# GHz S MA R 50`; those values are taken.');
+      begins = { line: scanner.line, range: { start: scanner.start, end: scanner.end } };
     }
     const value = numberAt(text, scanner.start, scanner.end);
     if (value === undefined) return fail(`\`${shown(text, scanner)}\` is not a number.`);
@@ -87,7 +99,10 @@ function readData(reading: Reading, ports: number): TouchstoneData | undefined {
       if (value <= last) return fail('The frequencies have to rise; this one does not.');
       if (count / perPoint >= touchstoneLimits.points)
         return fail(
-          `The file has more than the ${touchstoneLimits.points.toLocaleString('en')} frequencies that are read.`,
+          `The file has more than the ${show.count(touchstoneLimits.points, 'frequency', 'frequencies')} that are read.`,
+          undefined,
+          undefined,
+          'limit',
         );
       recordStart = { start: scanner.start, end: scanner.end };
       recordLine = scanner.line;
@@ -105,6 +120,11 @@ function readData(reading: Reading, ports: number): TouchstoneData | undefined {
     );
   }
   if (count === 0) return fail('The file holds no data.', firstLine(text), 1);
+  // said only of data that are taken: what no one can read has one fault
+  if (begins) {
+    const message = 'The data begin without an option line such as `# GHz S MA R 50`; those values are taken.';
+    errors.push({ ...begins, message });
+  }
   return toData(values.subarray(0, count), ports, options ?? defaultOptions, fail);
 }
 

@@ -121,11 +121,11 @@ function rangeOf(low: number, high: number, dimension: Dimension): string {
   return withUnit(from === to ? from : `${from} to ${to}`, unit);
 }
 
-/** `1 resonance`, `2 resonances`; `plural` where an s is not enough. */
+/** `1 resonance`, `8,193 points`; `plural` where an s is not enough. */
 export function count(amount: number | { readonly length: number }, singular: string, plural = `${singular}s`): string {
   const number = typeof amount === 'number' ? amount : amount.length;
   if (!Number.isFinite(number)) return UNKNOWN;
-  return `${number} ${number === 1 ? singular : plural}`;
+  return `${number.toLocaleString('en')} ${number === 1 ? singular : plural}`;
 }
 
 /** Decibels up to where more of them say nothing; computed zeros would read as a figure. */
