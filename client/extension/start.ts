@@ -27,7 +27,7 @@ export interface Extension {
   restart(): Promise<void>;
 }
 
-export async function start(context: vscode.ExtensionContext, host: Host): Promise<Extension> {
+export function start(context: vscode.ExtensionContext, host: Host): Extension {
   const output = vscode.window.createOutputChannel('Lanewright', { log: true });
   const status = statusItem(context);
   const deaths = rememberDeaths();
@@ -52,12 +52,11 @@ export async function start(context: vscode.ExtensionContext, host: Host): Promi
     registerPreview(context, extension),
     registerCommands(context, extension),
   );
-  try {
-    await client.start();
-  } catch (error) {
+  // Not awaited: the editor counts until this returns, and what is asked before the server is there waits for it.
+  client.start().catch((error: unknown) => {
     output.error(`The server could not be started: ${error instanceof Error ? error.message : String(error)}`);
     status.stopped();
-  }
+  });
   return extension;
 }
 
