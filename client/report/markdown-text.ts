@@ -3,23 +3,20 @@
  * an issue. A zero-width space after `@` and before what would become a link breaks what a host adds of itself.
  */
 export function escapeMarkdown(text: string): string {
-  return (
-    text
-      // biome-ignore lint/suspicious/noControlCharactersInRegex: they are what is removed
-      .replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f-\u009f\u202a-\u202e\u2066-\u2069]/g, '')
-      .replace(/\s*[\r\n]+\s*/g, ' ')
-      .replace(/&/g, '&amp;')
-      .replace(/</g, '&lt;')
-      .replace(/>/g, '&gt;')
-      .replace(/[\\`*_{}[\]()#+!|~$^=]/g, '\\$&')
-      .replace(/^(\s*)([-.\d])/, (_, space: string, first: string) =>
-        /\d/.test(first) ? `${space}${first}` : `${space}\\${first}`,
-      )
-      .replace(/^(\s*\d+)([.)])(?=\s|$)/, '$1\\$2')
-      .replace(/@(?=\w)/g, '@\u200b')
-      .replace(/#(?=\d)/g, '#\u200b')
-      .replace(/\b(https?|ftp|mailto|www)(?=[:.])/gi, '$1\u200b')
-  );
+  return text
+    .replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f-\u009f\u202a-\u202e\u2066-\u2069]/g, '')
+    .replace(/\s*[\r\n]+\s*/g, ' ')
+    .replace(/&/g, '&amp;')
+    .replace(/</g, '&lt;')
+    .replace(/>/g, '&gt;')
+    .replace(/[\\`*_{}[\]()#+!|~$^=]/g, '\\$&')
+    .replace(/^(\s*)([-.\d])/, (_, space: string, first: string) =>
+      /\d/.test(first) ? `${space}${first}` : `${space}\\${first}`,
+    )
+    .replace(/^(\s*\d+)([.)])(?=\s|$)/, '$1\\$2')
+    .replace(/@(?=\w)/g, '@\u200b')
+    .replace(/#(?=\d)/g, '#\u200b')
+    .replace(/\b(https?|ftp|mailto|www)(?=[:.])/gi, '$1\u200b');
 }
 
 /** Our own sentences, in which `code` may stand between backticks: that stays code, the rest is escaped. */

@@ -1,7 +1,6 @@
 import { type Static, Type } from '@sinclair/typebox';
 import { mapping, named, type Quantity, quantity, refers } from './quantity';
 
-
 const version = Type.Integer({ description: 'Format version.', examples: [1] });
 
 const ffe = mapping(

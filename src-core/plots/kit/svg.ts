@@ -1,5 +1,4 @@
 /** Characters that XML 1.0 does not allow, and the marks that turn the direction of text around. */
-// biome-ignore lint/suspicious/noControlCharactersInRegex: they are what is removed
 const unwanted = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f-\u009f\u202a-\u202e\u2066-\u2069\ufffe\uffff]/g;
 
 /** Text for HTML and SVG, content and attribute alike. */
