@@ -37,7 +37,8 @@ export function defineServerTests(): void {
     });
   const kill = ({ client }: Running) => {
     const { serverProcess } = client;
-    ok(serverProcess?.kill('SIGKILL'), 'the server was killed');
+    ok(serverProcess, 'a server runs');
+    ok(serverProcess.kill('SIGKILL'), 'the server was killed');
     return until('a death', () => client.serverProcess?.pid !== serverProcess?.pid);
   };
 
