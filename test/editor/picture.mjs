@@ -1,10 +1,11 @@
 // `node test/editor/picture.mjs`: renews the README's picture from the real editor, and the extension's icon from its drawing.
-import { cpSync, mkdirSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { cpSync, mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { chromium } from 'playwright-core';
 import { chromiumArguments, findChromium } from './chromium.mjs';
+import { indexedPng } from './indexed-png.mjs';
 import { openLane } from './interface.mjs';
 import { command, goToLine, poll, previewFrame } from './page.mjs';
 import { startWorkbench } from './workbench.mjs';
@@ -46,7 +47,7 @@ async function takePicture(browser) {
     mkdirSync(join(extension, 'pictures'), { recursive: true });
     // Once more than looks needed: a scroll is painted in the next frame.
     await page.evaluate(() => new Promise((resolve) => requestAnimationFrame(() => requestAnimationFrame(resolve))));
-    await page.screenshot({ path: join(extension, 'pictures', 'workbench.png') });
+    writeFileSync(join(extension, 'pictures', 'workbench.png'), await indexedPng(browser, await page.screenshot()));
   } finally {
     workbench.stop();
     rmSync(folder, { recursive: true, force: true });
