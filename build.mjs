@@ -1,6 +1,6 @@
 // Builds everything that ships, and with --tests what the editor's suites load. Used by every other script.
 
-import { cpSync, existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { cpSync, existsSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
@@ -82,7 +82,6 @@ const forTests = [
 /** @param {{ tests?: boolean }} options @returns the metafiles by what they describe, for the size gate */
 export async function buildAll({ tests = false } = {}) {
   await import('./schemas/build.mjs').then((schemas) => schemas.buildSchemas());
-  rmSync(at('dist'), { recursive: true, force: true });
   mkdirSync(at('dist'), { recursive: true });
   const wanted = [...shipped, ...(tests ? forTests : [])];
   const results = await Promise.all(wanted.map((options) => build(options)));
@@ -93,7 +92,16 @@ export async function buildAll({ tests = false } = {}) {
   ]) {
     if (existsSync(at(from))) cpSync(at(from), at(`dist/${to}`));
   }
-  return results.map((result) => result.metafile);
+  const metafiles = results.map((result) => result.metafile);
+  removeStale(new Set(metafiles.flatMap(({ outputs }) => Object.keys(outputs))));
+  return metafiles;
+}
+
+/** What an earlier build left and this one did not write; at the end, so that what runs meanwhile finds its files. */
+function removeStale(fresh) {
+  for (const name of readdirSync(at('dist'))) {
+    if (/^cli-.*\.mjs$/.test(name) && !fresh.has(`dist/${name}`)) rmSync(at(`dist/${name}`));
+  }
 }
 
 if (process.argv[1] === fileURLToPath(import.meta.url)) {
