@@ -89,8 +89,8 @@ describe('against random symbols at 1e-4, at least 100 errors counted, within 2 
   test('PAM4, the smallest of its eyes', () => {
     const { model, link } = linkOf(
       { ...impairments, modulation: 'PAM4', targetBer: 1e-4, receiver: { ...impairments.receiver, noiseVolts: 4e-3 } },
-      4,
-      0.02,
+      2,
+      0.01,
     );
     const seen = randomSymbols(model, link, 800_000, 2);
     const inner = seen.get(1 / 6)!;
@@ -101,7 +101,8 @@ describe('against random symbols at 1e-4, at least 100 errors counted, within 2 
     expect(errors).toBeGreaterThanOrEqual(100);
     const middle = 2 * inner[errors];
     const upper = outer[Math.round(share * outer.length)] - inner[inner.length - 1 - errors];
-    expect(link.eyeHeightVolts).toBeGreaterThan(0.02 * link.mainCursorVolts);
+    // an eye so wide that the tolerance below is a small part of it
+    expect(link.eyeHeightVolts).toBeGreaterThan(0.1 * link.mainCursorVolts);
     expect(Math.abs(Math.min(middle, upper) - link.eyeHeightVolts)).toBeLessThan(0.02 * link.mainCursorVolts);
   });
 });
