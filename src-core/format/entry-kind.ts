@@ -31,6 +31,23 @@ export function entryKind(list: EntryListName, entry: unknown): EntryKind {
   return { problem: named.length > 1 ? twoKinds(list, named) : noKind(list, keys) };
 }
 
+/**
+ * A kind that is not its entry's first key. A reader looks for it there, and so do differences of two texts.
+ * @param written the entry's keys in the order of the text, without what a merge brings in
+ */
+export function kindProblems(list: EntryListName, kind: string, written: readonly string[]): FormatProblem[] {
+  const [first] = written.filter((key) => key !== '<<' && !key.startsWith('x-'));
+  if (entryLists[list].choice !== 'first-key' || first === kind || !written.includes(kind)) return [];
+  const fix: FormatFix = {
+    title: `Move \`${kind}\` before ${quote(first)}`,
+    edits: [{ op: 'first', path: [kind] }],
+    preferred: true,
+    safe: true,
+  };
+  const message = `\`${kind}\` says what this entry is and stands first in it, before ${quote(first)}.`;
+  return [say([kind], 'key', message, [fix])];
+}
+
 const found = (list: EntryListName, kind: string): EntryKind => ({ kind, schema: schemaOfKind(list, kind)! });
 
 const say = (
@@ -87,7 +104,7 @@ function kindByKey(list: EntryListName, entry: Record<string, unknown>): EntryKi
     const fixes = kindsWith(list, Object.keys(entry)).map(
       (name): FormatFix => ({
         title: `Add \`kind: ${name}\``,
-        edits: [{ op: 'set', path: [], key: 'kind', text: name }],
+        edits: [{ op: 'set', path: [], key: 'kind', text: name, first: true }],
       }),
     );
     return {
@@ -147,7 +164,7 @@ function noKind(list: EntryListName, keys: readonly string[]): FormatProblem {
     const fixes = fitting.map(
       (kind): FormatFix => ({
         title: `Add \`${kind}: ${freeName(kind)}\``,
-        edits: [{ op: 'set', path: [], key: kind, text: freeName(kind) }],
+        edits: [{ op: 'set', path: [], key: kind, text: freeName(kind), first: true }],
       }),
     );
     return say(

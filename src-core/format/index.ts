@@ -1,7 +1,7 @@
 /**
  * The format at run time: what keys there are, what is wrong with a value, and the value as read.
  *
- * - `entryKind(list, entry)` chooses an entry's schema; `freeName(kind, taken)` proposes an own name.
+ * - `entryKind(list, entry)` chooses an entry's schema; `kindProblems(list, kind, keys)` says that the kind does not stand first; `freeName(kind, taken)` proposes an own name.
  * - `readValues(schema, raw, options)` checks a mapping against its schema and reads its quantities. Keys that are bad are left
  *   out of `values` and have a problem, the others are kept.
  * - `missingKeys(kind, values, singleEnded)`, after a part was merged in: what the kind's model needs and is not there.
@@ -11,7 +11,7 @@
  *
  * Every function takes anything that YAML can make and returns; none throws.
  */
-export { entryKind, likelyKinds } from './entry-kind';
+export { entryKind, kindProblems, likelyKinds } from './entry-kind';
 export { freeName } from './free-name';
 export { type KeyInfo, keySchemaAt, keysAt, keysOf } from './keys';
 export { missingKeyProblems, missingKeys } from './missing';

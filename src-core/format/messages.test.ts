@@ -4,7 +4,7 @@ import { parse } from 'yaml';
 import type { EntryListName, SchemaName } from '../../schemas/format/types';
 import { entryKind, keySchemaAt, keysAt, keysOf, missingKeyProblems, missingKeys, readValues, reportOf } from './index';
 
-const ownName = new Set<SchemaName>(['trace', 'return-loss']);
+const ownName = new Set<SchemaName>(['trace', 'stub', 'cable', 'package', 'return-loss']);
 
 /** Each problem as `path: message → fix / fix`. */
 function said(schema: SchemaName, text: string, options = {}): string[] {
@@ -28,7 +28,19 @@ test.each<[SchemaName, string, string]>([
   ],
   ['trace', 'length: 42 Mm', 'length: Units keep their case, as in SI: `Mm` is written `mm`. → Write `mm`'],
   ['trace', 'length: 3,37 mm', 'length: Decimals are written with a point: `3,37` is `3.37`. → Write `3.37`'],
-  ['trace', 'length:', 'length: `length` has no value yet; for example `168 mm ± 2 mm`.'],
+  [
+    'trace',
+    'length:',
+    'length: `length` has no value yet; for example `168 mm ± 2 mm`. → Write the example `168 mm ± 2 mm`',
+  ],
+  ['stub', 'length:', 'length: `length` has no value yet; for example `0.9 mm`. → Write the example `0.9 mm`'],
+  ['cable', 'length:', 'length: `length` has no value yet; for example `0.5 m`. → Write the example `0.5 m`'],
+  [
+    'package',
+    'len:',
+    'len: `len` is not a key of a package; did you mean `length`? → Write `length` with the example `14 mm`',
+  ],
+  ['trace', 'len: 4 mm', 'len: `len` is not a key of a trace. → Remove `len`'],
   ['trace', 'length: [1 mm]', 'length: `length` is a length, as `168 mm ± 2 mm`; this is a list.'],
   ['trace', 'length: { a: 1 }', 'length: `length` is a length, as `168 mm ± 2 mm`; this is a mapping.'],
   ['trace', 'trace:', 'trace: This trace has no name yet: write `trace: trace-1` or a better one. → Write `trace-1`'],

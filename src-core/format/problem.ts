@@ -11,7 +11,9 @@ export type RelativeEdit =
       readonly key: string;
       readonly text: string;
       readonly after?: string;
+      readonly first?: boolean;
     }
+  | { readonly op: 'first'; readonly path: ValuePath }
   | { readonly op: 'value'; readonly path: ValuePath; readonly text: string }
   | { readonly op: 'key'; readonly path: ValuePath; readonly name: string }
   | { readonly op: 'remove'; readonly path: ValuePath };

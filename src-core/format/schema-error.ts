@@ -2,6 +2,7 @@ import type { NodeSchema, SchemaName } from '../../schemas/format/types';
 import { reservedKeys } from '../../schemas/generated/format';
 import type { SchemaError } from '../../schemas/generated/validators';
 import { nearest } from '../quantity/nearest';
+import { quantityExample } from '../quantity/read';
 import type { ValuePath } from '../text/types';
 import { mappingOf, nodeAt, pathOf, valueAt } from './node-at';
 import type { FormatFix, FormatProblem } from './problem';
@@ -20,7 +21,7 @@ export function problemOf(error: SchemaError, name: SchemaName, value: unknown):
   const actual = valueAt(value, path);
   switch (error.keyword) {
     case 'additionalProperties':
-      return unknownKey(holder, String(error.params.additionalProperty));
+      return unknownKey(holder, String(error.params.additionalProperty), actual);
     case 'required':
       return missingKey(holder, String(error.params.missingProperty), name);
     case 'not':
@@ -45,7 +46,7 @@ interface Holder {
 
 const known = ({ node }: Holder): Readonly<Record<string, NodeSchema>> => mappingOf(node)?.properties ?? {};
 
-function unknownKey(holder: Holder, key: string): FormatProblem {
+function unknownKey(holder: Holder, key: string, actual: unknown): FormatProblem {
   const path = [...holder.path, key];
   const remove: FormatFix = { title: `Remove ${quote(key)}`, edits: [{ op: 'remove', path }] };
   if (reservedKeys.includes(key)) {
@@ -59,6 +60,15 @@ function unknownKey(holder: Holder, key: string): FormatProblem {
   }
   const message = `${quote(key)} is not a key of ${holder.noun}`;
   const meant = nearest(key, Object.keys(known(holder)));
+  const begun = beginsKeys(holder, key, actual);
+  if (!meant && begun.length > 0) {
+    const names = listed(
+      begun.map((name) => `\`${name}\``),
+      'or',
+    );
+    const fixes = begun.map((name) => completed(holder, path, name));
+    return { rule: 'schema', path, on: 'key', message: `${message}; did you mean ${names}?`, fixes };
+  }
   if (!meant) return { rule: 'schema', path, on: 'key', message: `${message}.`, fixes: [remove] };
   const rename: FormatFix = {
     title: `Change to \`${meant}\``,
@@ -67,6 +77,30 @@ function unknownKey(holder: Holder, key: string): FormatProblem {
     safe: true,
   };
   return { rule: 'schema', path, on: 'key', message: `${message}; did you mean \`${meant}\`?`, fixes: [rename] };
+}
+
+const MOST_BEGUN = 3;
+
+/** A key that is only begun and has no value: `len`. */
+function beginsKeys(holder: Holder, key: string, actual: unknown): string[] {
+  const value = valueAt(actual, [key]);
+  if (key === '' || (value !== null && value !== undefined)) return [];
+  const begun = Object.keys(known(holder)).filter(
+    (name) => name.startsWith(key) && valueAt(actual, [name]) === undefined,
+  );
+  return begun.length > MOST_BEGUN ? [] : begun;
+}
+
+/** The key in full, with its example where it has one. */
+function completed(holder: Holder, path: ValuePath, name: string): FormatFix {
+  const child = known(holder)[name];
+  const text = child['x-quantity'] ? quantityExample(child['x-quantity'], child.examples) : child.examples?.[0];
+  const rename = { op: 'key', path, name } as const;
+  if (typeof text !== 'string') return { title: `Write \`${name}\``, edits: [rename] };
+  return {
+    title: `Write \`${name}\` with the example \`${text}\``,
+    edits: [rename, { op: 'value', path, text }],
+  };
 }
 
 const isFile = (name: SchemaName) => name === 'channel' || name === 'parts' || name === 'config';
@@ -80,7 +114,15 @@ function missingKey(holder: Holder, key: string, name: SchemaName): FormatProble
       : [
           {
             title: `Add \`${key}: ${example}\``,
-            edits: [{ op: 'set', path: holder.path, key, text: String(example) }],
+            edits: [
+              {
+                op: 'set',
+                path: holder.path,
+                key,
+                text: String(example),
+                ...(key === 'lanewright' && { first: true }),
+              },
+            ],
           },
         ];
   const message = `${holder.noun.replace(/^a/, 'A')} lacks \`${key}\`${example === undefined ? '' : `, as \`${key}: ${example}\``}.`;

@@ -59,7 +59,7 @@ function empty({ path, node, subject }: Wrong, name: SchemaName): Said {
     : (node.examples?.[0] ?? choicesOf(node)[0]);
   return {
     message: `${subject} has no value yet${example === undefined ? '' : `; for example \`${example}\``}.`,
-    fixes: [],
+    fixes: example === undefined ? [] : [write(path, String(example), { title: `Write the example \`${example}\`` })],
   };
 }
 

@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest';
 import type { FileContent } from '../text/types';
 import { buildModel } from './build';
-import { exampleModel, exampleTexts, parsedOf } from './fixtures';
+import { exampleModel, exampleTexts, parsedOf, partsText } from './fixtures';
 import { changed, findingsOf, reportsIn, withPath } from './testing';
 
 test('the example has no finding and is read in full', () => {
@@ -246,4 +246,40 @@ test.each([
   ['lanewright: 1\nx-team: 3\nrules: { skew: off }\n', []],
 ])('the configuration %j is held against its schema', (text, findings) => {
   expect(findingsOf({ 'lanewright.config.yaml': text })).toEqual(findings);
+});
+
+test.each([
+  ['an element', '  - stub: test-point\n    length: 0.9 mm\n', '  - length: 0.9 mm\n    stub: test-point\n', 'stub'],
+  ['a limit', '  - eye: main\n    height: 40 mV\n', '  - height: 40 mV\n    eye: main\n', 'eye'],
+])('the kind of %s that does not stand first is one finding, whose fix moves it', (_, first, later, kind) => {
+  const found = reportsIn(exampleTexts({ channel: changed(first, later) }));
+  expect(found.map(({ rule, marked }) => `${rule} ${marked}`)).toEqual([`schema ${kind}`]);
+  expect(found[0].fixes).toMatchObject([{ preferred: true, safe: true, edits: [{ op: 'first' }] }]);
+});
+test('a kind stands first behind what is merged and what is ignored', () => {
+  const base = changed('  - stub: test-point\n', '  - x-probe: 4\n    stub: test-point\n');
+  expect(findingsOf(exampleTexts({ channel: base }))).toEqual([]);
+  const merged = changed(
+    '  - stub: test-point\n    length: 0.9 mm\n    impedance: 50 ohm\n',
+    '  - <<: { length: 0.9 mm, impedance: 50 ohm }\n    stub: test-point\n',
+  );
+  expect(findingsOf(exampleTexts({ channel: merged }))).toEqual([]);
+});
+
+test('two stackups that meet are one finding, at the element in this file', () => {
+  const rise = '  - via: rise\n    part: sled.through-via\n    to: L1\n';
+  const parts = partsText
+    .replace(
+      '\nparts:',
+      '\nparts:\n  other-via: { kind: via, stackup: other, drill: 0.25 mm, antipad: 0.75 mm, pitch: 0.8 mm }',
+    )
+    .replace(
+      '\nstackups:',
+      `\nstackups:\n  other: [{ copper: L1, thickness: 35 um }, { dielectric: d1, material: core, thickness: 0.2 mm }, { copper: L3, thickness: 35 um }]`,
+    );
+  const channel = changed(rise, '  - via: rise\n    part: sled.other-via\n    to: L1\n');
+  const found = reportsIn(exampleTexts({ channel, parts }));
+  expect(found.map(({ rule, at, marked }) => [rule, at.file, marked])).toEqual([
+    ['layer-order', 'lanes/camera.channel.yaml', 'via: rise'],
+  ]);
 });

@@ -38,7 +38,7 @@ export function buildModel(inputs: Inputs, parsed: ReadonlyMap<FilePath, ParsedF
   if (own.parsed.kind === 'config') return emptyModel(inputs, withoutEchoes(configReports(own), parsed));
   if (own.parsed.kind !== 'channel' && own.parsed.kind !== 'parts') return emptyModel(inputs, []);
   if (own.newer) return emptyModel(inputs, versionReports(sources));
-  const reports: ModelReport[] = [...sources.reports];
+  const reports: ModelReport[] = [...sources.reports, ...configUnread(inputs)];
   const shelves = openShelves(sources, reports);
   const read: ChannelRead =
     own.parsed.kind === 'channel' ? readValues('channel', own.parsed.value) : { values: {}, problems: [] };
@@ -193,6 +193,14 @@ function unreadReports(inputs: Inputs): readonly ModelReport[] {
   const { file } = inputs;
   const [rule, message] = unreadable(inputs, file, file.slice(file.lastIndexOf('/') + 1));
   return [{ rule, at: placeIn(file, []), message: rule === 'missing-file' ? 'This file is not there.' : message }];
+}
+
+/** Why the configuration that would count has no text. */
+function configUnread(inputs: Inputs): readonly ModelReport[] {
+  const { file, configFile, files } = inputs;
+  if (configFile === undefined || configFile === file || files.get(configFile)?.kind === 'text') return [];
+  const [rule, message] = unreadable(inputs, configFile, configFile);
+  return [{ rule, at: placeIn(file, []), message: `${message} The rules’ defaults hold.` }];
 }
 
 function emptyModel({ file }: Inputs, reports: readonly ModelReport[]): Model {

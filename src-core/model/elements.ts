@@ -1,8 +1,17 @@
 import type { ElementKindName, Quantity } from '../../schemas/format/types';
-import { entryKind, freeName, keysOf, missingKeyProblems, missingKeys, readValues } from '../format/index';
+import {
+  entryKind,
+  freeName,
+  keysOf,
+  kindProblems,
+  missingKeyProblems,
+  missingKeys,
+  readValues,
+} from '../format/index';
 import { nearest } from '../quantity/nearest';
 import { show } from '../quantity/show';
 import { isMapping, mappingAt, type RawMapping } from '../raw';
+import { writtenKeys } from '../text/first';
 import type { Place } from '../text/types';
 import { type Draft, headOf } from './draft';
 import { lookUp, namesAtHand } from './names';
@@ -64,7 +73,8 @@ export function readElement(context: ElementContext, entry: unknown, index: numb
     return draft;
   }
   const { values, problems } = readValues(kind, raw, context);
-  reports.push(...formatReports(problems, file, path, draft.name));
+  const late = kindProblems('elements', kind, writtenKeys(sources.own.parsed, path));
+  reports.push(...formatReports([...late, ...problems], file, path, draft.name));
   draft.values = values as Record<string, unknown>;
   mergePart(context, draft);
   if (context.singleEnded) refusePairKeys(context, draft);

@@ -8,7 +8,8 @@ import type { Stackup } from './types';
 /** Where the signal runs between two elements; `by` is the element that says so. */
 interface Reached {
   readonly stackup: Stackup;
-  readonly layer: string;
+  /** Unknown behind a via whose end could not be derived. */
+  readonly layer: string | undefined;
   readonly by: Draft;
 }
 
@@ -96,7 +97,7 @@ function neighbour(drafts: readonly Draft[], via: Draft, step: -1 | 1): Neighbou
     const one = drafts[at];
     if (one.unknownKind) return 'unreadable';
     if (one.kind === 'trace' && (one.stackup || one.includedIn === undefined)) {
-      if (one.stackup && one.stackup !== via.stackup) return 'none';
+      if (one.stackup && one.stackup !== via.stackup) return 'unreadable'; // two stackups that meet have their own finding
       if (one.stackup && one.layer !== undefined) return { layer: one.layer };
       // A trace without stackup sets no layer; one whose stackup or layer cannot be read has its own finding.
       return Object.hasOwn(one.raw, 'stackup') || one.incomplete ? 'unreadable' : 'none';
@@ -106,7 +107,7 @@ function neighbour(drafts: readonly Draft[], via: Draft, step: -1 | 1): Neighbou
       if (near !== undefined) return { layer: near };
       if (Object.hasOwn(one.raw, step === 1 ? 'from' : 'to')) return 'unreadable';
       if (one.includedIn === undefined) return 'none';
-    } else if (one.kind === 'via' && !one.stackup) return 'unreadable';
+    } else if (one.kind === 'via') return 'unreadable'; // of no stackup, or of another: that has its own finding
     if (!PASSED_OVER.has(one.kind) && one.includedIn === undefined) return 'none';
   }
   return 'none';
@@ -175,7 +176,8 @@ function walk(drafts: readonly Draft[], reports: ModelReport[]): void {
 function betweenStackups(draft: Draft, reached: Reached): ModelReport {
   return {
     rule: 'layer-order',
-    at: draft.places.stackup,
+    // a part of another file is no fault where it stands
+    at: draft.places.stackup.file === draft.place.file ? draft.places.stackup : headOf(draft),
     subject: draft.name,
     message: `\`${draft.name}\` is in \`${draft.stackup!.name}\`, \`${reached.by.name}\` before it in \`${reached.stackup.name}\`: a connector, cable, package or block has to stand between two stackups.`,
     related: [{ at: reached.by.places.stackup, message: `\`${reached.by.name}\` is in \`${reached.stackup.name}\`.` }],
@@ -188,17 +190,15 @@ function atTrace(draft: Draft, reached: Reached | undefined, reports: ModelRepor
   const own: Reached = { stackup, layer, by: draft };
   if (!reached) return own;
   if (reached.stackup !== stackup) reports.push(betweenStackups(draft, reached));
-  else if (reached.layer !== layer) reports.push(wrongLayer(draft, layer, reached));
+  else if (reached.layer !== undefined && reached.layer !== layer)
+    reports.push(wrongLayer(draft, layer, reached.layer, reached.by));
   return own;
 }
 
-function wrongLayer(draft: Draft, layer: string, reached: Reached): ModelReport {
+function wrongLayer(draft: Draft, layer: string, reached: string, by: Draft): ModelReport {
   const at = draft.places.layer;
-  const { by } = reached;
   const byVia = by.kind === 'via';
-  const fixes: Fix[] = [
-    { title: `Change the layer to \`${reached.layer}\``, edits: [{ op: 'value', at, text: reached.layer }] },
-  ];
+  const fixes: Fix[] = [{ title: `Change the layer to \`${reached}\``, edits: [{ op: 'value', at, text: reached }] }];
   if (byVia && Object.hasOwn(by.raw, 'to') && by.from !== layer) {
     fixes.push({
       title: `Let \`${by.name}\` go to \`${layer}\``,
@@ -210,12 +210,12 @@ function wrongLayer(draft: Draft, layer: string, reached: Reached): ModelReport 
     at,
     subject: draft.name,
     message: byVia
-      ? `\`${draft.name}\` runs on \`${layer}\`, but the via \`${by.name}\` before it reaches \`${reached.layer}\`.`
-      : `\`${draft.name}\` runs on \`${layer}\`, but \`${by.name}\` before it on \`${reached.layer}\`: a via is missing between them.`,
+      ? `\`${draft.name}\` runs on \`${layer}\`, but the via \`${by.name}\` before it reaches \`${reached}\`.`
+      : `\`${draft.name}\` runs on \`${layer}\`, but \`${by.name}\` before it on \`${reached}\`: a via is missing between them.`,
     related: [
       {
         at: byVia ? (by.places.to ?? by.place) : by.places.layer,
-        message: `\`${by.name}\` ${byVia ? 'reaches' : 'runs on'} \`${reached.layer}\`.`,
+        message: `\`${by.name}\` ${byVia ? 'reaches' : 'runs on'} \`${reached}\`.`,
       },
     ],
     fixes,
@@ -226,7 +226,7 @@ function atVia(draft: Draft, reached: Reached | undefined, reports: ModelReport[
   const { stackup, from, to } = draft;
   if (!stackup) return undefined;
   if (reached && reached.stackup !== stackup) reports.push(betweenStackups(draft, reached));
-  else if (reached && from !== undefined && reached.layer !== from) {
+  else if (reached?.layer !== undefined && from !== undefined && reached.layer !== from) {
     const at = draft.places.from;
     reports.push({
       rule: 'layer-order',
@@ -247,7 +247,7 @@ function atVia(draft: Draft, reached: Reached | undefined, reports: ModelReport[
   } else if (from !== undefined && to !== undefined && !checkSpan(draft, stackup, from, to, reports)) {
     return undefined; // where it ends is in doubt: what follows is not held against it
   }
-  return to === undefined ? undefined : { stackup, layer: to, by: draft };
+  return { stackup, layer: to, by: draft };
 }
 
 /** Whether a via's layers differ and its span holds both; else a report. */
@@ -285,7 +285,7 @@ function checkSpan(draft: Draft, stackup: Stackup, from: string, to: string, rep
 }
 
 function atCapacitor(draft: Draft, reached: Reached | undefined, reports: ModelReport[]): void {
-  if (!reached || draft.includedIn !== undefined) return;
+  if (reached?.layer === undefined || draft.includedIn !== undefined) return;
   const outer = outerLayers(reached.stackup);
   if (outer.includes(reached.layer)) return;
   reports.push({

@@ -1,8 +1,9 @@
 import type { LimitKindName, Quantity, QuantitySpec } from '../../schemas/format/types';
-import { entryKind, readValues } from '../format/index';
+import { entryKind, kindProblems, readValues } from '../format/index';
 import { readQuantity } from '../quantity/read';
 import { isMapping, listAt } from '../raw';
 import type { Fix } from '../report';
+import { writtenKeys } from '../text/first';
 import type { Place } from '../text/types';
 import type { ElementContext } from './elements';
 import { formatReports, type ModelReport, nameFixes, nameHint, placeIn, quoted } from './reports';
@@ -29,7 +30,8 @@ export function readLimits(context: ElementContext, elements: readonly AnyElemen
     const written = entry[kind];
     const name = typeof written === 'string' && written !== '' ? written : `${kind} ${index + 1}`;
     const { values, problems } = readValues(kind, entry, context);
-    reports.push(...formatReports(problems, file, path, name));
+    const late = kindProblems('limits', kind, writtenKeys(sources.own.parsed, path));
+    reports.push(...formatReports([...late, ...problems], file, path, name));
     const place = placeIn(file, path);
     const needed = NEEDS[kind];
     if (needed && written !== null && !Object.hasOwn(entry, needed.key)) {

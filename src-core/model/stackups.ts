@@ -1,8 +1,9 @@
 import type { FoilValues, MaterialValues, PartsValues, Quantity } from '../../schemas/format/types';
-import { entryKind, readValues } from '../format/index';
+import { entryKind, kindProblems, readValues } from '../format/index';
 import { COPPER_CONDUCTIVITY } from '../physics/copper';
 import { cannonball, type Roughness } from '../physics/roughness';
 import { mappingAt } from '../raw';
+import { writtenKeys } from '../text/first';
 import type { FilePath, ValuePath } from '../text/types';
 import { lookUp } from './names';
 import { formatReports, type ModelReport, placeIn, quoted } from './reports';
@@ -93,6 +94,8 @@ function readRow(context: Context, file: FilePath, path: ValuePath, row: unknown
     reports.push(...formatReports([kind.problem], file, path));
     return undefined;
   }
+  const keys = writtenKeys(context.sources.all.get(file)!.parsed, path);
+  reports.push(...formatReports(kindProblems('stackup-rows', kind.kind, keys), file, path));
   const place = placeIn(file, path);
   if (kind.kind === 'copper') {
     const { values, problems } = readValues('copper', row);

@@ -190,3 +190,24 @@ test('after any removal, value or set the example parses, comments stay, and the
 function valueAt(value: unknown, path: readonly (string | number)[]): unknown {
   return path.reduce<unknown>((here, step) => (here as Record<string | number, unknown>)?.[step], value);
 }
+
+test('a pair moves before all others with its comment, which stay as they are', () => {
+  const text = 'path:\n  - length: 1 mm # short\n    # of the run\n    trace: run # moved\n    layer: L1\n';
+  expect(edited(text, { op: 'first', at: place(['path', 0, 'trace']) })).toBe(
+    'path:\n  - trace: run # moved\n    length: 1 mm # short\n    # of the run\n    layer: L1\n',
+  );
+  expect(
+    edited('path: [{ length: 1 mm, dk: 3, trace: run }]\n', { op: 'first', at: place(['path', 0, 'trace']) }),
+  ).toBe('path: [{ trace: run, length: 1 mm, dk: 3 }]\n');
+  expect(edited(text, { op: 'first', at: place(['path', 0, 'length']) })).toBe(text);
+});
+
+test('set before all others', () => {
+  const first = { op: 'set', at: place([]), key: 'lanewright', text: '1', first: true } as const;
+  expect(edited('# a lane\nline-rate: 10 Gb/s\npath: []\n', first)).toBe(
+    '# a lane\nlanewright: 1\nline-rate: 10 Gb/s\npath: []\n',
+  );
+  expect(edited('path: [{ length: 1 mm }]\n', { ...first, at: place(['path', 0]), key: 'trace', text: 'a' })).toBe(
+    'path: [{ trace: a, length: 1 mm }]\n',
+  );
+});

@@ -1,4 +1,5 @@
 import { appendEdit } from './append';
+import { firstEdit } from './first';
 import type { ParsedFile } from './parsed';
 import { find, rootOf } from './range';
 import { removeEdit } from './remove';
@@ -70,6 +71,7 @@ function resolveOne(edit: JoinedEdit, parsed: ParsedFile, all: readonly PlaceEdi
     return { file, range: { start, end: Math.max(start, Math.min(edit.range.end, text.length)) }, text: edit.text };
   }
   if (edit.op === 'set') return setEdit(parsed, edit);
+  if (edit.op === 'first') return firstEdit(parsed, edit.at.path);
   if (edit.op === 'append') return appendEdit(parsed, edit.at, edit.entries, edit.index);
   const found = find(rootOf(parsed), edit.at.path);
   if (found.depth < edit.at.path.length) return undefined;

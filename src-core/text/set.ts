@@ -19,6 +19,8 @@ export function setEdit(parsed: ParsedFile, edit: SetEdit): TextEdit | undefined
   if (node.type === 'map') {
     const pair = node.pairs.find((one) => one.key === key);
     if (pair) return valueEdit(parsed, { node: pair.value, pair, depth: 0 }, text);
+    const first = edit.first && missing.length === 0 ? node.pairs[0] : undefined;
+    if (first) return addBefore(parsed, first, node.flow, `${key}: ${text}`);
     return node.flow ? addToFlow(parsed, node, key, text, after) : addToBlock(parsed, node, key, text, after);
   }
   if (node.type === 'alias') return valueEdit(parsed, found, `{ <<: *${node.name}, ${key}: ${text} }`);
@@ -30,6 +32,12 @@ export function setEdit(parsed: ParsedFile, edit: SetEdit): TextEdit | undefined
     return { file: parsed.file, range: { start: end, end }, text: `${lead}${key}: ${text}${lineEndOf(parsed)}` };
   }
   return valueEdit(parsed, found, `{ ${key}: ${text} }`);
+}
+
+function addBefore(parsed: ParsedFile, { range }: PairNode, flow: boolean, pair: string): TextEdit {
+  const { file, text } = parsed;
+  const joint = flow ? ', ' : `${lineEndOf(parsed)}${' '.repeat(columnOf(text, range.start))}`;
+  return { file, range: { start: range.start, end: range.start }, text: `${pair}${joint}` };
 }
 
 function addToFlow(

@@ -35,8 +35,17 @@ export interface Files {
 
 /** A change of text in terms of places; turned into ranges by `resolveEdits` against the newest text. */
 export type PlaceEdit =
-  /** Sets or adds `key: text` in the mapping at `at`, flow or block; `after` names the key it is put behind. */
-  | { readonly op: 'set'; readonly at: Place; readonly key: string; readonly text: string; readonly after?: string }
+  /** Sets or adds `key: text` in the mapping at `at`, flow or block; `after` names the key it is put behind, `first` puts it before all. */
+  | {
+      readonly op: 'set';
+      readonly at: Place;
+      readonly key: string;
+      readonly text: string;
+      readonly after?: string;
+      readonly first?: boolean;
+    }
+  /** Moves the pair at `at` before all others of its mapping. */
+  | { readonly op: 'first'; readonly at: Place }
   /** Replaces the value at `at`. */
   | { readonly op: 'value'; readonly at: Place; readonly text: string }
   /** Renames the key of the pair at `at`. */
