@@ -1,4 +1,5 @@
 import { expect, test } from 'vitest';
+import { analyse } from './analyse';
 import { fileKind, gatherInputs, joinPath } from './inputs';
 import type { FileContent, Files } from './text/types';
 
@@ -95,4 +96,24 @@ test('contents that say the same stay the same objects', async () => {
   );
   expect(after.files.get('b.parts.yaml')).toBe(before.files.get('b.parts.yaml'));
   expect(after.files.get('a.channel.yaml')).not.toBe(before.files.get('a.channel.yaml'));
+});
+
+test.each<FileContent>([
+  { kind: 'too-large', bytes: 2 ** 21, limit: 2 ** 20 },
+  { kind: 'refused', reason: 'it is a link that leads out of the folder that is open' },
+])('a configuration that is $kind is not passed over, and the channel says so once', async (content) => {
+  const { read } = memory({ 'm/a.channel.yaml': 'lanewright: 1\n', 'lanewright.config.yaml': 'lanewright: 1\n' });
+  const files = { read: async (file: string) => (file === 'm/lanewright.config.yaml' ? content : read(file)) };
+  const inputs = await gatherInputs(files, 'm/a.channel.yaml', '2026-12-01');
+  expect(inputs.configFile).toBe('m/lanewright.config.yaml');
+  const { findings } = analyse(inputs, undefined, { until: 'model' });
+  expect(findings.filter(({ message }) => message.includes('lanewright.config.yaml'))).toMatchObject([
+    {
+      rule: content.kind === 'refused' ? 'refused-file' : 'limit',
+      severity: 'error',
+      message: expect.stringMatching(
+        /^`m\/lanewright.config.yaml` is not read: it is .*\. The rules’ defaults hold\.$/,
+      ),
+    },
+  ]);
 });

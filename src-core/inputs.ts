@@ -132,7 +132,8 @@ async function nearestConfig(
   for (let depth = folders.length; depth >= 0; depth--) {
     const path = [...folders.slice(0, depth), CONFIG_NAME].join('/');
     const content = await read(path);
-    if (content.kind === 'text') return path;
+    // one that is there and cannot be read is not passed over: what it says would have counted
+    if (content.kind !== 'missing') return path;
     contents.delete(path);
   }
   return undefined;
