@@ -2,6 +2,7 @@ import type { NameRole } from '../../schemas/format/types';
 import { entryLists } from '../../schemas/generated/format';
 import type { Analysis } from '../analysis';
 import { freeName, type KeyInfo, keySchemaAt } from '../format/index';
+import type { Model } from '../model/types';
 import { exactly, show } from '../quantity/show';
 import { unitsOf } from '../quantity/units';
 import { isMapping } from '../raw';
@@ -75,6 +76,21 @@ function subjects(analysis: Analysis | undefined, cursor: Cursor): Completion[] 
   }));
 }
 
+/** What a file may hold besides its element: on each side what stands next, beyond what it holds already. */
+function neighbours(elements: Model['elements'], cursor: Cursor): Completion[] {
+  const [list, index, , item] = cursor.path;
+  const own = list === 'path' && typeof index === 'number' ? elements[index] : undefined;
+  if (!own) return [];
+  const { includes } = own.values as { includes?: unknown };
+  const held = Array.isArray(includes) ? includes.filter((_, i) => i !== item) : [];
+  const beyond = (step: -1 | 1) => {
+    let at = own.index + step;
+    while (elements[at] && held.includes(elements[at].name)) at += step;
+    return elements[at];
+  };
+  return [beyond(-1), beyond(1)].flatMap((one, rank) => (one ? [plain(cursor, one.name, 'name', rank, one.kind)] : []));
+}
+
 async function referable(
   parsed: ParsedFile,
   analysis: Analysis | undefined,
@@ -87,6 +103,7 @@ async function referable(
   const model = analysis?.model;
   switch (role) {
     case 'element':
+      if (key === 'includes' && model) return neighbours(model.elements, cursor);
       return (model?.elements ?? [])
         .filter(({ index }) => index !== cursor.path[1] || cursor.path[0] !== 'path')
         .map((element, rank) => plain(cursor, element.name, 'name', rank, element.kind));

@@ -172,3 +172,11 @@ test.each([
   expect(labels).toEqual(expect.arrayContaining(wanted));
   for (const other of others) expect(labels).not.toContain(other);
 });
+
+test('`includes` offers what stands beside, beyond what it names already', async () => {
+  const path = (includes: string) =>
+    `${HEAD}${START}  - via: dive\n    part: board.hole\n  - connector: mate\n    includes: ${includes}\n  - stub: probe\n  - trace: far\n`;
+  expect((await offered(path('[‸]'))).labels).toEqual(['dive', 'probe']);
+  expect((await offered(path('[dive, ‸]'))).labels).toEqual(['start', 'probe']);
+  expect((await offered(path('[probe, di‸ve]'))).labels).toEqual(['dive', 'far']);
+});
