@@ -128,6 +128,9 @@ export function count(amount: number | { readonly length: number }, singular: st
   return `${number.toLocaleString('en')} ${number === 1 ? singular : plural}`;
 }
 
+/** A loss above this is told as such: nobody measures it. */
+export const MOST_LOSS_DB = 120;
+
 /** Decibels up to where more of them say nothing; computed zeros would read as a figure. */
 const decibels = (most: number) => (value: number) =>
   value > most && Number.isFinite(value) ? `above ${most} dB` : inDimension(value, 'loss');
@@ -146,7 +149,7 @@ export const show = {
   capacitance: of('capacitance'),
   inductance: of('inductance'),
   voltage: of('voltage'),
-  loss: decibels(120),
+  loss: decibels(MOST_LOSS_DB),
   /** Of what comes back or converts: further below than anyone measures reads `above 60 dB`. */
   returnLoss: decibels(60),
   lossPerLength: of('lossPerLength'),

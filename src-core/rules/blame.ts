@@ -12,65 +12,78 @@ export function elementsWithin({ networks }: Judged, limit: Pick<Limit, 'between
   return networks!.elements.slice(first, last + 1).filter(({ through }) => !through);
 }
 
-/** A transition that takes less than this is harmless: it is not named, however little its delay would allow it. */
+/** A transition that takes less than this is harmless and never named. */
 const HARMLESS_DB = 0.5;
+/** Beside an element that takes so many times more, a transition is not what the loss is made of. */
+const OVERSHADOWED = 4;
+/** What needs almost no loss to do its work. */
 const TRANSITIONS = new Set(['via', 'stub', 'capacitor']);
 
-/** What an element may fairly spend, and in which words. */
-interface Share {
-  readonly allowedDb: number;
-  readonly words: string;
+interface Spender {
+  readonly element: AnyElement;
+  readonly spentDb: number;
+  /** What it or its owner was given, and in which words. */
+  readonly share?: { readonly allowedDb: number; readonly words: string };
 }
 
-/** Its budget; failing that its part, by delay, of its owner's budget; failing that its part, by delay, of what the limit allows. */
-function shareOf({ element }: ElementNetwork, { model }: Judged, delays: Delays, allowedDb: number): Share {
+/** Its budget; failing that its part, by delay, of its owner's. */
+function shareOf(one: ElementNetwork, all: readonly ElementNetwork[], judged: Judged): Spender['share'] {
+  const { element } = one;
   if (element.budget) return { allowedDb: element.budget.value, words: 'its budget' };
-  const own = delays.of(element);
-  const owner = model.owners.find(({ name }) => name === element.owner);
-  if (!owner) return { allowedDb: allowedDb * own, words: 'its share by delay' };
-  const owners = delays.all.filter((one) => one.element.owner === owner.name);
-  const whole = owners.reduce((sum, one) => sum + delays.of(one.element), 0);
-  const part = whole > 0 ? own / whole : 1 / owners.length;
+  const owner = judged.model.owners.find(({ name }) => name === element.owner);
+  if (!owner) return undefined;
+  const owned = all.filter((other) => other.element.owner === owner.name);
+  const delay = (other: ElementNetwork) =>
+    Math.max(0, measuresOf(other, judged.networks!.grid, judged.model.nyquistFrequency).delaySeconds);
+  const whole = owned.reduce((sum, other) => sum + delay(other), 0);
+  const part = whole > 0 ? delay(one) / whole : 1 / owned.length;
   return {
     allowedDb: owner.budget.value * part,
     words:
-      owners.length > 1 ? `its share of the budget of ${quoted(owner.name)}` : `the budget of ${quoted(owner.name)}`,
+      owned.length > 1 ? `its share of the budget of ${quoted(owner.name)}` : `the budget of ${quoted(owner.name)}`,
   };
 }
 
-interface Delays {
-  readonly all: readonly ElementNetwork[];
-  /** An element's part of the delay of them all, 0 to 1. */
-  of(element: AnyElement): number;
-}
-
-function delaysOf(all: readonly ElementNetwork[], { model, networks }: Judged): Delays {
-  const seconds = new Map(
-    all.map((one) => [one.element, Math.max(0, measuresOf(one, networks!.grid, model.nyquistFrequency).delaySeconds)]),
-  );
-  const whole = [...seconds.values()].reduce((sum, delay) => sum + delay, 0);
-  return { all, of: (element) => (whole > 0 ? (seconds.get(element) ?? 0) / whole : 1 / all.length) };
-}
+const largest = <T>(items: readonly T[], size: (item: T) => number): T | undefined =>
+  items.reduce<T | undefined>((most, item) => (most && size(most) >= size(item) ? most : item), undefined);
 
 /**
- * The element whose own loss at a frequency exceeds its fair share the most.
- * @returns undefined where no element spends more than its share (reflections between them do)
+ * What a failing limit of loss is made of, by the elements' own losses at a frequency: a transition that alone takes as much as is
+ * lacking, since it needs none of it; else, where the element with the largest loss was given a budget, the one that is the most over
+ * its own; else the element with the largest loss.
+ * @param spentDb what the limit's path loses there, above `allowedDb`
+ * @returns undefined where reflections between the elements take more than any of them
  */
-export function spendsMost(judged: Judged, limit: Pick<Limit, 'between'>, allowedDb: number, atHz: number) {
-  const elements = elementsWithin(judged, limit);
-  const delays = delaysOf(elements, judged);
-  let most: { element: AnyElement; spentDb: number; overDb: number; words: string } | undefined;
-  for (const one of elements) {
-    const spentDb = insertionLossAt(one.network.differential, judged.networks!.grid, atHz);
-    if (TRANSITIONS.has(one.element.kind) && spentDb < HARMLESS_DB) continue;
-    const share = shareOf(one, judged, delays, allowedDb);
-    const overDb = spentDb - share.allowedDb;
-    if (overDb > (most?.overDb ?? 0)) most = { element: one.element, spentDb, overDb, words: share.words };
-  }
-  if (!most) return undefined;
-  const { element, spentDb, overDb, words } = most;
-  return {
-    element,
-    message: `${quoted(element.name)} spends the most over its share: ${show.loss(spentDb)}, ${show.loss(overDb)} over ${words}.`,
-  };
+export function spendsMost(
+  judged: Judged,
+  limit: Pick<Limit, 'between'>,
+  { spentDb, allowedDb, atHz }: { readonly spentDb: number; readonly allowedDb: number; readonly atHz: number },
+): { readonly element: AnyElement; readonly message: string } | undefined {
+  const within = elementsWithin(judged, limit);
+  const all: readonly Spender[] = within.map((one) => ({
+    element: one.element,
+    spentDb: insertionLossAt(one.network.differential, judged.networks!.grid, atHz),
+    share: shareOf(one, within, judged),
+  }));
+  const named = all.filter((one) => !TRANSITIONS.has(one.element.kind) || one.spentDb >= HARMLESS_DB);
+  const most = largest(named, (one) => one.spentDb);
+  const reflectedDb = spentDb - all.reduce((sum, one) => sum + one.spentDb, 0);
+  if (!most || most.spentDb < reflectedDb) return undefined;
+  // reflections between elements may give back what one of them takes
+  const part = (one: Spender) =>
+    `${quoted(one.element.name)} spends ${show.loss(one.spentDb)}${one.spentDb < spentDb ? ` of ${show.loss(spentDb)}` : ' by itself'}`;
+  const transition = largest(
+    named.filter((one) => TRANSITIONS.has(one.element.kind)),
+    (one) => one.spentDb,
+  );
+  if (transition && transition.spentDb >= Math.max(spentDb - allowedDb, most.spentDb / OVERSHADOWED))
+    return {
+      element: transition.element,
+      message: `${part(transition)}; a ${transition.element.kind} needs almost none.`,
+    };
+  const overDb = (one: Spender) => (one.share ? one.spentDb - one.share.allowedDb : 0);
+  const over = most.share && largest(named, overDb);
+  if (over?.share && overDb(over) > 0)
+    return { element: over.element, message: `${part(over)}, ${show.loss(overDb(over))} over ${over.share.words}.` };
+  return { element: most.element, message: `${part(most)}, more than any other element.` };
 }
