@@ -7,7 +7,11 @@ import { findFiles, openWorkspace, type Workspace } from './files';
 import { fixFile } from './fix';
 import { dependentsAmong, inputsFor } from './inputs';
 import { concise } from './printers/concise';
+import { github } from './printers/github';
+import { gitlab } from './printers/gitlab';
 import { json } from './printers/json';
+import { junit } from './printers/junit';
+import { sarif } from './printers/sarif';
 import { text } from './printers/text';
 import type { MakePrinter, Printer } from './printers/types';
 import { startProgress } from './progress';
@@ -15,7 +19,7 @@ import { writeAtomically } from './write';
 
 declare const LANEWRIGHT_VERSION: string;
 
-const printers: Record<string, MakePrinter> = { text, concise, json };
+const printers: Record<string, MakePrinter> = { text, concise, json, sarif, github, junit, gitlab };
 const LEVELS = ['error', 'warning', 'info', 'hint'] as const;
 
 export const check: Command = {
@@ -62,6 +66,7 @@ export const check: Command = {
     ['lanewright check', 'everything below the current folder'],
     ['lanewright check lanes --format json', 'for a program to read'],
     ['lanewright check --format text --format json=out.json', 'both at once'],
+    ['lanewright check --format github --format sarif=lanes.sarif', 'in a build: notes at the lines, alerts in a file'],
     ['lanewright check - --stdin-filename lanes/rx0.channel.yaml', 'a text that is not on disk yet'],
   ],
   async run({ paths, options, terminal }) {
@@ -71,13 +76,13 @@ export const check: Command = {
     if (files.length === 0) {
       terminal.note('lanewright: no channel, parts or config file here.\n');
     }
-    const print = openPrinters(options, workspace, terminal);
-    const progress = startProgress(terminal, files.length, 'files');
     const failOn = typeof options['fail-on'] === 'string' ? options['fail-on'] : 'error';
     const failing =
       failOn === 'never'
         ? new Set<string>()
         : new Set<string>(LEVELS.slice(0, LEVELS.indexOf(failOn as (typeof LEVELS)[number]) + 1));
+    const print = openPrinters(options, workspace, terminal, failing);
+    const progress = startProgress(terminal, files.length, 'files');
     const total: Record<string, number> = {};
     const told = eachOnce(files);
     let failed = false;
@@ -159,6 +164,7 @@ function openPrinters(
   options: Readonly<Record<string, unknown>>,
   workspace: Workspace,
   terminal: Parameters<Command['run']>[0]['terminal'],
+  failing: ReadonlySet<string>,
 ): { file: Printer['file']; end(): Promise<void> } {
   const wanted = (options.format as readonly string[] | undefined) ?? ['text'];
   const targets = wanted.map((choice) => {
@@ -177,6 +183,7 @@ function openPrinters(
       shown: workspace.shown,
       version: LANEWRIGHT_VERSION,
       quiet: options.quiet === true,
+      ...(failing.size > 0 && { failing }),
     }),
   }));
   return {

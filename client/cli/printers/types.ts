@@ -15,6 +15,8 @@ export interface PrinterContext {
   readonly version: string;
   /** Errors alone are told. */
   readonly quiet: boolean;
+  /** The severities that make the status 1; errors where it is left out. */
+  readonly failing?: ReadonlySet<string>;
 }
 
 export type MakePrinter = (context: PrinterContext) => Printer;
