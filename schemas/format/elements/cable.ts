@@ -9,6 +9,7 @@ export const cableElement = mapping(
     cable: declares('element', 'Its own name.'),
     length: Type.Optional({
       ...length,
+      examples: ['0.5 m'],
       'x-quantity': { dimensions: ['length'], at: 'never', tolerance: true, valid: [0, 1e6], plausible: [1e-3, 100] },
     } as typeof length),
     ...line,

@@ -7,7 +7,7 @@ export const packageElement = mapping(
   'The run through a chip package: a segment with declared impedance, delay and loss.',
   {
     package: declares('element', 'Its own name.'),
-    length: Type.Optional(length),
+    length: Type.Optional({ ...length, examples: ['14 mm'] } as typeof length),
     ...line,
     ...common,
   },

@@ -7,7 +7,7 @@ export const stubElement = mapping(
   'A branch on each leg that ends open: a test point, an unpopulated option.',
   {
     stub: declares('element', 'Its own name.'),
-    length: Type.Optional(length),
+    length: Type.Optional({ ...length, examples: ['0.9 mm'] } as typeof length),
     impedance: Type.Optional(
       quantity('impedance', {
         description: 'Impedance of each leg’s branch.',
