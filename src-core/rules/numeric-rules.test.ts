@@ -141,3 +141,19 @@ test('the eye that fails is marked at the size that fails it', () => {
     'link',
   );
 });
+test.each([
+  ['receiver: { noise: 1 mV }', 0],
+  ['receiver: { noise: 1 mV, dfe: { taps: 3, limit: 0.5 } }', 3],
+])('the eye that fails tells the largest cursor that is left: %s', (receiver, taken) => {
+  const { findings, link } = analyseFiles(
+    filesWith(`${receiver}\nlimits: [{ eye: main, height: 40 mV, width: 0.99 UI }]`).files,
+  );
+  const { pulse, mainIndex, samplesPerUi } = link!;
+  const uis = Array.from({ length: 60 }, (_, i) => i - 20).filter((ui) => ui < 0 || ui > taken);
+  const shares = uis.map((ui) => (pulse[mainIndex + ui * samplesPerUi] ?? 0) / pulse[mainIndex]);
+  const most = shares.reduce((at, share, i) => (Math.abs(share) > Math.abs(shares[at]) ? i : at), 0);
+  const said = findings.find(({ rule }) => rule === 'eye')?.related?.[0].message ?? '';
+  const [, share, ui, side] = /is (-?[\d.]+) % of the main one, (\d+) UI (before|after) it/.exec(said) ?? [];
+  expect(Number(share)).toBeCloseTo(100 * shares[most], 1);
+  expect(side === 'after' ? Number(ui) : -Number(ui)).toBe(uis[most]);
+});
