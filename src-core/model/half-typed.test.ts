@@ -1,4 +1,5 @@
 import { expect, test } from 'vitest';
+import { applyEdits, resolveEdits } from '../text/edits';
 import { channelText, exampleModel, exampleTexts } from './fixtures';
 import { changed, reportsIn } from './testing';
 
@@ -87,4 +88,19 @@ test('names that are missing are offered as they are at hand, not as an example 
     );
   const offered = titles('  - trace: tail\n    length: 1 mm\n    impedance: 100 ohm\n');
   expect(offered).toEqual(['Add `stackup: sled.main`', 'Add `layer: L1`', 'Add `layer: L3`', 'Add `layer: L6`']);
+});
+
+test('a key that is only begun is completed in two fixes, to an example of its kind', () => {
+  let channel = changed('    length: 0.9 mm\n', '    len\n');
+  const titles: string[] = [];
+  for (let step = 0; step < 2; step++) {
+    const found = reportsIn(exampleTexts({ channel }));
+    expect(found).toHaveLength(1);
+    const [fix] = found[0].fixes!;
+    titles.push(fix.title);
+    const { parsed } = exampleModel(exampleTexts({ channel }));
+    channel = applyEdits(channel, resolveEdits(fix.edits, parsed));
+  }
+  expect(titles).toEqual(['Add the colon', 'Write `length` with the example `0.9 mm`']);
+  expect(channel).toBe(channelText);
 });

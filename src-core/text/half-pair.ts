@@ -52,6 +52,7 @@ export function withoutColon(recovery: Recovery, item: Block, isHead: boolean): 
         rule: 'yaml',
         range: keyRange,
         message: `\`${key}\` stands alone: a key needs a colon, a space and a value.`,
+        fixes: insert('Add the colon', keyRange.end, ':'),
       });
     }
     return [{ key, keyRange, value: emptyScalar(end), range: keyRange, bare: true }];
