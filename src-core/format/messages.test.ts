@@ -351,3 +351,12 @@ test.each([
   expect(fixes.map(({ title }) => title)).toEqual(['Add `lanewright: 1`']);
   expect(others).toEqual([]);
 });
+
+test.each([
+  ['stub', { impedance: 1, dk: 1 }, 'Add the example `length: 0.9 mm`'],
+  ['package', { impedance: 1, delay: 1, loss: 1 }, 'Add the example `length: 14 mm`'],
+  ['cable', { impedance: 1, delay: 1, loss: 1 }, 'Add the example `length: 0.5 m`'],
+] as const)('what a %s lacks is offered as an example of its kind', (kind, values, title) => {
+  const [{ fixes }] = missingKeyProblems(kind, missingKeys(kind, values, false));
+  expect(fixes.map((fix) => fix.title)).toEqual([title]);
+});

@@ -76,12 +76,15 @@ export function missingKeyProblems(
     ),
   );
   const fixes = missing.flatMap(({ anyOf }) =>
-    anyOf.flatMap((key) =>
-      (namesFor(key) ?? exampleOf(kind, key)).map((text) => ({
-        title: `Add \`${key}: ${text}\``,
+    anyOf.flatMap((key) => {
+      const names = namesFor(key);
+      // a number of ours is none of this design: its title says so
+      const verb = names ? 'Add' : 'Add the example';
+      return (names ?? exampleOf(kind, key)).map((text) => ({
+        title: `${verb} \`${key}: ${text}\``,
         edits: [{ op: 'set' as const, path: [], key, text }],
-      })),
-    ),
+      }));
+    }),
   );
   const message = `This ${kind} lacks ${listed(keys)}; until then it counts as a straight through.`;
   return [{ rule: 'schema', path: [kind], on: 'entry', message, fixes }];

@@ -283,3 +283,9 @@ test('two stackups that meet are one finding, at the element in this file', () =
     ['layer-order', 'lanes/camera.channel.yaml', 'via: rise'],
   ]);
 });
+
+test('the kind of a stackup’s row that does not stand first is one finding', () => {
+  const parts = partsText.replace('{ copper: L3, thickness: 17 um,', '{ thickness: 17 um, copper: L3,');
+  expect(parts).not.toBe(partsText);
+  expect(findingsOf(exampleTexts({ parts }))).toEqual(['schema «copper»']);
+});
