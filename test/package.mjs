@@ -1,8 +1,9 @@
-// `npm run package`: builds the extension's package and holds it to its size.
+// `npm run package`: builds the extension's package and holds it to its size; then packs the command line.
 import { readFileSync, statSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { run, setUp } from '../tasks.mjs';
+import { makeCommandLinePackage } from './package-cli.mjs';
 
 const root = join(dirname(fileURLToPath(import.meta.url)), '..');
 /** design section 7 */
@@ -46,8 +47,11 @@ export async function makePackage({ build = true } = {}) {
 }
 
 if (process.argv[1] === fileURLToPath(import.meta.url)) {
-  await makePackage().catch((error) => {
+  try {
+    await makePackage();
+    console.log(makeCommandLinePackage());
+  } catch (error) {
     console.error(error.message);
     process.exitCode = 1;
-  });
+  }
 }
