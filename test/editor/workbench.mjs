@@ -23,8 +23,8 @@ export function installWorkbench() {
   if (existsSync(join(vscode, '.installed'))) return;
   console.error('Installing the editor workbench …');
   if (!existsSync(serverMain)) npm(['ci'], folder);
-  // Its own locked dependencies: the published package carries them as a shrinkwrap.
-  npm(['ci', '--omit=dev'], vscode);
+  // Its own dependencies: the published package carries a shrinkwrap, which `npm ci` refuses for naming development packages.
+  npm(['install', '--omit=dev'], vscode);
   writeFileSync(join(vscode, '.installed'), '');
 }
 
