@@ -23,7 +23,7 @@ export function installWorkbench() {
   if (existsSync(join(vscode, '.installed'))) return;
   console.error('Installing the editor workbench …');
   if (!existsSync(serverMain)) npm(['ci'], folder);
-  // Its own dependencies: the published package carries a shrinkwrap, which `npm ci` refuses for naming development packages.
+  // Its own dependencies: the published package carries a shrinkwrap, which `npm ci` finds incomplete.
   npm(['install', '--omit=dev'], vscode);
   writeFileSync(join(vscode, '.installed'), '');
 }
