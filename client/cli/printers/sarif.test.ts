@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
+import { gzipSync } from 'node:zlib';
 import { expect, test } from 'vitest';
 import { rules } from '../../../src-core/rules/list';
 import { applyEdits } from '../../../src-core/text/edits';
@@ -128,6 +129,29 @@ test('an accepted finding is suppressed, with the reason and the place of its wa
   const [{ kind, justification, location }] = results[0].suppressions;
   expect([kind, justification]).toEqual(['inSource', `${reason} (lane team, until 2099-01-01)`]);
   expect(location.physicalLocation.region.startLine).toBe(22);
+});
+
+test('of more findings than a forge takes the worst are told, the rest counted, the file within its size', () => {
+  const keys = Array.from({ length: 250 }, (_, i) => `key-${i}: 1\n`).join('');
+  const many = plainChannel((text) => `${long(text)}${keys}`);
+  const files = Math.ceil(25_000 / many.findings.length) + 1;
+  const out = printed(
+    sarif,
+    Array.from({ length: files }, () => many),
+  );
+  const [{ results, invocations }] = JSON.parse(out).runs as [
+    { results: Result[]; invocations: { toolExecutionNotifications: unknown[] }[] },
+  ];
+  expect(results).toHaveLength(25_000);
+  const left = files * many.findings.length - 25_000;
+  expect(JSON.stringify(invocations[0].toolExecutionNotifications)).toContain(
+    `${left} findings beyond the worst 25000`,
+  );
+  // an error for each key and the warning of the stub, of which those of the last files give way
+  expect(results.filter(({ level }) => level === 'error').length).toBe(
+    Math.min(25_000, files * many.findings.filter(({ severity }) => severity === 'error').length),
+  );
+  expect(gzipSync(out).length).toBeLessThan(10e6);
 });
 
 test('a hostile file makes no link, no argument, no path of its own, and nothing that steers', () => {
