@@ -5,6 +5,7 @@ import { formatReference } from './build/reference';
 import { formatModule, formatTypes } from './build/runtime';
 import { validatorsModule, validatorsTypes } from './build/validators';
 import { checkOutput } from './outputs/check';
+import { reviewOutput } from './outputs/review';
 
 /** Committed files, by name. */
 function committed(folder: string): Record<string, string> {
@@ -13,12 +14,14 @@ function committed(folder: string): Record<string, string> {
   for (const [name, schema] of Object.entries(publishedSchemas())) {
     files[`${name}.schema.json`] = `${JSON.stringify(schema, null, 2)}\n`;
   }
-  const output = {
-    $schema: 'https://json-schema.org/draft/2020-12/schema',
-    $id: 'urn:lanewright:schema:1:check-output',
-    ...plain(checkOutput),
-  };
-  files['check-output.schema.json'] = `${JSON.stringify(output, null, 2)}\n`;
+  for (const [name, schema] of Object.entries({ 'check-output': checkOutput, 'review-output': reviewOutput })) {
+    const output = {
+      $schema: 'https://json-schema.org/draft/2020-12/schema',
+      $id: `urn:lanewright:schema:1:${name}`,
+      ...plain(schema),
+    };
+    files[`${name}.schema.json`] = `${JSON.stringify(output, null, 2)}\n`;
+  }
   return files;
 }
 

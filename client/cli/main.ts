@@ -20,6 +20,11 @@ const commands: Record<string, { summary: string; arguments: string; load(): Pro
     summary: 'A page with pictures.',
     load: () => import('./report').then(({ report }) => report),
   },
+  review: {
+    arguments: '[BASE] [HEAD]',
+    summary: 'What a change did to each channel.',
+    load: () => import('./review').then(({ review }) => review),
+  },
 };
 
 /** NO_COLOR and FORCE_COLOR count when present and not empty; NO_COLOR wins; `--color` stands above both. */

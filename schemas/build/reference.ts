@@ -51,6 +51,7 @@ export function formatReference(meanings: string): string {
     'A part has `kind` and the keys of that kind, without its own name, `part`, `includes` and `reversed`, which belong to its place.',
     '## `lanewright.config.yaml`',
     section('config'),
+    ...inner('config'),
     '## Quantities',
     quantities,
     unitsTable(),

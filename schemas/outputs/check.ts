@@ -3,7 +3,7 @@ import { type Static, Type } from '@sinclair/typebox';
 /** What `lanewright check --format json` prints. Keys are only ever added within one `version`. */
 export const CHECK_OUTPUT_VERSION = 1;
 
-const object = <T extends Record<string, import('@sinclair/typebox').TSchema>>(
+export const object = <T extends Record<string, import('@sinclair/typebox').TSchema>>(
   properties: T,
   options: Record<string, unknown> = {},
 ) => Type.Object(properties, { additionalProperties: false, ...options });
@@ -13,7 +13,7 @@ const position = object({
   column: Type.Integer({ minimum: 1, description: 'In UTF-16 units, from 1.' }),
 });
 const range = object({ start: position, end: position });
-const location = object({ file: Type.String({ description: 'From the root, with `/`.' }), range });
+export const location = object({ file: Type.String({ description: 'From the root, with `/`.' }), range });
 
 const edit = object({ file: Type.String(), range, text: Type.String() });
 const fix = object({
@@ -22,7 +22,7 @@ const fix = object({
   edits: Type.Array(edit),
 });
 
-const figure = object({
+export const figure = object({
   name: Type.String(),
   title: Type.String(),
   value: Type.Number(),
@@ -31,9 +31,26 @@ const figure = object({
   note: Type.Optional(Type.String()),
 });
 
+export const severity = Type.Union([
+  Type.Literal('error'),
+  Type.Literal('warning'),
+  Type.Literal('info'),
+  Type.Literal('hint'),
+]);
+
+export const verdict = object({
+  state: Type.Union([
+    Type.Literal('good'),
+    Type.Literal('warnings'),
+    Type.Literal('errors'),
+    Type.Literal('not-computed'),
+  ]),
+  text: Type.String(),
+});
+
 const finding = object({
   rule: Type.String(),
-  severity: Type.Union([Type.Literal('error'), Type.Literal('warning'), Type.Literal('info'), Type.Literal('hint')]),
+  severity,
   message: Type.String(),
   subject: Type.Optional(Type.String({ description: 'The element or limit that it is about.' })),
   location,
@@ -79,17 +96,7 @@ const file = object({
   file: Type.String(),
   kind: Type.Union([Type.Literal('channel'), Type.Literal('parts'), Type.Literal('config')]),
   title: Type.Optional(Type.String()),
-  verdict: Type.Optional(
-    object({
-      state: Type.Union([
-        Type.Literal('good'),
-        Type.Literal('warnings'),
-        Type.Literal('errors'),
-        Type.Literal('not-computed'),
-      ]),
-      text: Type.String(),
-    }),
-  ),
+  verdict: Type.Optional(verdict),
   figures: Type.Array(figure),
   limits: Type.Array(limit),
   ledger: Type.Array(row),

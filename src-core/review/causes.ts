@@ -18,13 +18,17 @@ export function causesOf(
   outOfTime: () => AnalyseOptions['outOfTime'],
 ): { readonly causes: readonly Cause[]; readonly together?: readonly FigureChange[] } {
   if (count < 2 || count > MOST_GROUPS) return { causes: [] };
-  const figuresWith = (decide: (group: number) => boolean, previous: Analysis): readonly Figure[] =>
-    analyse(
+  let late = false;
+  const figuresWith = (decide: (group: number) => boolean, previous: Analysis): readonly Figure[] => {
+    const { figures, timedOut } = analyse(
       // what computes nothing else stays head's
       comparison.inputs(({ id }) => decide(groupOf.get(id) ?? 0)),
       previous,
       { until: 'link', outOfTime: outOfTime() },
-    ).figures;
+    );
+    late ||= timedOut ?? false;
+    return figures;
+  };
   const alone: (readonly Figure[])[] = [];
   const causes = Array.from({ length: count }, (_, i): Cause => {
     const added = figuresWith((group) => group === i + 1, base);
@@ -40,5 +44,6 @@ export function causesOf(
       without: figureChanges(head.figures, taken),
     };
   });
-  return { causes, together: beyondParts(base, head, alone) };
+  // what met its time limit is compared with nothing
+  return late ? { causes: [] } : { causes, together: beyondParts(base, head, alone) };
 }

@@ -38,7 +38,8 @@ export function changesOf(leaves: readonly Leaf[], { groupOf, foreign }: Grouped
         ...(to !== undefined && { to }),
         electrical: group > 0,
         words: words(leaf, from, to),
-        at: { file: leaf.file, path: leaf.path },
+        // of what is gone the place that held it
+        at: { file: leaf.file, path: leaf.what === 'removed' ? leaf.path.slice(0, -1) : leaf.path },
         group,
       };
     });

@@ -32,7 +32,7 @@ export interface Change {
   /** Changes what is computed; false for a comment's neighbour: a name, a unit, a reason, and for limits and waivers. */
   readonly electrical: boolean;
   readonly words: string;
-  /** In head, or in base for what was removed. */
+  /** In head; for what was removed where it stood. */
   readonly at: Place;
   /** Changes of one number belong together; 0 for those without electrical effect and for what is derived. */
   readonly group: number;

@@ -9,7 +9,7 @@ describe('help', () => {
   test('names every command and its options; a mistyped command says what there is', async () => {
     const { stdout, status } = await lanewright(['--help']);
     expect(status).toBe(0);
-    for (const name of ['check', 'curves', 'report']) {
+    for (const name of ['check', 'curves', 'report', 'review']) {
       expect(stdout).toContain(name);
       const help = await lanewright([name, '--help']);
       expect(help.status).toBe(0);
