@@ -15,6 +15,7 @@ import type { FilePath } from '../../src-core/text/types';
 import type { SideFiles } from '../git/revision';
 import { type Command, type OptionValues, Refusal } from './command';
 import { startProgress } from './progress';
+import { reviewGithub, reviewGitlab, reviewJunit, reviewSarif } from './review-printers/builds';
 import { reviewJson } from './review-printers/json';
 import { markdown } from './review-printers/markdown';
 import { reviewText } from './review-printers/text';
@@ -25,7 +26,15 @@ import { writeAtomically } from './write';
 
 declare const LANEWRIGHT_VERSION: string;
 
-const printers: Record<string, ReviewPrinter> = { text: reviewText, json: reviewJson, md: markdown };
+const printers: Record<string, ReviewPrinter> = {
+  text: reviewText,
+  json: reviewJson,
+  md: markdown,
+  sarif: reviewSarif,
+  github: reviewGithub,
+  junit: reviewJunit,
+  gitlab: reviewGitlab,
+};
 
 /** Below the 65,536 characters that the common forges take for a comment. */
 const MOST_MARKDOWN = 60_000;
@@ -139,11 +148,12 @@ async function touched(base: SideFiles, head: SideFiles, today: string): Promise
   const pairs: { paired: PairedFile; changedFiles: readonly FilePath[] }[] = [];
   for (const one of changed.size > 0 ? paired : []) {
     const through = new Set<FilePath>();
+    // head first: where a channel and all that it uses there is as it was, base used the same
     for (const [side, file] of [
-      [base, one.base],
       [head, one.head],
+      [base, one.base],
     ] as const) {
-      if (file === undefined) continue;
+      if (file === undefined || (side === base && one.base === one.head && through.size === 0)) continue;
       for (const path of await dependsOn(side, file, changed, today)) through.add(path);
     }
     if (through.size > 0 || one.base !== one.head) pairs.push({ paired: one, changedFiles: [...through].sort() });

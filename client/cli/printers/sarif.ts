@@ -1,7 +1,7 @@
 import { show } from '../../../src-core/quantity/show';
 import { inertJson, relativeUri, visible } from './escape';
 import { levelOf, ruleDescriptors, ruleIndex } from './sarif-rules';
-import { fingerprints, type ToldFinding, toldFile, wanted, worstFirst } from './told';
+import { fingerprints, type ToldFile, type ToldFinding, toldFile, wanted, worstFirst } from './told';
 import type { MakePrinter } from './types';
 
 type Range = ToldFinding['location']['range'];
@@ -49,14 +49,18 @@ const suppression = ({ reason, by, until, location }: NonNullable<ToldFinding['w
   location: physical(location),
 });
 
+/** In a review: found by it, there before, gone since. */
+export type BaselineState = 'new' | 'unchanged' | 'absent';
+
 /** One finding as a result. */
-export function sarifResult(finding: ToldFinding, fingerprint: string) {
+function sarifResult(finding: ToldFinding, fingerprint: string, baselineState?: BaselineState) {
   const { rule, severity, subject, location, related, waived, waiver } = finding;
   const fixes = finding.fixes.filter(({ edits }) => edits.length > 0);
   return {
     ruleId: rule,
     ruleIndex: ruleIndex(rule),
     level: levelOf[severity],
+    ...(baselineState && { baselineState }),
     message: message(finding.message),
     locations: [
       {
@@ -74,57 +78,62 @@ export function sarifResult(finding: ToldFinding, fingerprint: string) {
   };
 }
 
-type Result = ReturnType<typeof sarifResult>;
-
 /** The log: one run, every rule, the results in the order in which they came. */
-export function sarifLog(
-  results: readonly Result[],
-  version: string,
-  { complete = true, notes = [] as string[] } = {},
-) {
-  return {
-    $schema: 'https://json.schemastore.org/sarif-2.1.0.json',
-    version: '2.1.0',
-    runs: [
-      {
-        tool: {
-          driver: { name: 'Lanewright', version, semanticVersion: version, rules: ruleDescriptors },
-        },
-        automationDetails: { id: 'lanewright/' },
-        columnKind: 'utf16CodeUnits',
-        originalUriBaseIds: { '%SRCROOT%': { description: { text: 'The root of the work tree.' } } },
-        invocations: [
-          {
-            executionSuccessful: complete,
-            ...(notes.length > 0 && {
-              toolExecutionNotifications: notes.map((text) => ({ level: 'note', message: message(text) })),
-            }),
-          },
-        ],
-        results,
+const sarifLog = (results: readonly unknown[], version: string, complete: boolean, notes: readonly string[]) => ({
+  $schema: 'https://json.schemastore.org/sarif-2.1.0.json',
+  version: '2.1.0',
+  runs: [
+    {
+      tool: {
+        driver: { name: 'Lanewright', version, semanticVersion: version, rules: ruleDescriptors },
       },
-    ],
-  };
-}
+      automationDetails: { id: 'lanewright/' },
+      columnKind: 'utf16CodeUnits',
+      originalUriBaseIds: { '%SRCROOT%': { description: { text: 'The root of the work tree.' } } },
+      invocations: [
+        {
+          executionSuccessful: complete,
+          ...(notes.length > 0 && {
+            toolExecutionNotifications: notes.map((text) => ({ level: 'note', message: message(text) })),
+          }),
+        },
+      ],
+      results,
+    },
+  ],
+});
 
-/** SARIF 2.1.0, within what a forge takes of one upload. */
-export const sarif: MakePrinter = ({ write, version, quiet }) => {
+/** Takes findings as they come and gives the whole document, within what a forge takes of one upload. */
+export function sarifDocument(version: string) {
   const fingerprintOf = fingerprints();
-  const told: { severity: ToldFinding['severity']; result: Result }[] = [];
+  const told: { severity: ToldFinding['severity']; result: unknown }[] = [];
   let complete = true;
   return {
-    file(analysis) {
-      const file = toldFile(analysis);
+    add(file: ToldFile, stateOf: (finding: ToldFinding) => BaselineState | undefined = () => undefined) {
       complete &&= !file.timedOut;
-      for (const finding of wanted(file.findings, quiet))
-        told.push({ severity: finding.severity, result: sarifResult(finding, fingerprintOf(finding)) });
+      for (const finding of file.findings) {
+        const result = sarifResult(finding, fingerprintOf(finding), stateOf(finding));
+        told.push({ severity: finding.severity, result });
+      }
     },
-    end() {
+    text() {
       const shown = new Set(worstFirst(told).slice(0, MOST_RESULTS));
       const left = told.length - shown.size;
       const notes = left > 0 ? [`${show.count(left, 'finding')} beyond the worst ${MOST_RESULTS} left out.`] : [];
       const results = told.filter((one) => shown.has(one)).map(({ result }) => result);
-      write(`${inertJson(sarifLog(results, version, { complete, notes }))}\n`);
+      return `${inertJson(sarifLog(results, version, complete, notes))}\n`;
     },
+  };
+}
+
+/** SARIF 2.1.0. */
+export const sarif: MakePrinter = ({ write, version, quiet }) => {
+  const document = sarifDocument(version);
+  return {
+    file(analysis) {
+      const file = toldFile(analysis);
+      document.add({ ...file, findings: wanted(file.findings, quiet) });
+    },
+    end: () => write(document.text()),
   };
 };
