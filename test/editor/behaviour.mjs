@@ -79,15 +79,10 @@ const behaviours = [
         await poll(async () => (await input.inputValue()).endsWith(`.${format}`), 'the name that is proposed');
         const file = await input.inputValue();
         await page.keyboard.press('Enter');
-        await poll(() => existsSync(file), `${file} on the disk`);
         if (!file.startsWith(join(workspace, 'lanes'))) throw new Error(`${file} is not beside the channel`);
-        const content = readFileSync(file, 'utf8');
-        if (
-          format === 'svg'
-            ? !/^(?:<\?xml[^>]*>\s*)?<svg[\s\S]*<\/svg>\s*$/.test(content)
-            : !/^[^\n]+,[^\n]+\n(?:[-\d.e+]+,?)+/.test(content)
-        )
-          throw new Error(`the ${format} begins ${content.slice(0, 80)}`);
+        const whole =
+          format === 'svg' ? /^(?:<\?xml[^>]*>\s*)?<svg[\s\S]*<\/svg>\s*$/ : /^[^\n]+,[^\n]+\n(?:[-\d.e+]+,?)+/;
+        await poll(() => existsSync(file) && whole.test(readFileSync(file, 'utf8')), `a whole ${format} in ${file}`);
       }
     },
   },
@@ -182,6 +177,8 @@ async function twoFolders(browser, workspace) {
     await squiggle(page).waitFor({ timeout: 60_000 });
     await line(page, 'GHz').waitFor();
     await command(page, 'View: Toggle Problems');
+    // The list draws only the rows in view: a word that one finding of each folder holds keeps it short.
+    await page.locator('.viewpane-filter-container input').first().fill('notch');
     for (const name of ['zweite Säge', workspace.split('/').pop()]) {
       await poll(
         () => page.locator('.markers-panel .monaco-list-row', { hasText: name }).count(),
