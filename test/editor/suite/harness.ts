@@ -56,7 +56,7 @@ export async function replace(editor: vscode.TextEditor, from: string, to: strin
 
 /** Throws away what was typed into the files that are open: each gets the text that stands on disk. */
 export async function revert(): Promise<void> {
-  for (const document of vscode.workspace.textDocuments.filter(({ isDirty }) => isDirty)) {
+  for (const document of vscode.workspace.textDocuments.filter(({ isDirty, isUntitled }) => isDirty && !isUntitled)) {
     const onDisk = new TextDecoder().decode(await vscode.workspace.fs.readFile(document.uri));
     const edit = new vscode.WorkspaceEdit();
     edit.replace(document.uri, new vscode.Range(0, 0, document.lineCount, 0), onDisk);
