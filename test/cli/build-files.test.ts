@@ -1,5 +1,5 @@
 import { execFile, execFileSync } from 'node:child_process';
-import { cpSync, existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { chmodSync, cpSync, existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { beforeAll, describe, expect, test } from 'vitest';
 import { parse } from 'yaml';
@@ -14,6 +14,7 @@ interface Step {
 const read = (file: string) => parse(readFileSync(file, 'utf8'));
 const forge = read('examples/build/github.yml');
 const steps: readonly Step[] = forge.jobs.check.steps;
+const commentSteps: readonly Step[] = forge.jobs.comment.steps;
 const pipeline = read('examples/build/gitlab.yml').lanes;
 const [hook] = read('.pre-commit-hooks.yaml');
 
@@ -24,7 +25,7 @@ beforeAll(async () => {
   const { makeCommandLinePackage } = await import('../package-cli.mjs');
   repository = emptyFolder();
   const archive: string = makeCommandLinePackage(repository);
-  execFileSync('git', ['init', '--quiet', repository]);
+  git(repository, 'init', '-q', '-b', 'main');
   for (const folder of ['boards', 'models'])
     cpSync(join('examples', folder), join(repository, folder), { recursive: true });
   mkdirSync(join(repository, 'lanes'));
@@ -33,6 +34,8 @@ beforeAll(async () => {
   const { status, output } = await shell(`npm install --save-dev ./${archive.split('/').at(-1)}`, repository);
   expect(output).not.toMatch(/warn/i);
   expect(status).toBe(0);
+  git(repository, 'add', '-A');
+  git(repository, 'commit', '-q', '-m', 'channels');
 });
 
 /** Runs a step as a build does: bash that ends at the first failure, and here without a network. */
@@ -45,17 +48,28 @@ function shell(command: string, cwd: string, environment: Readonly<Record<string
   });
 }
 
-/** A fresh checkout of the repository: no packages, no reports. */
+const git = (folder: string, ...args: string[]) =>
+  execFileSync('git', ['-c', 'user.name=someone', '-c', 'user.email=someone@lane.example', ...args], {
+    cwd: folder,
+    encoding: 'utf8',
+  }).trim();
+
+/** A fresh checkout of a pull request merged into its base: no packages, no reports. It adds a comment, or makes the lane fail. */
 function checkout({ failing = false } = {}): string {
   const folder = emptyFolder();
-  cpSync(repository, folder, { recursive: true, filter: (file) => !file.includes('node_modules') });
+  git(folder, 'clone', '-q', repository, '.');
+  git(folder, 'checkout', '-q', '-b', 'change');
   const lane = join(folder, 'lanes', 'ejector.channel.yaml');
-  if (failing) writeFileSync(lane, readFileSync(lane, 'utf8').replace('length: 64 mm', 'length: 2 m'));
+  const text = readFileSync(lane, 'utf8');
+  writeFileSync(lane, failing ? text.replace('length: 64 mm', 'length: 2 m') : `${text}# a comment\n`);
+  git(folder, 'commit', '-q', '-a', '-m', 'change');
+  git(folder, 'checkout', '-q', 'main');
+  git(folder, 'merge', '-q', '--no-ff', '--no-edit', 'change');
   return folder;
 }
 
 /** Every `run:` in turn, as the forge does: after a failure those alone that always run. */
-async function runSteps(folder: string) {
+async function runSteps(folder: string, event: 'pull_request' | 'push') {
   const summary = join(folder, 'summary.md');
   writeFileSync(summary, '');
   let failed: string | undefined;
@@ -64,7 +78,7 @@ async function runSteps(folder: string) {
     ({ run, if: when }) => run !== undefined && (when === undefined || when === 'always()'),
   )) {
     if (failed !== undefined && step.if !== 'always()') continue;
-    const result = await shell(step.run!, folder, { GITHUB_STEP_SUMMARY: summary });
+    const result = await shell(step.run!, folder, { GITHUB_STEP_SUMMARY: summary, GITHUB_EVENT_NAME: event });
     output += result.output;
     if (result.status !== 0) failed ??= step.name;
   }
@@ -72,48 +86,82 @@ async function runSteps(folder: string) {
 }
 
 describe('the workflow of a forge’s actions', () => {
-  test('reads alone', () => {
+  test('reads alone, but for the comment, which runs nothing of the pull request', () => {
     expect(forge.permissions).toEqual({ contents: 'read' });
+    expect(forge.jobs.check.permissions).toBeUndefined();
+    expect(forge.jobs.comment.permissions).toEqual({ 'pull-requests': 'write' });
+    expect(JSON.stringify(commentSteps)).not.toMatch(/checkout|npm|node_modules/);
     expect(Object.keys(forge.on)).toEqual(['pull_request', 'push']);
   });
-  test('a good repository is green, with a summary', async () => {
-    const folder = checkout();
-    const { failed, summary } = await runSteps(folder);
-    expect(failed).toBeUndefined();
-    expect(summary).toMatch(/^ {4}lanes\/ejector\.channel\.yaml {2}meets its limits/m);
-    for (const line of summary.trimEnd().split('\n')) expect(line).toMatch(/^ {4}/);
+  test('a pull request that changes no figure is green, with the review as its summary', async () => {
+    const { failed, output, summary } = await runSteps(checkout(), 'pull_request');
+    expect(failed, output).toBeUndefined();
+    expect(output).not.toContain('::error');
+    expect(summary).toMatch(/^<!-- lanewright-review -->/);
   });
-  test('a lane that misses its limit is red, with a note at its line, the summary and the reports', async () => {
+  test('one that makes a lane fail is red, with a note at its line, the review and the reports', async () => {
     const folder = checkout({ failing: true });
-    const { failed, output, summary } = await runSteps(folder);
+    const { failed, output, summary } = await runSteps(folder, 'pull_request');
     expect(failed).toBe('Check the channels');
     expect(output).toMatch(/^::error file=lanes\/ejector\.channel\.yaml,line=\d+,.*title=insertion-loss::/m);
-    expect(summary).toContain('fails');
+    expect(summary).toContain('leave');
     const [{ results }] = JSON.parse(readFileSync(join(folder, 'lanes-report', 'lanes.sarif'), 'utf8')).runs;
     expect(results.map(({ ruleId }: { ruleId: string }) => ruleId)).toContain('insertion-loss');
   });
+  test('the main line is checked as a whole, with the report as text', async () => {
+    const { failed, summary } = await runSteps(checkout({ failing: true }), 'push');
+    expect(failed).toBe('Check the channels');
+    expect(summary).toMatch(/^ {4}lanes\/ejector\.channel\.yaml {2}fails/m);
+    for (const line of summary.trimEnd().split('\n')) expect(line).toMatch(/^ {4}/);
+  });
+  test('the comment is written once, then updated', async () => {
+    const folder = emptyFolder();
+    const calls = join(folder, 'calls');
+    const comment = async (known: string) => {
+      writeFileSync(calls, '');
+      const gh = join(folder, 'gh');
+      writeFileSync(gh, `#!/bin/sh\necho "$*" >> '${calls}'\ncase "$*" in *--paginate*) echo '${known}';; esac\n`);
+      chmodSync(gh, 0o755);
+      const environment = { PATH: `${folder}:${process.env.PATH}`, GITHUB_REPOSITORY: 'team/lanes', NUMBER: '7' };
+      const { status, output } = await shell(commentSteps.find(({ run }) => run)!.run!, folder, environment);
+      expect(status, output).toBe(0);
+      return readFileSync(calls, 'utf8').trim().split('\n').at(-1);
+    };
+    const body = '--field body=@lanes-report/review.md';
+    expect(await comment('')).toBe(`api --silent --method POST repos/team/lanes/issues/7/comments ${body}`);
+    expect(await comment('41')).toBe(`api --silent --method PATCH repos/team/lanes/issues/comments/41 ${body}`);
+  });
   test('what is not run here is told as presumed', () => {
     const told = readFileSync('examples/build/README.md', 'utf8');
-    for (const { uses } of steps) if (uses) expect(told).toContain(`\`${uses}\``);
+    for (const { uses } of [...steps, ...commentSteps]) if (uses) expect(told).toContain(`\`${uses}\``);
     expect(told).toContain(`\`${pipeline.image}\``);
   });
 });
 
 describe('the pipeline of another', () => {
-  const run = (folder: string) => shell(pipeline.script.join('\n'), folder);
-  test('green and red, with both reports', async () => {
+  const run = (folder: string, base: string) =>
+    shell(pipeline.script.join('\n'), folder, {
+      CI_MERGE_REQUEST_DIFF_BASE_SHA: base && git(folder, 'rev-parse', base),
+    });
+  test('a merge request is green or red by what it changes, with both reports', async () => {
     const good = checkout();
-    const first = await run(good);
-    expect(first.output).toContain('meets its limits');
-    expect(first.status).toBe(0);
+    const first = await run(good, 'HEAD^1');
+    expect(first.status, first.output).toBe(0);
     const bad = checkout({ failing: true });
-    expect((await run(bad)).status).toBe(1);
+    const second = await run(bad, 'HEAD^1');
+    expect(second.status).toBe(1);
+    expect(second.output).toContain('insertion-loss');
     for (const report of pipeline.artifacts.paths) expect(existsSync(join(bad, report))).toBe(true);
     expect(Object.values(pipeline.artifacts.reports).sort()).toEqual([...pipeline.artifacts.paths].sort());
     // parts that this one lane does not use are told as notes
     const entries = JSON.parse(readFileSync(join(good, pipeline.artifacts.reports.codequality), 'utf8'));
     for (const { severity } of entries) expect(severity).toBe('info');
     expect(readFileSync(join(bad, pipeline.artifacts.reports.junit), 'utf8')).toContain('<failure');
+  });
+  test('the main line is checked as a whole', async () => {
+    const { status, output } = await run(checkout(), '');
+    expect(output).toContain('meets its limits');
+    expect(status).toBe(0);
   });
 });
 
