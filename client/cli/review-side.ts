@@ -77,6 +77,8 @@ export async function analyseSide(
 /** An analysis without what only its own computing needs: many are kept until the review is printed. */
 export const slim = (analysis: Analysis): Analysis => ({
   ...analysis,
+  // an object of its own: what rules keep of the model they keep as long as it lives, networks and all
+  model: { ...analysis.model },
   networks: undefined,
   cascade: undefined,
   time: undefined,

@@ -109,6 +109,12 @@ describe('a history', () => {
     commit(folder, 'renamed-element');
     edit(folder, SLED, ['max: 18 dB @ nyquist', 'max: 20 dB @ nyquist']);
     commit(folder, 'looser-limit');
+    const waiver =
+      '\nwaivers:\n  - rule: eye\n    at: main\n    until: 2027-03-31\n    by: sled team\n    reason: first\n';
+    edit(folder, SLED, ['\nlimits:', `${waiver}\nlimits:`]);
+    commit(folder, 'waiver');
+    edit(folder, SLED, ['reason: first', 'reason: replaced in revision C']);
+    commit(folder, 'reason');
     edit(folder, UPLINK, ['line-rate: 106.25 Gb/s\n', '']);
     commit(folder, 'broken');
   });
@@ -174,6 +180,7 @@ describe('a history', () => {
     ['comment', BACKPLANE, 'no-effect', []],
     ['renamed-element', SLED, 'no-effect', ['main-run renamed to long-run']],
     ['looser-limit', SLED, 'changed', ['ball-to-ball: max 18 dB @ nyquist → 20 dB @ nyquist']],
+    ['reason', SLED, 'no-effect', ['waiver of eye at main: reason first → replaced in revision C']],
   ])('%s: just that channel and that change', async (tag, file, state, words) => {
     const { output, status } = await step(tag);
     expect(output.channels.map((channel) => [channel.file, channel.state])).toEqual([[file, state]]);
@@ -185,6 +192,18 @@ describe('a history', () => {
     }
     if (tag === 'renamed-file') expect(output.channels[0].renamedFrom).toBe(EJECTOR);
     if (tag === 'looser-limit') expect(output.channels[0].loosened.map((change) => change.words)).toEqual(words);
+  });
+
+  test('a waiver is a row of its own, and what it accepts has gone', async () => {
+    const { output, status } = await step('waiver');
+    const [sled] = output.channels;
+    expect(sled.waivers.map(({ subject, attribute }) => `${subject} ${attribute}`)).toEqual([
+      'waiver of eye at main added',
+    ]);
+    expect(sled.gone.map(({ rule }) => rule)).toEqual(['eye']);
+    expect([sled.figures, sled.causes]).toEqual([[], []]);
+    expect(status).toBe(0);
+    expect((await review(folder, 'waiver~1', 'waiver', '--fail-on', 'any')).status).toBe(1);
   });
 
   test('what has no effect passes even `any`, what has one fails it, and a broken head passes nothing', async () => {
@@ -233,7 +252,9 @@ describe('what is compared', () => {
     git(folder, 'switch', '-q', 'change');
     cpSync(join(folder, 'lanes/uplink.channel.yaml'), join(folder, 'lanes/second.channel.yaml'));
     edit(folder, 'lanes/second.channel.yaml', ['title:', '# a copy\ntitle:']);
+    const before = hashOf(folder);
     const { output } = await review(folder);
+    expect(hashOf(folder)).toBe(before);
     expect(output.head).toBe('the working tree');
     expect(output.base).toMatch(/^[0-9a-f]{12} \(where this and main parted\)$/);
     expect(output.channels.map(({ file, state }) => [file, state]).sort()).toEqual([

@@ -3,6 +3,7 @@ import type { Analysis } from '../../../src-core/analysis';
 import type { Figure } from '../../../src-core/figures/types';
 import type { Finding } from '../../../src-core/report';
 import type { Change, ChannelReview, FigureChange } from '../../../src-core/review/index';
+import { inertJson } from '../printers/escape';
 import { locate } from '../printers/positions';
 import type { ReviewPrinter } from './types';
 
@@ -19,7 +20,7 @@ export const reviewJson: ReviewPrinter = (review, { version }) => {
     notes: [...notes],
     failed: { policy: failed.policy, reasons: [...failed.reasons] },
   };
-  return `${JSON.stringify(output, null, 1)}\n`;
+  return `${inertJson(output)}\n`;
 };
 
 function channelOf(channel: ChannelReview): ReviewedChannel {
