@@ -88,7 +88,9 @@ function compared(
   options: ReviewOptions,
 ): ChannelReview {
   const comparison = compare(base, head);
-  const sameFigures = sameElectrically(base, head);
+  const figures = figureChanges(base.figures, head.figures);
+  // the figures have the last word: what they show as different is never called without effect
+  const sameFigures = figures.length === 0 && sameElectrically(base, head);
   const grouped = groupLeaves(comparison, base, head);
   const written = changesOf(comparison.leaves, sameFigures ? withoutGroups(grouped) : grouped);
   const derived = sameFigures ? [] : derivedChanges(base, head, comparison.nameInHead);
@@ -109,7 +111,7 @@ function compared(
     ...common,
     state: nothing ? 'no-effect' : 'changed',
     changes: [...written, ...derived],
-    figures: sameFigures ? [] : figureChanges(base.figures, head.figures),
+    figures,
     ...found,
     waivers: waiverChanges(written),
     loosened,

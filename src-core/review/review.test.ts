@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { throughFile } from '../rules/testing-base';
 import { defaultThresholds, reasonsOf } from './policy';
 import { joinReviews } from './review';
 import { BOARD, CHANNEL, edited, reviewed } from './testing';
@@ -63,6 +64,58 @@ describe('what changed', () => {
     expect(written(review)).toEqual(words);
     expect(review).toMatchObject({ state: 'no-effect', figures: [], causes: [], smallestMarginFall: 0 });
     expect(review.changes.every(({ electrical }) => !electrical)).toBe(true);
+  });
+  test('a connector’s data that are others under the same name', async () => {
+    const placed = on(
+      'connector: mate, delay: 50 ps, impedance: 100 ohm, loss: 0.3 dB @ 5 GHz',
+      'connector: mate, touchstone: thru.s4p, ports: { enter: [1, 3], leave: [2, 4] }',
+    );
+    const base = edited([placed]);
+    const head = new Map(base).set('thru.s4p', { kind: 'text', text: throughFile({ gain: 0.9 }) });
+    const review = await reviewed(head, { base });
+    expect(written(review)).toEqual(['thru.s4p: its data changed']);
+    expect(review).toMatchObject({ state: 'changed', why: ['thru.s4p'] });
+    const unused = new Map(head).set('short.s4p', { kind: 'text' as const, text: throughFile({ gain: 0.9 }) });
+    expect((await reviewed(unused, { base: head })).changes).toEqual([]);
+  });
+  test('an added element is added, and those behind it have not moved', async () => {
+    const via = '  - { via: extra, part: board.hole, to: L3 }\n';
+    const stub = '  - { stub: probe, length: 0.5 mm, impedance: 50 ohm, dk: 3.6 }\n';
+    const review = await reviewed(edited([on('  - { trace: approach', `${stub}  - { trace: approach`)]));
+    expect(written(review)).toEqual(['probe added: stub: probe, length: 0.5 mm, impedance: 50 ohm, dk: 3.6']);
+    const back = await reviewed(edited([]), {
+      base: edited([on('  - { trace: approach', `${stub}  - { trace: approach`)]),
+    });
+    expect(written(back)).toEqual(['probe removed: stub: probe, length: 0.5 mm, impedance: 50 ohm, dk: 3.6']);
+    // a via that leads nowhere is an error, which the review names
+    const broken = await reviewed(edited([on('  - { trace: approach', `${via}  - { trace: approach`)]));
+    expect(broken.appeared.some(({ severity }) => severity === 'error')).toBe(true);
+  });
+  test('the same edit through an anchor changes each place that takes it', async () => {
+    const base = edited([
+      on('length: 10 mm, impedance: 100 ohm }', 'length: 10 mm, impedance: &z 100 ohm }'),
+      on('length: 5 mm, impedance: 100 ohm }', 'length: 5 mm, impedance: *z }'),
+    ]);
+    const review = await reviewed(edited([on('&z 100 ohm', '&z 95 ohm')], base), { base });
+    expect(written(review)).toEqual(['breakout: impedance 100 ohm → 95 ohm', 'approach: impedance 100 ohm → 95 ohm']);
+  });
+  test('a material under another name, and whoever names it, compute the same', async () => {
+    const head = new Map(edited([])).set(BOARD, {
+      kind: 'text',
+      text: (edited([]).get(BOARD) as { text: string }).text
+        .replaceAll('material: core', 'material: laminate')
+        .replace('  core:', '  laminate:'),
+    });
+    const review = await reviewed(head);
+    expect(review).toMatchObject({ state: 'no-effect', figures: [] });
+    expect(review.changes.every(({ group }) => group === 0)).toBe(true);
+    expect(written(review)).toContain('core renamed to laminate');
+  });
+  test('a tightened tolerance is told, and moves no nominal figure', async () => {
+    const base = edited([on('length: 100 mm, impedance: 100 ohm', 'length: 100 mm, impedance: 100 ohm ± 10%')]);
+    const review = await reviewed(edited([on('100 ohm ± 10%', '100 ohm ± 5%')], base), { base });
+    expect(written(review)).toEqual(['run: impedance 100 ohm ± 10% → 100 ohm ± 5%']);
+    expect(review).toMatchObject({ state: 'changed', figures: [] });
   });
   test('an inch less one rounding is the same length', async () => {
     const base = edited([on('length: 100 mm', 'length: 4.5 mil')]);

@@ -1,5 +1,6 @@
 import type { Analysis } from '../analysis';
 import type { Model } from '../model/types';
+import type { FileContent } from '../text/types';
 
 /** Rounding of 4.5 mil against 114.3 um is no difference. */
 const SAME = 1e-9;
@@ -60,10 +61,13 @@ function electrical({ model, inputs }: Analysis) {
       includedIn: includedIn !== undefined,
       values: { ...values, [kind]: undefined, stackup: undefined, from: undefined, to: undefined },
       layers: stackup,
-      file: file && { ...file, file: inputs.files.get(file.file) },
+      // by its data, whatever it is called
+      file: file && { ...file, file: undefined, data: dataOf(inputs.files.get(file.file)) },
     })),
   };
 }
+
+const dataOf = (content: FileContent | undefined) => (content?.kind === 'text' ? content.text : content);
 
 function same(a: unknown, b: unknown, ignored: ReadonlySet<string>): boolean {
   if (Object.is(a, b)) return true;
