@@ -1,6 +1,6 @@
 import { analyse } from '../../src-core/analyse';
 import type { Analysis } from '../../src-core/analysis';
-import { CONFIG_NAME, fileKind, gatherInputs } from '../../src-core/inputs';
+import { CONFIG_NAME, fileKind, gatherInputs, parseCached } from '../../src-core/inputs';
 import { show } from '../../src-core/quantity/show';
 import type { Side } from '../../src-core/review/index';
 import type { FileContent, FilePath } from '../../src-core/text/types';
@@ -72,6 +72,13 @@ export async function analyseSide(
   if (content?.kind === 'refused') return { missing: `is not read: ${content.reason}` };
   if (content?.kind === 'too-large') return { missing: `is larger than ${show.count(content.limit, 'byte')}` };
   return { missing: 'is not there' };
+}
+
+/** The configuration that holds at a path of one side, whether or not the file is there, as YAML gave it. */
+export async function configAt(side: SideFiles, file: FilePath, today: string): Promise<unknown> {
+  const { configFile, files } = await gatherInputs(side, file, today);
+  const content = configFile === undefined ? undefined : files.get(configFile);
+  return content?.kind === 'text' ? parseCached(configFile!, content.text).value : undefined;
 }
 
 /** An analysis without what only its own computing needs: many are kept until the review is printed. */

@@ -5,6 +5,7 @@ import {
   type ChannelReview,
   joinReviews,
   type PairedFile,
+  type Policy,
   pairFiles,
   policies,
   type ReviewSettings,
@@ -20,7 +21,7 @@ import { reviewJson } from './review-printers/json';
 import { markdown } from './review-printers/markdown';
 import { reviewText } from './review-printers/text';
 import type { ReviewPrinter } from './review-printers/types';
-import { analyseSide, changedPaths, dependsOn, keepReads, slim } from './review-side';
+import { analyseSide, changedPaths, configAt, dependsOn, keepReads, slim } from './review-side';
 import { openSides } from './review-sides';
 import { writeAtomically } from './write';
 
@@ -90,7 +91,7 @@ export const review: Command = {
       for (const [index, { paired, changedFiles }] of work.pairs.entries()) {
         const pair = await analysed(paired, changedFiles, base, head, today);
         const channel = reviewChannel(pair, { outOfTime: fiveSeconds, withoutCauses: options['no-causes'] === true });
-        const own = settingsOf(pair.base?.analysis);
+        const own = settingsOf(await configAt(base, paired.base ?? channel.file, today));
         settings.set(channel.file, { ...own, ...(policy && { policy }) });
         channels.push(kept(channel));
         progress.at(index + 1);
@@ -99,7 +100,7 @@ export const review: Command = {
       const result = joinReviews(channels, {
         base: base.name,
         head: head.name,
-        policy: policy ?? 'regression',
+        policy: policy ?? inOneWord(settings.values()),
         settings,
         unchanged: work.unchanged,
       });
@@ -119,6 +120,12 @@ export const review: Command = {
     }
   },
 };
+
+/** The policy of all configurations, where they agree; each channel is judged by its own in any case. */
+function inOneWord(settings: Iterable<ReviewSettings>): Policy {
+  const told = new Set([...settings].map(({ policy = 'regression' }) => policy));
+  return told.size === 1 ? [...told][0] : 'regression';
+}
 
 interface Work {
   readonly pairs: readonly { readonly paired: PairedFile; readonly changedFiles?: readonly FilePath[] }[];

@@ -361,6 +361,18 @@ test('policy and thresholds are those of the base’s config, whatever the chang
   expect((await review(folder, 'loosens', 'later')).status).toBe(0);
 });
 
+test('a new channel is judged by the policy that the base has for its place', async () => {
+  const folder = repository();
+  writeFileSync(join(folder, 'lanewright.config.yaml'), 'lanewright: 1\nreview: { fail-on: any }\n');
+  commit(folder, 'any');
+  writeFileSync(join(folder, 'lanewright.config.yaml'), 'lanewright: 1\n');
+  cpSync(join(folder, EJECTOR), join(folder, 'lanes/new.channel.yaml'));
+  const { output, status } = await review(folder, 'any');
+  expect(output.channels).toMatchObject([{ file: 'lanes/new.channel.yaml', state: 'added' }]);
+  expect(output.failed.policy).toBe('any');
+  expect(status).toBe(1);
+});
+
 describe('Markdown', () => {
   test('keeps to its length, the worst first, and says how many are left', async () => {
     const folder = repository();
