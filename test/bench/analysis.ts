@@ -19,10 +19,11 @@ export async function benchAnalysis(boardText: string, variants: readonly string
     return gatherInputs({ read }, `${folder}/lane.channel.yaml`, '2026-12-01', before?.inputs, before?.parsed);
   };
   let folders = 0;
-  const cold = async (text: string, until: 'time' | 'link') =>
+  const cold = async (text: string, until: 'model' | 'time' | 'link') =>
     analyse(await gather(`cold-${++folders}`, text), undefined, { until });
   const times = {
     cold: [] as number[],
+    coldUntilModel: [] as number[],
     coldUntilTime: [] as number[],
     edit: [] as number[],
     eye: [] as number[],
@@ -38,6 +39,7 @@ export async function benchAnalysis(boardText: string, variants: readonly string
   for (let i = 0; i < count; i++) {
     const text = variants[(i + 1) % variants.length];
     if (i % 20 < 10) {
+      await time('coldUntilModel', () => cold(text, 'model'));
       await time('coldUntilTime', () => cold(text, 'time'));
       await time('cold', () => cold(text, 'link'));
     } else {

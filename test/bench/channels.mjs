@@ -29,6 +29,7 @@ drill-rules: { backdrill-minimum: 0.15 mm, backdrill-tolerance: 0.1 mm }
 /**
  * @param elements how many; traces and vias in turn, a package at each end, one capacitor
  * @param vary changes lengths a little: another channel to every cache
+ * @param shortest length of the shortest trace in mm: decides how fine the grid is
  * @param widths how many different cross-sections the traces use
  */
 export function channelText({
@@ -38,6 +39,7 @@ export function channelText({
   board = 'board.parts.yaml',
   rate = '25.78125 Gb/s',
   ctle = 'auto',
+  shortest = 8,
 }) {
   const path = [];
   const inner = elements - 3;
@@ -50,7 +52,7 @@ export function channelText({
     if (i % 2 === 0) {
       const width = 100 + ((turn + vary) % widths) * 2;
       path.push(
-        `  - trace: run-${i}\n    stackup: board.main\n    layer: ${layers[turn % 4]}\n    length: ${(8 + (i % 5) + (vary % 997) * 0.001).toFixed(3)} mm\n    width: ${width} um\n    gap: ${width + 40} um`,
+        `  - trace: run-${i}\n    stackup: board.main\n    layer: ${layers[turn % 4]}\n    length: ${(shortest + (i % 5) + (vary % 997) * 0.001).toFixed(3)} mm\n    width: ${width} um\n    gap: ${width + 40} um`,
       );
       turn++;
     } else if (i < inner - 1) {

@@ -27,10 +27,15 @@ async function analysisRows() {
   await bundleForNode('test/bench/analysis.ts', outfile);
   const { benchAnalysis } = await import(pathToFileURL(outfile).href);
   rmSync(folder, { recursive: true, force: true });
-  const base = channelText({ elements: 30 });
+  // So long that its grid has 2,049 points, about as many as the NumPy baseline.
+  const base = channelText({ elements: 30, shortest: 18 });
   // One element's length differs from one to the next.
   const variants = Array.from({ length: 7 }, (_, i) => base.replace(/(run-0[\s\S]*?length: )\S+/, `$1${8 + i * 0.5}`));
-  const { cold, coldUntilTime, edit, eye, points, elements } = await benchAnalysis(boardText, variants, 240);
+  const { cold, coldUntilModel, coldUntilTime, edit, eye, points, elements } = await benchAnalysis(
+    boardText,
+    variants,
+    240,
+  );
   const warm = (values) => values.slice(30);
   const measured = (values) => `${ms(quantile(warm(values), 0.1))} (median ${ms(quantile(warm(values), 0.5))})`;
   // What else runs on the machine only ever adds: the best tenth is what the work itself takes.
@@ -61,18 +66,20 @@ async function analysisRows() {
     row('NumPy baseline', `failed: ${numpy.stderr.trim().split('\n').pop()}`, '', false);
     return;
   }
+  const computed = best(cold) - best(coldUntilModel);
+  row('… of it networks, cascade, pulse, eye, figures, rules (text and model taken off)', ms(computed), '');
   const { vectorised, tuned } = JSON.parse(numpy.stdout.trim().split('\n').pop());
   row(
     '… NumPy, vectorised as an engineer would',
-    `${ms(vectorised)}: ${(vectorised / coldBest).toFixed(1)} times ours`,
+    `${ms(vectorised)}: ${(vectorised / computed).toFixed(1)} times ours`,
     'at least 4 times',
-    vectorised / coldBest >= 4,
+    vectorised / computed >= 4,
   );
   row(
     '… NumPy, hand-tuned',
-    `${ms(tuned)}: ${(tuned / coldBest).toFixed(2)} times ours`,
+    `${ms(tuned)}: ${(tuned / computed).toFixed(2)} times ours`,
     'at least 1',
-    tuned / coldBest >= 1,
+    tuned / computed >= 1,
   );
 }
 
