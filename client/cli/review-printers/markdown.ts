@@ -2,7 +2,7 @@ import type { ChannelReview, FigureChange, Review } from '../../../src-core/revi
 import { escapeMarkdown, markdownOf, markdownTable } from '../../report/markdown-text';
 import { plain } from '../printers/plain';
 import type { ReviewPrinter } from './types';
-import { chief, figureText, marginText, resultText, stateText, summaryText } from './words';
+import { chief, figureText, marginText, resultText, sideText, stateText, summaryText } from './words';
 
 /** A build finds the comment that it wrote before by this. */
 export const MARKER = '<!-- lanewright-review -->';
@@ -128,12 +128,11 @@ const capped = (lines: readonly string[]) =>
 const cappedRows = (rows: string[][]) =>
   rows.length > MOST_ROWS ? [...rows.slice(0, MOST_ROWS), ['…', `and ${rows.length - MOST_ROWS} more`]] : rows;
 
-const figureRow = ({ title, from, to, deltaText, better }: FigureChange) => [
-  foreign(title),
-  from ? foreign(from.text) : '',
-  to ? foreign(to.text) : '',
-  foreign(better === undefined ? deltaText : `${deltaText} (${better ? 'better' : 'worse'})`),
-];
+function figureRow(change: FigureChange): string[] {
+  const { title, deltaText, better } = change;
+  const way = better === undefined ? deltaText : `${deltaText} (${better ? 'better' : 'worse'})`;
+  return [title, sideText(change, 'from'), sideText(change, 'to'), way].map(foreign);
+}
 
 function causesTable(causes: ChannelReview['causes'], together: ChannelReview['together']): string {
   const cell = (figures: readonly FigureChange[]) =>

@@ -1,11 +1,19 @@
 import { show } from '../../../src-core/quantity/show';
 import type { ChannelReview, FigureChange, Review } from '../../../src-core/review/index';
 
+/** A figure on one side; where both read alike it is its note that differs, such as how deep a notch is. */
+export const sideText = ({ from, to }: FigureChange, side: 'from' | 'to') => {
+  const figure = side === 'from' ? from : to;
+  if (!figure) return 'unknown';
+  return from?.text === to?.text && figure.note ? `${figure.text}, ${figure.note}` : figure.text;
+};
+
 /** What every form of a review says in the same words. */
-export const figureText = ({ from, to, deltaText, better }: FigureChange) => {
+export const figureText = (change: FigureChange) => {
+  const { from, to, deltaText, better } = change;
   const way = better === undefined ? '' : better ? ', better' : ', worse';
   if (!from && !to) return `${deltaText}${way}`;
-  return `${from?.text ?? 'unknown'} → ${to?.text ?? 'unknown'} (${deltaText}${way})`;
+  return `${sideText(change, 'from')} → ${sideText(change, 'to')} (${deltaText}${way})`;
 };
 
 export const stateText = ({ state, why, verdict }: ChannelReview): string => {
