@@ -40,7 +40,6 @@ async function analysisRows() {
   const measured = (values) => `${ms(quantile(warm(values), 0.1))} (median ${ms(quantile(warm(values), 0.5))})`;
   // What else runs on the machine only ever adds: the best tenth is what the work itself takes.
   const best = (values) => quantile(warm(values), 0.1);
-  const coldBest = best(cold);
   const ratio = best(coldUntilTime) / best(edit);
   const ratioOfMedians = quantile(warm(coldUntilTime), 0.5) / quantile(warm(edit), 0.5);
   row(`cold analysis with eye, ${elements} elements, ${points} points, best tenth`, measured(cold), 'see NumPy below');

@@ -34,7 +34,10 @@ export function faultsOf(analysis: Analysis, milliseconds: number): string[] {
 function withoutQuotes(message: string, { parsed }: Analysis): string {
   const texts = [...parsed.values()].map(({ text }) => text);
   return message.replace(/`([^`]*)`/g, (quote, piece: string) =>
-    texts.some((text) => text.includes(piece.replace(/…$/, ''))) ? '' : quote,
+    // `prefix.name` stands in two places: the prefix under `use`, the name in the parts file
+    [piece, ...piece.split('.').slice(0, 1)].some((part) => texts.some((text) => text.includes(part.replace(/…$/, ''))))
+      ? ''
+      : quote,
   );
 }
 

@@ -131,11 +131,15 @@ function judgeLocality(
     const grown = parsed.text.length - (base.parsed.get(base.inputs.file)?.text.length ?? 0);
     if (start >= entry.start && start <= entry.end + Math.max(0, grown)) local.firstFindingInside++;
   }
-  const names = (analysis: AnalysisLike) =>
-    new Set(hintsOf(analysis, analysis.inputs.file).map((hint) => lineHead(analysis, hint.offset)));
-  const before = names(base);
-  const after = names(broken);
-  const lost = [...before].filter((line) => !after.has(line) && !line.includes(entry.name));
+  const lines = (analysis: AnalysisLike, wanted: (offset: number) => boolean) =>
+    new Set(
+      hintsOf(analysis, analysis.inputs.file)
+        .filter(({ offset }) => wanted(offset))
+        .map(({ offset }) => lineHead(analysis, offset)),
+    );
+  const before = lines(base, (offset) => offset < entry.start || offset >= entry.end);
+  const after = lines(broken, () => true);
+  const lost = [...before].filter((line) => !after.has(line));
   if (lost.length === 0) local.othersKept++;
 }
 
