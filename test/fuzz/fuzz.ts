@@ -137,7 +137,7 @@ function judgeLocality(
         .filter(({ offset }) => wanted(offset))
         .map(({ offset }) => lineHead(analysis, offset)),
     );
-  const before = lines(base, (offset) => offset < entry.start || offset >= entry.end);
+  const before = lines(base, (offset) => offset < entry.start || offset > entry.end);
   const after = lines(broken, () => true);
   const lost = [...before].filter((line) => !after.has(line));
   if (lost.length === 0) local.othersKept++;
